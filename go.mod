@@ -1,0 +1,3 @@
+module galeward
+
+go 1.26

@@ -1,0 +1,330 @@
+package physio
+
+// ventilation judges the first axis: PaCO2 against its range and its need, and
+// what the level costs.
+func (sc *scene) ventilation() {
+	v := &sc.a.Ventilation
+	v.Level, v.Efficiency = LevelUnknown, EfficiencyUnknown
+	pco2 := sc.a.Triple.PaCO2
+	if pco2 == 0 {
+		pco2, _ = sc.v.Get(PaCO2)
+	}
+	switch {
+	case pco2 > 0 && sc.lungCO2:
+		sc.levelOf(pco2)
+	case pco2 > 0:
+		v.Screen = sc.a.Blood == Venous && pco2 < venousScreen
+	default:
+		sc.floor()
+	}
+	if sc.lungCO2 || sc.a.Blood == NoBlood {
+		sc.ventilationEfficiency()
+	}
+}
+
+// levelOf compares a PaCO2 with its range, its target and its need.
+func (sc *scene) levelOf(pco2 float64) {
+	v, r, ab := &sc.a.Ventilation, sc.a.Ranges, sc.a.AcidBase
+	low, high := r.PaCO2Low, r.PaCO2High
+	if t := sc.set.TargetPaCO2; t != nil {
+		low, high = t.Low, t.High
+	}
+	v.PaCO2 = propagate(func(x []float64) float64 { return x[0] }, []Input{Measured(PaCO2, pco2)})
+	v.Borderline = crosses(v.PaCO2, low) || crosses(v.PaCO2, high)
+	switch {
+	case pco2 > high:
+		v.Level = LevelHypoventilation
+	case ab.Primary == MetabolicAcidosis && ab.Need == Short:
+		v.Level = LevelShortForNeed
+		v.Borderline = ab.NeedBorderline
+	case pco2 < low:
+		v.Level = LevelHyperventilation
+	default:
+		v.Level = LevelAdequate
+	}
+	v.ChronicPattern = v.Level == LevelHypoventilation && ab.Course == Chronic
+	usual := sc.set.UsualPaCO2
+	v.AtUsual = usual > high && pco2 <= usual+needMargin && sc.a.Triple.PH >= r.PHLow
+}
+
+// crosses says that a cut-off lies inside an interval.
+func crosses(iv Interval, cut float64) bool { return iv.Low <= cut && cut <= iv.High }
+
+// floor reads end-tidal or transcutaneous CO2: a high one means that PaCO2 is
+// at least about that high; a usual or low one excludes nothing.
+func (sc *scene) floor() {
+	v := &sc.a.Ventilation
+	if et, ok := sc.v.Get(EtCO2); ok {
+		v.Floor = true
+		if et > sc.a.Ranges.PaCO2High {
+			v.Level = LevelHypoventilation
+		}
+		return
+	}
+	if tc, ok := sc.v.Get(TcCO2); ok && tc > sc.a.Ranges.PaCO2High+tcMargin {
+		v.Level = LevelHypoventilation
+	}
+}
+
+// ventilationEfficiency takes the strongest basis there is: measured dead
+// space, ventilatory ratio, minute volume at PaCO2 40, PaCO2-EtCO2.
+func (sc *scene) ventilationEfficiency() {
+	bases := []struct {
+		key           string
+		reduced, poor float64
+	}{
+		{"vd_vt", deadSpaceHigh, deadSpacePoor},
+		{"vent_ratio", ratioReduced, ratioPoor},
+		{"ve_corrected", correctedHigh, correctedPoor},
+		{"pa_et_gap", paEtUsual, paEtWide},
+	}
+	if !sc.adultRespiration() {
+		bases = bases[:1]
+	}
+	for _, b := range bases {
+		ix, ok := sc.a.Index(b.key)
+		if !ok {
+			continue
+		}
+		sc.a.Ventilation.Basis = b.key
+		sc.a.Ventilation.Efficiency = grade(ix.Value, b.reduced, b.poor)
+		return
+	}
+	sc.lack(VE, "ve_corrected")
+	sc.lack(EtCO2, "pa_et_gap")
+}
+
+// grade turns a number that is worse when higher into an efficiency.
+func grade(v, reduced, poor float64) Efficiency {
+	switch {
+	case v >= poor:
+		return Poor
+	case v > reduced:
+		return Reduced
+	}
+	return Efficient
+}
+
+// lack notes a value that would settle something.
+func (sc *scene) lack(q Quantity, settles string) {
+	if !sc.v.Has(q) {
+		sc.a.Missing = append(sc.a.Missing, Lack{q, settles})
+	}
+}
+
+// oxygenation judges the second axis: the saturation against its target or the
+// PaO2 on its scale, and what the level costs.
+func (sc *scene) oxygenation() {
+	o := &sc.a.Oxygenation
+	o.Level, o.Scale, o.Efficiency = DegreeUnknown, DegreeUnknown, EfficiencyUnknown
+	o.OnOxygen = sc.a.Oxygen.Known && sc.a.Oxygen.FiO2.Value > airFiO2 || sc.onUnknownOxygen()
+	sc.saturationUsed()
+	sc.scale()
+	sc.againstTarget()
+	if sc.lungO2 && sc.v.Has(PaO2) {
+		o.ExpectedHere = sc.expectedHere()
+	}
+	sc.oxygenationEfficiency()
+	if o.Level != DegreeUnknown && !sc.a.Oxygen.Known {
+		sc.lack(FiO2, "oxygenation")
+	}
+}
+
+// onUnknownOxygen says that oxygen is given although its fraction is not known.
+func (sc *scene) onUnknownOxygen() bool {
+	if sc.a.Oxygen.Known {
+		return false
+	}
+	switch sc.s.Device {
+	case DeviceUnstated, Air:
+		return sc.s.Circumstance.Has(BledInOxygen)
+	}
+	return true
+}
+
+func (sc *scene) saturationUsed() {
+	o := &sc.a.Oxygenation
+	if s, ok := sc.v.Get(SaO2); ok && sc.lungO2 {
+		o.Saturation, o.SaturationSource = propagate(identity, []Input{Measured(SaO2, s)}), SaO2
+		return
+	}
+	if ix, ok := sc.a.Index("sao2_calc"); ok && sc.lungO2 {
+		o.Saturation, o.SaturationSource = ix.Interval, PaO2
+		return
+	}
+	if s, ok := sc.v.Get(SpO2); ok {
+		o.Saturation, o.SaturationSource = propagate(identity, []Input{Measured(SpO2, s)}), SpO2
+		o.Saturation.High = min(o.Saturation.High, 1)
+	}
+}
+
+func identity(v []float64) float64 { return v[0] }
+
+// scale puts the PaO2, or without one the saturation, on its scale of degrees.
+func (sc *scene) scale() {
+	o := &sc.a.Oxygenation
+	newborn := !sc.adultScale()
+	if p, ok := sc.v.Get(PaO2); ok && sc.lungO2 {
+		cuts := [3]float64{pao2Adequate, pao2Mild, pao2Moderate}
+		if newborn {
+			cuts = [3]float64{newbornPaO2, newbornPaO2Mild, newbornPaO2Moderate}
+		}
+		iv := propagate(identity, []Input{Measured(PaO2, p)})
+		o.Scale, o.Borderline = degree(p, cuts), crossesAny(iv, cuts)
+	} else if o.Saturation.Value > 0 {
+		cuts := [3]float64{satAdequate, satMild, satModerate}
+		if newborn {
+			cuts = [3]float64{pretermTargetLow, newbornSatMild, newbornSatModerate}
+		}
+		o.Scale, o.Borderline = degree(o.Saturation.Value, cuts), crossesAny(o.Saturation, cuts)
+	}
+	o.Level = o.Scale
+}
+
+func degree(v float64, cuts [3]float64) Degree {
+	switch {
+	case v >= cuts[0]:
+		return DegreeAdequate
+	case v >= cuts[1]:
+		return DegreeMild
+	case v >= cuts[2]:
+		return DegreeModerate
+	}
+	return DegreeSevere
+}
+
+func crossesAny(iv Interval, cuts [3]float64) bool {
+	for _, c := range cuts {
+		if crosses(iv, c) {
+			return true
+		}
+	}
+	return false
+}
+
+// againstTarget replaces the degree by the target, which compares saturations
+// in whole percent, as targets are written.
+func (sc *scene) againstTarget() {
+	o := &sc.a.Oxygenation
+	o.Target = sc.set.Target
+	if o.Target == nil || o.Saturation.Value == 0 {
+		return
+	}
+	s := whole(o.Saturation.Value)
+	low, high := whole(o.Target.Low), whole(o.Target.High)
+	o.Borderline = crosses(o.Saturation, o.Target.Low-0.005) || crosses(o.Saturation, o.Target.High+0.005) && o.OnOxygen
+	switch {
+	case s < low:
+		o.AgainstTarget = BelowTarget
+		if o.Level == DegreeAdequate {
+			o.Level = DegreeMild
+		}
+	case s > high:
+		o.AgainstTarget = AboveTarget
+		o.Level = DegreeAdequate
+		if o.OnOxygen {
+			o.Level = DegreeAbove
+		}
+	default:
+		o.AgainstTarget = InsideTarget
+		o.Level = DegreeAdequate
+	}
+}
+
+// whole rounds a fraction to whole percent.
+func whole(f float64) float64 { return float64(int(100*f + 0.5)) }
+
+// expectedHere says that age or altitude alone explain a PaO2 below the scale:
+// on air, not below what a healthy lung of this age would have at the usual
+// PaCO2 of this altitude.
+func (sc *scene) expectedHere() bool {
+	o := sc.a.Oxygenation
+	if o.Scale == DegreeAdequate || !onAir(sc) || !sc.adultScale() {
+		return false
+	}
+	age, aged := sc.v.Get(Age)
+	high := sc.a.Altitude >= altitudeShiftFrom
+	if !high && !aged {
+		return false
+	}
+	paco2 := sc.a.Ranges.Anchor.PaCO2
+	if p, ok := sc.v.Get(PaCO2); ok {
+		paco2 = min(paco2, p)
+	}
+	floor := aboutPA(sc.a.Oxygen.FiO2.Value, sc.a.PB, paco2) - sc.expectedAA().High
+	if !high && age >= oldestLine {
+		floor = min(floor, oldestPaO2)
+	}
+	return sc.v.Val(PaO2) >= floor
+}
+
+// oxygenationEfficiency judges transfer: on air the A-a against its band, on
+// oxygen a/A and P/F, above PaCO2 50 or at altitude a/A alone, without a PaO2
+// the S/F below its ceiling.
+func (sc *scene) oxygenationEfficiency() {
+	o := &sc.a.Oxygenation
+	aa, hasAA := sc.a.Index("aa")
+	switch {
+	case hasAA && aa.Value < aaImpossible:
+		// A PaO2 above the alveolar one: the inputs can not be right.
+	case hasAA:
+		sc.efficiencyFromGas(aa)
+	default:
+		if pf, ok := sc.a.Index("pf"); ok && sc.a.Oxygenation.OnOxygen {
+			o.Basis, o.Efficiency = "pf", gradeDown(pf.Value, pfAbnormal, pfPoor)
+			return
+		}
+		if sf, ok := sc.a.Index("sf"); ok && sc.a.Oxygenation.OnOxygen && sf.Value <= sfAbnormal && sc.adultScale() {
+			o.Basis, o.Efficiency = "sf", gradeDown(sf.Value, sfAbnormal, sfPoor)
+		}
+	}
+}
+
+// gradeDown turns a number that is worse when lower into an efficiency.
+func gradeDown(v, reduced, poor float64) Efficiency {
+	switch {
+	case v <= poor:
+		return Poor
+	case v <= reduced:
+		return Reduced
+	}
+	return Efficient
+}
+
+func (sc *scene) efficiencyFromGas(aa Index) {
+	o := &sc.a.Oxygenation
+	ratio, _ := sc.a.Index("a_over_a")
+	if onAir(sc) {
+		o.Basis = "aa"
+		o.Efficiency = Efficient
+		band := Span{High: newbornAA}
+		if sc.adultScale() {
+			band = sc.expectedAA()
+		}
+		if aa.Value > band.High {
+			o.Efficiency = Reduced
+		}
+		if ratio.Value < aaPoorAir {
+			o.Efficiency = Poor
+		}
+		return
+	}
+	pf, _ := sc.a.Index("pf")
+	ratioOnly := sc.v.Val(PaCO2) > ratioOnlyPaCO2 || sc.a.Altitude >= altitudeShiftFrom || !sc.adultScale()
+	o.Basis = "a_over_a"
+	o.Efficiency = sc.transfer(ratio.Value, pf.Value, ratioOnly)
+	o.Soft = sc.transfer(ratio.Low, pf.Low, ratioOnly) != sc.transfer(ratio.High, pf.High, ratioOnly)
+	if !ratioOnly && pf.Value <= pfPoor {
+		o.Basis = "pf"
+	}
+}
+
+func (sc *scene) transfer(ratio, pf float64, ratioOnly bool) Efficiency {
+	switch {
+	case ratio < aaPoorOxygen || !ratioOnly && pf <= pfPoor:
+		return Poor
+	case ratio < aaEfficientRatio:
+		return Reduced
+	}
+	return Efficient
+}

@@ -1,0 +1,318 @@
+package physio
+
+// Severity orders cautions.
+type Severity uint8
+
+// The severities. A major caution is never cut from an answer.
+const (
+	Minor Severity = iota
+	Major
+)
+
+// CautionCode names a caution. The sentence stands in package bot.
+type CautionCode string
+
+// Caution is one caution that was raised.
+type Caution struct {
+	Code     CautionCode
+	Severity Severity
+}
+
+// The cautions.
+const (
+	CautionCord           CautionCode = "cord_sample"
+	CautionVenous         CautionCode = "venous_sample"
+	CautionCapillary      CautionCode = "capillary_sample"
+	CautionEarlobe        CautionCode = "earlobe_sample"
+	CautionIntraosseous   CautionCode = "intraosseous_sample"
+	CautionCPR            CautionCode = "during_resuscitation"
+	CautionSampleDoubt    CautionCode = "sample_in_doubt"
+	CautionVenousLikely   CautionCode = "venous_likely"
+	CautionVenousPossible CautionCode = "venous_possible"
+	CautionECMO           CautionCode = "ecmo"
+	CautionHFOV           CautionCode = "hfov"
+	CautionHeliox         CautionCode = "heliox"
+	CautionHyperbaric     CautionCode = "hyperbaric"
+	CautionCyanotic       CautionCode = "cyanotic_heart_disease"
+	CautionBrain          CautionCode = "brain_injury_co2"
+	CautionAsthma         CautionCode = "asthma_co2_not_low"
+	CautionFit            CautionCode = "values_do_not_fit"
+	CautionFitSoft        CautionCode = "values_fit_loosely"
+	CautionAboveAlveolar  CautionCode = "pao2_above_alveolar"
+	CautionSaturation     CautionCode = "saturation_mismatch"
+	CautionDyshaem        CautionCode = "dyshaemoglobin"
+	CautionLowCO2Newborn  CautionCode = "low_co2_newborn"
+	CautionHighO2Preterm  CautionCode = "high_o2_preterm"
+	CautionAboveRetainer  CautionCode = "above_retainer_target"
+	CautionRetainer       CautionCode = "retainer_target"
+	CautionAboveTarget    CautionCode = "above_target"
+	CautionHidden         CautionCode = "oxygen_hides_hypoventilation"
+	CautionNotSteady      CautionCode = "not_steady_state"
+	CautionFloor          CautionCode = "etco2_is_a_floor"
+	CautionTranscutaneous CautionCode = "transcutaneous_trend"
+	CautionCeiling        CautionCode = "spo2_above_97"
+	CautionOximeter       CautionCode = "spo2_may_over_read"
+	CautionTemperature    CautionCode = "temperature"
+	CautionEstimated      CautionCode = "fio2_estimated"
+	CautionConserving     CautionCode = "fio2_not_estimated"
+	CautionLowPaCO2       CautionCode = "paco2_calculated"
+	CautionPlateau        CautionCode = "plateau_above_30"
+	CautionVT             CautionCode = "vt_above_8"
+	CautionAltitudeUnset  CautionCode = "altitude_not_set"
+)
+
+// trigger is one row of the table of cautions: what raises it, and which
+// raised cautions make it redundant.
+type trigger struct {
+	code     CautionCode
+	severity Severity
+	when     func(sc *scene) bool
+	unless   []CautionCode
+}
+
+// triggers is the one table of cautions, most important first.
+var triggers = []trigger{
+	{CautionCPR, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(CPR) }, nil},
+	{CautionCord, Major, func(sc *scene) bool { return sc.a.Blood == Cord }, nil},
+	{CautionIntraosseous, Major, func(sc *scene) bool { return sc.a.Blood == Intraosseous }, nil},
+	{CautionVenous, Major, (*scene).venousBlood, nil},
+	{CautionSampleDoubt, Major, func(sc *scene) bool { return sc.a.Blood == BloodUncertain }, nil},
+	{CautionFit, Major, func(sc *scene) bool { return sc.a.Fit.Grade == FitReject }, nil},
+	{CautionAboveAlveolar, Major, (*scene).aboveAlveolar, nil},
+	{CautionVenousLikely, Major, (*scene).venousLikely, nil},
+	{CautionVenousPossible, Major, (*scene).venousPossible, []CautionCode{CautionVenousLikely}},
+	{CautionDyshaem, Major, (*scene).dyshaemoglobinLikely, nil},
+	{CautionSaturation, Major, (*scene).saturationMismatch, []CautionCode{CautionDyshaem, CautionVenousLikely}},
+	{CautionECMO, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(ECMO) }, nil},
+	{CautionHyperbaric, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(Hyperbaric) || sc.s.Device == Chamber }, nil},
+	{CautionCyanotic, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(CyanoticHeart) }, nil},
+	{CautionAsthma, Major, (*scene).asthmaNotLow, nil},
+	{CautionBrain, Major, (*scene).brainCO2, nil},
+	{CautionLowCO2Newborn, Major, (*scene).lowCO2Newborn, nil},
+	{CautionHighO2Preterm, Major, (*scene).highO2Preterm, nil},
+	{CautionAboveRetainer, Major, (*scene).aboveRetainer, nil},
+	{CautionHidden, Major, (*scene).hidden, nil},
+	{CautionCapillary, Major, func(sc *scene) bool { return sc.a.Blood == Capillary && sc.s.Site != Earlobe }, nil},
+	{CautionHeliox, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(Heliox) }, nil},
+	{CautionNotSteady, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(JustChanged) }, nil},
+	{CautionEarlobe, Minor, func(sc *scene) bool { return sc.a.Blood == Capillary && sc.s.Site == Earlobe }, nil},
+	{CautionHFOV, Minor, func(sc *scene) bool { return sc.s.Mode == HFOV || sc.s.Mode == HFJV }, nil},
+	{CautionFloor, Minor, func(sc *scene) bool { return sc.a.Ventilation.Floor }, nil},
+	{CautionTranscutaneous, Minor, func(sc *scene) bool { return sc.v.Has(TcCO2) || sc.v.Has(TcO2) }, nil},
+	{CautionCeiling, Minor, (*scene).aboveCeiling, nil},
+	{CautionLowPaCO2, Minor, func(sc *scene) bool { return sc.a.Triple.Any && sc.a.Triple.Quantity == PaCO2 }, nil},
+	{CautionAboveTarget, Minor, func(sc *scene) bool { return sc.a.Oxygenation.Level == DegreeAbove }, []CautionCode{CautionAboveRetainer}},
+	{CautionRetainer, Minor, (*scene).retainerUnset, []CautionCode{CautionAboveRetainer}},
+	{CautionTemperature, Minor, (*scene).temperatureOff, nil},
+	{CautionPlateau, Minor, func(sc *scene) bool { return sc.v.Val(Pplat) > plateauLimit }, nil},
+	{CautionVT, Minor, (*scene).largeVT, nil},
+	{CautionConserving, Minor, func(sc *scene) bool {
+		return sc.s.Device == ReservoirCannula || sc.s.Device == PulseDose || sc.s.Circumstance.Has(BledInOxygen)
+	}, nil},
+	{CautionFitSoft, Minor, func(sc *scene) bool { return sc.a.Fit.Grade == FitCaution }, nil},
+	{CautionEstimated, Minor, func(sc *scene) bool { return sc.a.Oxygen.Estimated && sc.lungO2 }, nil},
+	{CautionOximeter, Minor, (*scene).oximeterNearTarget, []CautionCode{CautionCeiling}},
+	{CautionAltitudeUnset, Minor, (*scene).altitudeUnset, nil},
+}
+
+// cautions raises what the sample calls for.
+func (sc *scene) cautions() {
+	raised := make(map[CautionCode]bool)
+	for i := range triggers {
+		t := &triggers[i]
+		if !t.when(sc) || anyRaised(raised, t.unless) {
+			continue
+		}
+		raised[t.code] = true
+		sc.a.Cautions = append(sc.a.Cautions, Caution{t.code, t.severity})
+	}
+}
+
+func anyRaised(raised map[CautionCode]bool, codes []CautionCode) bool {
+	for _, c := range codes {
+		if raised[c] {
+			return true
+		}
+	}
+	return false
+}
+
+// Raised says that the caution was raised.
+func (a *Assessment) Raised(code CautionCode) bool {
+	for _, c := range a.Cautions {
+		if c.Code == code {
+			return true
+		}
+	}
+	return false
+}
+
+func (sc *scene) venousBlood() bool {
+	switch sc.a.Blood {
+	case Venous, CentralVenous, MixedVenous:
+		return true
+	}
+	return false
+}
+
+// aboveAlveolar: a PaO2 that this oxygen and PaCO2 can not give.
+func (sc *scene) aboveAlveolar() bool {
+	aa, ok := sc.a.Index("aa")
+	if !ok {
+		return false
+	}
+	if sc.a.Oxygen.Estimated {
+		return aa.High < aaImpossible
+	}
+	return aa.Value < aaImpossible
+}
+
+// venousLikely: the sample's saturation is far below the oximeter's.
+func (sc *scene) venousLikely() bool {
+	oximeter, ok := sc.v.Get(SpO2)
+	if !ok || !sc.a.BloodAssumed || sc.a.Blood != Arterial || sc.dyshaemoglobin() {
+		return false
+	}
+	s, ok := sc.v.Get(SaO2)
+	if !ok {
+		ix, known := sc.a.Index("sao2_calc")
+		if !known {
+			return false
+		}
+		s = ix.Value
+	}
+	return oximeter-s >= venousSatGap && sc.v.Has(PaO2) && sc.v.Val(PaO2) <= venousPaO2+5
+}
+
+// venousPossible: a PO2 that venous blood also has, with nothing to settle it.
+func (sc *scene) venousPossible() bool {
+	p, ok := sc.v.Get(PaO2)
+	if !ok || p > venousPaO2 || !sc.a.BloodAssumed || sc.v.Has(SpO2) || !sc.adultScale() {
+		return false
+	}
+	return !sc.a.Oxygenation.ExpectedHere && !sc.s.Circumstance.Has(CyanoticHeart)
+}
+
+// dyshaemoglobinLikely: measured, or pointed to by a word, or by a measured
+// saturation far below the curve at a PaO2 on its flat part.
+func (sc *scene) dyshaemoglobinLikely() bool {
+	if sc.dyshaemoglobin() || sc.s.Circumstance.Has(SmokeOrCO) || sc.s.Circumstance.Has(MetHbCause) {
+		return true
+	}
+	return sc.v.Val(PaO2) >= flatPaO2 && sc.v.Has(SaO2) && sc.saturationMismatch()
+}
+
+// saturationMismatch: a measured saturation away from the curve at this PaO2.
+func (sc *scene) saturationMismatch() bool {
+	ix, ok := sc.a.Index("sao2_calc")
+	if !ok || !sc.lungO2 {
+		return false
+	}
+	s, measured := sc.v.Get(SaO2)
+	if !measured {
+		if s, ok = sc.v.Get(SpO2); !ok {
+			return false
+		}
+	}
+	return s < ix.Low-satMismatch || s > ix.High+satMismatch
+}
+
+// asthmaNotLow: in an acute attack a PaCO2 in or above the range is a
+// life-threatening sign (BTS/SIGN guideline).
+func (sc *scene) asthmaNotLow() bool {
+	p, ok := sc.v.Get(PaCO2)
+	return ok && sc.s.Circumstance.Has(AsthmaAttack) && p >= sc.a.Ranges.PaCO2Low
+}
+
+func (sc *scene) brainCO2() bool {
+	p, ok := sc.v.Get(PaCO2)
+	inj := sc.s.Circumstance.Has(BrainInjury) || sc.s.Circumstance.Has(PostArrest)
+	return ok && inj && (p < sc.a.Ranges.PaCO2Low || p > sc.a.Ranges.PaCO2High)
+}
+
+func (sc *scene) newborn() bool {
+	return sc.a.Population == Newborn || sc.a.Population == Preterm
+}
+
+func (sc *scene) lowCO2Newborn() bool {
+	p, ok := sc.v.Get(PaCO2)
+	return ok && sc.newborn() && p < sc.a.Ranges.PaCO2Low && sc.a.Blood != Cord
+}
+
+func (sc *scene) highO2Preterm() bool {
+	if !sc.newborn() || !sc.a.Oxygenation.OnOxygen {
+		return false
+	}
+	p, hasPaO2 := sc.v.Get(PaO2)
+	s, hasSpO2 := sc.v.Get(SpO2)
+	return hasPaO2 && sc.lungO2 && p > pretermPaO2High || hasSpO2 && s > pretermTargetHigh
+}
+
+// retainer: a CO2 retainer by word, or by numbers that look like one.
+func (sc *scene) retainer() bool {
+	if !sc.adultRespiration() || sc.a.Population == Pregnant {
+		return false
+	}
+	if sc.s.Circumstance.Has(COPD) || sc.s.Circumstance.Has(Retainer) {
+		return true
+	}
+	d := sc.a.Triple
+	if !d.known() || !sc.lungCO2 {
+		return false
+	}
+	chronic := d.HCO3 > raisedHCO3 && d.PH <= sc.a.Ranges.PHHigh
+	return d.PaCO2 > sc.a.Ranges.PaCO2High && sc.a.AcidBase.Primary == RespiratoryAcidosis || chronic
+}
+
+func (sc *scene) aboveRetainer() bool {
+	o := sc.a.Oxygenation
+	word := sc.s.Circumstance.Has(COPD) || sc.s.Circumstance.Has(Retainer)
+	raised := sc.a.Triple.HCO3 > raisedHCO3 && sc.a.AcidBase.Primary == RespiratoryAcidosis
+	if !sc.retainer() || !word && !raised || !o.OnOxygen {
+		return false
+	}
+	limit := retainerTargetHigh
+	if sc.set.Target != nil {
+		limit = sc.set.Target.High
+	}
+	return whole(o.Saturation.Value) > whole(limit)
+}
+
+func (sc *scene) retainerUnset() bool {
+	return sc.set.Target == nil && sc.retainer() && sc.a.Oxygenation.Saturation.Value > 0
+}
+
+// hidden: a good saturation on added oxygen beside a high CO2 that oxygen does
+// not show.
+func (sc *scene) hidden() bool {
+	s, ok := sc.v.Get(SpO2)
+	return ok && s >= satAdequate && sc.a.Oxygenation.OnOxygen && sc.a.Blood == NoBlood &&
+		(sc.a.Ventilation.Level == LevelHypoventilation || sc.s.Circumstance.Has(OpioidOrSedation))
+}
+
+func (sc *scene) aboveCeiling() bool {
+	s, ok := sc.v.Get(SpO2)
+	return ok && s > spo2Ceiling && sc.a.Oxygenation.OnOxygen && sc.a.Oxygenation.SaturationSource == SpO2
+}
+
+// oximeterNearTarget: an answer that rests on SpO2 alone, where a hidden low
+// SaO2 is common (Valbuena 2022).
+func (sc *scene) oximeterNearTarget() bool {
+	return sc.a.Oxygenation.SaturationSource == SpO2 && sc.adultScale() && sc.v.Val(SpO2) <= 0.96
+}
+
+func (sc *scene) temperatureOff() bool {
+	t, ok := sc.v.Get(Temp)
+	return ok && abs(t-bodyTemp) >= temperatureSaid && sc.a.Blood != NoBlood
+}
+
+func (sc *scene) largeVT() bool {
+	ix, ok := sc.a.Index("vt_per_pbw")
+	return ok && ix.Value > vtProtective && sc.passive()
+}
+
+// altitudeUnset: a low PaO2 on air, where a house altitude would matter.
+func (sc *scene) altitudeUnset() bool {
+	low := sc.a.Oxygenation.Scale == DegreeMild || sc.a.Oxygenation.Scale == DegreeModerate
+	return low && onAir(sc) && sc.a.PBSource == PressureAssumed
+}

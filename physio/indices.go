@@ -1,0 +1,310 @@
+package physio
+
+// Index is a derived number with the range it may truly lie in and the inputs
+// it was made from.
+type Index struct {
+	Key string
+	Interval
+	Unit   string
+	Inputs []Quantity
+}
+
+// derivation is one row of the table of derived numbers: which inputs, which
+// formula on them, and when it may be told at all. Its equation and source
+// stand under the same key in rules.
+type derivation struct {
+	key, unit string
+	in        []Quantity
+	f         func(v []float64) float64
+	when      func(sc *scene) bool
+}
+
+func lungO2(sc *scene) bool  { return sc.lungO2 }
+func lungCO2(sc *scene) bool { return sc.lungCO2 && sc.a.Blood == Arterial }
+func always(*scene) bool     { return true }
+
+func adultRules(sc *scene) bool {
+	return sc.a.Ranges.Responses && sc.a.Triple.known() && sc.a.Blood != Cord
+}
+
+func onAir(sc *scene) bool {
+	return sc.lungO2 && sc.a.Oxygen.Known && !sc.a.Oxygen.Estimated && sc.a.Oxygen.FiO2.Value <= airAAFiO2
+}
+
+func ratioCurve(sc *scene) bool {
+	s, ok := sc.v.Get(SpO2)
+	return ok && s <= spo2Ceiling && !sc.s.Circumstance.Has(ECMO)
+}
+
+// aboutPA is the alveolar PO2 of FiO2, PB and PaCO2.
+func aboutPA(fio2, pb, paco2 float64) float64 {
+	return alveolarPO2(fio2, pb, paco2, usualR, waterAt37)
+}
+
+// derivations is the one table of derived numbers, in the order in which they
+// are worked out: a later row may use an earlier one through scene.v.
+var derivations = []derivation{
+	{"hco3_calc", "mmol/L", []Quantity{PHq, PaCO2}, func(v []float64) float64 { return bicarbonate(v[0], v[1]) }, always},
+	{"sbe", "mmol/L", []Quantity{PHq, PaCO2}, func(v []float64) float64 {
+		return standardBaseExcess(v[0], bicarbonate(v[0], v[1]))
+	}, always},
+	{"pao2_alveolar", "mmHg", []Quantity{FiO2, PB, PaCO2}, func(v []float64) float64 { return aboutPA(v[0], v[1], v[2]) }, lungCO2},
+	{"aa", "mmHg", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return aboutPA(v[0], v[1], v[2]) - v[3] }, lungO2},
+	{"a_over_a", "", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return v[3] / aboutPA(v[0], v[1], v[2]) }, lungO2},
+	{"resp_index", "", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return aboutPA(v[0], v[1], v[2])/v[3] - 1 }, lungO2},
+	{"pf", "mmHg", []Quantity{PaO2, FiO2}, func(v []float64) float64 { return v[0] / v[1] }, lungO2},
+	{"pf_altitude_corrected", "mmHg", []Quantity{PaO2, FiO2, PB}, func(v []float64) float64 { return v[0] / v[1] * v[2] / 760 },
+		func(sc *scene) bool { return sc.lungO2 && sc.a.Altitude >= altitudeShiftFrom }},
+	{"sf", "", []Quantity{SpO2, FiO2}, func(v []float64) float64 { return 100 * v[0] / v[1] }, ratioCurve},
+	{"rox", "", []Quantity{SpO2, FiO2, RR}, func(v []float64) float64 { return 100 * v[0] / v[1] / v[2] },
+		func(sc *scene) bool { return sc.adultRespiration() && !sc.s.Circumstance.Has(ECMO) }},
+	{"oi", "", []Quantity{FiO2, Pmean, PaO2}, func(v []float64) float64 { return 100 * v[0] * v[1] / v[2] }, lungO2},
+	{"osi", "", []Quantity{FiO2, Pmean, SpO2}, func(v []float64) float64 { return v[0] * v[1] / v[2] }, ratioCurve},
+	{"ve_corrected", "L/min", []Quantity{VE, PaCO2}, func(v []float64) float64 { return v[0] * v[1] / 40 }, lungCO2},
+	{"vent_ratio", "", []Quantity{VE, PaCO2, PBW}, func(v []float64) float64 { return 1000 * v[0] * v[1] / (v[2] * 100 * 37.5) },
+		func(sc *scene) bool { return lungCO2(sc) && sc.passive() }},
+	{"vd_vt", "", []Quantity{PaCO2, PeCO2}, func(v []float64) float64 { return (v[0] - v[1]) / v[0] },
+		func(sc *scene) bool { return lungCO2(sc) && sc.v.Val(PeCO2) < sc.v.Val(PaCO2) }},
+	{"pa_et_gap", "mmHg", []Quantity{PaCO2, EtCO2}, func(v []float64) float64 { return v[0] - v[1] }, lungCO2},
+	{"alveolar_dead_fraction", "", []Quantity{PaCO2, EtCO2}, func(v []float64) float64 { return (v[0] - v[1]) / v[0] },
+		func(sc *scene) bool { return lungCO2(sc) && sc.v.Val(EtCO2) <= sc.v.Val(PaCO2) }},
+	{"alveolar_vent", "L/min", []Quantity{VT, RR, PBW}, func(v []float64) float64 { return (v[0] - adultDeadSpacePerKg*v[2]) * v[1] / 1000 },
+		func(sc *scene) bool { return sc.adultRespiration() && sc.v.Val(VT) > adultDeadSpacePerKg*sc.v.Val(PBW) }},
+	{"pbw", "kg", []Quantity{PBW}, func(v []float64) float64 { return v[0] }, always},
+	{"vt_per_pbw", "mL/kg", []Quantity{VT, PBW}, func(v []float64) float64 { return v[0] / v[1] }, always},
+	{"vt_per_weight", "mL/kg", []Quantity{VT, Weight}, func(v []float64) float64 { return v[0] / v[1] },
+		func(sc *scene) bool { p := sc.a.Population; return p == Newborn || p == Preterm || p == Child }},
+	{"driving_pressure", "cmH2O", []Quantity{Pplat, PEEP}, func(v []float64) float64 { return v[0] - v[1] },
+		func(sc *scene) bool { return sc.v.Val(Pplat) > sc.v.Val(PEEP) }},
+	{"compliance", "mL/cmH2O", []Quantity{VT, Pplat, PEEP}, func(v []float64) float64 { return v[0] / (v[1] - v[2]) },
+		func(sc *scene) bool { return sc.v.Val(Pplat) > sc.v.Val(PEEP) }},
+	{"mech_power", "J/min", []Quantity{RR, VT, PIP, Pplat, PEEP}, func(v []float64) float64 {
+		return 0.098 * v[0] * v[1] / 1000 * (v[2] - (v[3]-v[4])/2)
+	}, func(sc *scene) bool { return sc.v.Val(Pplat) > sc.v.Val(PEEP) && sc.v.Val(PIP) >= sc.v.Val(Pplat) }},
+	{"rsbi", "/min/L", []Quantity{RR, VT}, func(v []float64) float64 { return v[0] / (v[1] / 1000) },
+		func(sc *scene) bool { return sc.adultRespiration() && sc.spontaneous() }},
+	{"anion_gap", "mmol/L", []Quantity{Na, Cl, HCO3}, func(v []float64) float64 { return v[0] - v[1] - v[2] }, always},
+	{"anion_gap_corrected", "mmol/L", []Quantity{Na, Cl, HCO3, Albumin}, func(v []float64) float64 {
+		return v[0] - v[1] - v[2] + 0.25*(albuminUsual-v[3])
+	}, always},
+	{"p50", "mmHg", []Quantity{PaO2, SaO2, PHq, PaCO2}, func(v []float64) float64 {
+		shift := CurveShift{PH: PH(v[2]), PaCO2: MmHg(v[3])}
+		return v[0] / po2At(v[1], shift) * po2At(0.5, CurveShift{})
+	}, func(sc *scene) bool { s := sc.v.Val(SaO2); return s >= 0.2 && s <= 0.9 && sc.a.Blood != NoBlood }},
+}
+
+// adultDeadSpacePerKg is the anatomical dead space of an adult, mL/kg
+// predicted weight (Numa and Newth 1996).
+const adultDeadSpacePerKg = 2.2
+
+// adultRespiration says that adult breathing indices hold.
+func (sc *scene) adultRespiration() bool {
+	return sc.a.Population == Adult || sc.a.Population == Pregnant
+}
+
+// spontaneous says that the patient breathes with little or no support.
+func (sc *scene) spontaneous() bool {
+	if sc.s.Circumstance.Has(SpontaneousBreathing) || sc.s.Mode == PressSupport {
+		return true
+	}
+	switch sc.s.Device {
+	case TPiece, TracheostomyMask, CPAPDevice:
+		return true
+	}
+	return false
+}
+
+// passive says that the ventilator does the breathing: the ventilatory ratio
+// holds in controlled ventilation of adults.
+func (sc *scene) passive() bool {
+	if !sc.adultRespiration() || sc.spontaneous() || sc.s.Mode == SIMV || sc.a.Population == Pregnant {
+		return false
+	}
+	return sc.s.Device == Ventilator || sc.v.Has(Pplat) || sc.controlledMode()
+}
+
+func (sc *scene) controlledMode() bool {
+	switch sc.s.Mode {
+	case AssistCtrl, VolumeCtrl, PressureCtrl, PRVC:
+		return true
+	}
+	return false
+}
+
+// indices works out every derived number that the inputs allow.
+func (sc *scene) indices() {
+	v := sc.v
+	if d := sc.a.Triple; d.Any && d.Quantity == HCO3 {
+		v.Set(HCO3, d.HCO3)
+	}
+	sc.given(&v)
+	for i := range derivations {
+		d := &derivations[i]
+		if !v.Has(d.in...) || !d.when(sc) {
+			continue
+		}
+		sc.derive(d, &v)
+	}
+	sc.needs()
+	sc.bands()
+	sc.contents()
+}
+
+// derive carries one row of the table out.
+func (sc *scene) derive(d *derivation, v *Values) {
+	in := make([]Input, len(d.in))
+	for i, q := range d.in {
+		in[i] = sc.input(q, v.Val(q))
+	}
+	sc.add(d.key, d.unit, propagate(d.f, in), d.in...)
+}
+
+// add notes an index whose numbers are ordinary.
+func (sc *scene) add(key, unit string, iv Interval, in ...Quantity) {
+	if finite(iv.Value) && finite(iv.Low) && finite(iv.High) {
+		sc.a.Indices = append(sc.a.Indices, Index{Key: key, Interval: iv, Unit: unit, Inputs: in})
+	}
+}
+
+// input is a quantity with the spread it brings into a formula.
+func (sc *scene) input(q Quantity, v float64) Input {
+	if q == FiO2 && sc.a.Oxygen.Known {
+		return Bounded(sc.a.Oxygen.FiO2)
+	}
+	return Measured(q, v)
+}
+
+// given takes over derived numbers that were measured or typed as such.
+func (sc *scene) given(v *Values) {
+	if f, ok := v.Get(VDVT); ok {
+		sc.add("vd_vt", "", point(f), VDVT)
+	}
+}
+
+func point(v float64) Interval { return Interval{Value: v, Low: v, High: v} }
+
+// needs adds the expected responses of the adult rules.
+func (sc *scene) needs() {
+	if !adultRules(sc) {
+		return
+	}
+	d, r := sc.a.Triple, sc.bloodRanges()
+	anchor := r.Anchor
+	acute := acuteHCO3(d.PaCO2, anchor)
+	span := func(low, high float64) Interval { return Interval{Value: (low + high) / 2, Low: low, High: high} }
+	chronic := chronicHypercapniaHCO3(d.PaCO2, anchor)
+	if d.PaCO2 < anchor.PaCO2 {
+		c := chronicHypocapniaHCO3(d.PaCO2, anchor)
+		chronic = Span{c - hypocapniaBand, c + hypocapniaBand}
+	}
+	sc.add("expected_hco3_acute", "mmol/L", span(acute-acuteTolerance, acute+acuteTolerance), PaCO2)
+	sc.add("expected_hco3_chronic", "mmol/L", span(chronic.Low, chronic.High), PaCO2)
+	sc.add("expected_ph_acute", "", point(phAtPCO2(anchor.SBE, d.PaCO2)), PaCO2)
+	low, high := phFrom(d.PaCO2, chronic.Low), phFrom(d.PaCO2, chronic.High)
+	sc.add("expected_ph_chronic", "", span(low, high), PaCO2)
+	t := triple{ph: d.PH, pco2: d.PaCO2, hco3: d.HCO3, sbe: standardBaseExcess(d.PH, d.HCO3), r: r}
+	switch p := classify(t).Primary; p {
+	case MetabolicAcidosis:
+		n := t.acidosisNeed()
+		sc.add("expected_paco2", "mmHg", span(n.Low, n.High), PHq, HCO3)
+	case MetabolicAlkalosis:
+		n := t.alkalosisNeed()
+		sc.add("expected_paco2", "mmHg", span(n.Low, n.High), HCO3)
+	}
+}
+
+// bands adds the expected A-a on air, the PaO2 of a healthy lung at this
+// PaCO2, and the delta ratio.
+func (sc *scene) bands() {
+	if onAir(sc) && sc.adultScale() {
+		b := sc.expectedAA()
+		sc.add("aa_expected", "mmHg", Interval{Value: (b.Low + b.High) / 2, Low: b.Low, High: b.High}, Age)
+	}
+	if pa, ok := sc.a.Index("pao2_alveolar"); ok && sc.lungO2 && sc.v.Has(PaCO2) && sc.adultScale() {
+		sc.a.Oxygenation.HealthyPaO2 = sc.healthyPaO2(pa)
+		sc.add("pao2_expected_at_paco2", "mmHg", sc.a.Oxygenation.HealthyPaO2, PaCO2, FiO2, PB)
+	}
+	gap, ok := sc.a.Index("anion_gap_corrected")
+	if !ok {
+		gap, ok = sc.a.Index("anion_gap")
+	}
+	if fall := sc.a.Ranges.Anchor.HCO3 - sc.a.Triple.HCO3; ok && gap.Value >= gapHigh && fall >= deltaSmallestFall {
+		ratio := propagate(func(v []float64) float64 { return (v[0] - gapUsual) / v[1] },
+			[]Input{Bounded(gap.Interval), Measured(HCO3, fall)})
+		sc.add("delta_ratio", "", ratio, Na, Cl, HCO3)
+	}
+}
+
+// adultScale says that adult expectations of PaO2 hold.
+func (sc *scene) adultScale() bool { return sc.a.Ranges.PaO2 }
+
+// deltaSmallestFall is the fall of bicarbonate, mmol/L, below which the delta
+// ratio is unstable.
+const deltaSmallestFall = 4.0
+
+// expectedAA is the expected A-a on air, mmHg: the age band, or for an unknown
+// age the band of adults up to about 64 years.
+func (sc *scene) expectedAA() Span {
+	if age, ok := sc.v.Get(Age); ok {
+		return expectedAA(age)
+	}
+	return Span{Low: expectedAA(youngAdult).Low, High: expectedAA(ageUnknown).High}
+}
+
+const (
+	youngAdult = 20.0 // years
+	ageUnknown = 64.0 // years: its upper line, 20 mmHg, serves when no age was said
+)
+
+// healthyPaO2 is the PaO2 that a healthy lung would have: the alveolar PO2
+// less the expected A-a on air, or times a healthy a/A on oxygen.
+func (sc *scene) healthyPaO2(pa Index) Interval {
+	if onAir(sc) {
+		b := sc.expectedAA()
+		low, high := pa.Value-b.High, pa.Value-b.Low
+		return Interval{Value: (low + high) / 2, Low: low, High: high}
+	}
+	return Interval{Value: aaEfficientRatio * pa.Value, Low: aaEfficientRatio * pa.Low, High: healthyRatioHigh * pa.High}
+}
+
+// healthyRatioHigh is the upper end of a healthy a/A, from memory.
+const healthyRatioHigh = 0.82
+
+// contents adds the saturation at this pH and the oxygen content.
+func (sc *scene) contents() {
+	if sc.a.Blood == NoBlood || sc.a.Blood == Cord {
+		return
+	}
+	if sc.v.Has(PaO2) && sc.a.Population != Newborn && sc.a.Population != Preterm {
+		sc.add("sao2_calc", "", sc.saturationOfPaO2(), PaO2, PHq, PaCO2)
+	}
+	sc.arterialContent()
+}
+
+// saturationOfPaO2 is the saturation at this PaO2, pH and PaCO2.
+func (sc *scene) saturationOfPaO2() Interval {
+	ph, pco2 := sc.a.Triple.PH, sc.a.Triple.PaCO2
+	return propagate(func(v []float64) float64 {
+		return saturation(v[0], CurveShift{PH: PH(ph), PaCO2: MmHg(pco2)})
+	}, []Input{Measured(PaO2, sc.v.Val(PaO2))})
+}
+
+// arterialContent adds CaO2: a measured saturation first, with the fractions
+// of dyshaemoglobin taken off, else the one of the curve.
+func (sc *scene) arterialContent() {
+	if !sc.v.Has(Hb, PaO2) || !sc.lungO2 {
+		return
+	}
+	sat, ok := sc.v.Get(SaO2)
+	if !ok {
+		sat = sc.saturationOfPaO2().Value
+	}
+	iv := propagate(func(v []float64) float64 { return functionalContent(v[0], v[2], v[1]) },
+		[]Input{Measured(Hb, sc.v.Val(Hb)), Measured(PaO2, sc.v.Val(PaO2)), Measured(SaO2, sat)})
+	sc.add("cao2", "mL/dL", iv, Hb, SaO2, PaO2)
+}
+
+// functionalContent is the content of blood, mL/dL, from haemoglobin g/dL,
+// functional saturation and PO2 mmHg: 1.34 per gram with a functional
+// saturation, 0.0031 per mmHg (common practice; Siggaard-Andersen 1984).
+func functionalContent(hb, sat, po2 float64) float64 { return 1.34*hb*sat + 0.0031*po2 }

@@ -1,0 +1,254 @@
+package physio
+
+// Every cut-off that a verdict uses stands in this file, with its unit, its
+// side and where it comes from.
+
+// Ranges are what one population is judged by: the reference ranges at its
+// usual barometric pressure, and the point on which the expected responses of
+// acid-base disorders are anchored.
+type Ranges struct {
+	PHLow, PHHigh       float64
+	PaCO2Low, PaCO2High float64 // mmHg
+	HCO3Low, HCO3High   float64 // mmol/L
+	// Anchor is the undisturbed state.
+	Anchor Anchor
+	// Responses says that the adult rules of expected response hold here.
+	Responses bool
+	// PaO2 says that the adult scale of PaO2 holds here.
+	PaO2 bool
+	// Source names where the ranges come from.
+	Source string
+}
+
+// The populations' ranges.
+var (
+	// adultRanges: common practice at sea level (pH 7.35-7.45, PaCO2 35-45,
+	// HCO3 22-26).
+	adultRanges = Ranges{
+		PHLow: 7.35, PHHigh: 7.45, PaCO2Low: 35, PaCO2High: 45, HCO3Low: 22, HCO3High: 26,
+		Anchor: Anchor{PaCO2: 40, HCO3: 24, SBE: 0}, Responses: true, PaO2: true,
+		Source: "adult arterial ranges at sea level, common practice",
+	}
+	// pregnantRanges: term pregnancy, pH 7.40-7.47, PaCO2 28-32, HCO3 18-22
+	// (reference table of the pregnancy review in the source list).
+	pregnantRanges = Ranges{
+		PHLow: 7.40, PHHigh: 7.47, PaCO2Low: 28, PaCO2High: 32, HCO3Low: 18, HCO3High: 22,
+		Anchor: Anchor{PaCO2: 30, HCO3: 20, SBE: -3.5}, Responses: true, PaO2: true,
+		Source: "late pregnancy: pH 7.40-7.47, PaCO2 28-32 mmHg, HCO3 18-22 mmol/L",
+	}
+	// firstTrimester: the fall begins in the first trimester; half way between
+	// the adult and the late table, from memory.
+	firstTrimester = Ranges{
+		PHLow: 7.36, PHHigh: 7.46, PaCO2Low: 30, PaCO2High: 38, HCO3Low: 19, HCO3High: 24,
+		Anchor: Anchor{PaCO2: 35, HCO3: 22, SBE: -2}, Responses: true, PaO2: true,
+		Source: "first trimester: between the adult and the late table, from memory",
+	}
+	// infantRanges: 1 month to 2 years, PaCO2 30-40 (mean 34), HCO3 18-24
+	// (mean 20), from memory.
+	infantRanges = Ranges{
+		PHLow: 7.34, PHHigh: 7.46, PaCO2Low: 30, PaCO2High: 40, HCO3Low: 18, HCO3High: 24,
+		Anchor: Anchor{PaCO2: 34, HCO3: 21, SBE: -3}, Responses: true, PaO2: true,
+		Source: "1 month to 2 years: PaCO2 30-40 mmHg, HCO3 18-24 mmol/L, from memory",
+	}
+	// newbornRanges: term, pH above 7.30 generally acceptable, PaCO2 35-45 with
+	// slightly higher values accepted (newborn chapter in the source list).
+	newbornRanges = Ranges{
+		PHLow: 7.30, PHHigh: 7.45, PaCO2Low: 35, PaCO2High: 50, HCO3Low: 18, HCO3High: 26,
+		Anchor: Anchor{PaCO2: 40, HCO3: 22, SBE: -2},
+		Source: "term newborn: pH above 7.30, PaCO2 35-50 mmHg",
+	}
+	// pretermRanges: permissive 45-55 mmHg, pH from 7.25; the low end stays at
+	// 35, because low PaCO2 is a harm of its own. From memory.
+	pretermRanges = Ranges{
+		PHLow: 7.25, PHHigh: 7.45, PaCO2Low: 35, PaCO2High: 55, HCO3Low: 18, HCO3High: 26,
+		Anchor: Anchor{PaCO2: 45, HCO3: 22, SBE: -2},
+		Source: "preterm: PaCO2 to 55 mmHg and pH from 7.25 accepted, from memory",
+	}
+)
+
+// Altitude moves the adult PaCO2 range: residents of Cusco (3350 m) have a
+// mean PaCO2 of 30.6 mmHg and HCO3 of 19.7 mmol/L (Pereira-Victorio, Rev Peru
+// Med Exp Salud Publica), 2.5-2.8 mmHg a kilometre below sea level's 39-40.
+// The slope is a straight line through these two points.
+const (
+	altitudeShiftFrom     = 1000.0 // m: below it the shift is inside a reading's error
+	paco2FallPerKm        = 2.5    // mmHg
+	hco3FallPerMmHg       = 0.41   // mmol/L, chronic hypocapnia, Krapf 1991
+	altitudePressureBelow = 680.0  // mmHg: the pressure at about 1000 m
+)
+
+// atAltitude shifts ranges to residents of h metres.
+func (r Ranges) atAltitude(h float64) Ranges {
+	if h < altitudeShiftFrom || !r.Responses {
+		return r
+	}
+	fall := paco2FallPerKm * h / 1000
+	acid := hco3FallPerMmHg * fall
+	r.PaCO2Low -= fall
+	r.PaCO2High -= fall
+	r.HCO3Low -= acid
+	r.HCO3High -= acid / 2
+	r.Anchor.PaCO2 -= fall
+	r.Anchor.HCO3 -= acid
+	r.Anchor.SBE -= acid
+	r.Source += ", shifted for altitude"
+	return r
+}
+
+// rangesFor chooses the table of a population. Age is in years, 0 when not
+// known; h is the altitude in metres.
+func rangesFor(p Population, age float64, trimester int, h float64) Ranges {
+	switch p {
+	case Pregnant:
+		if trimester == 1 {
+			return firstTrimester.atAltitude(h)
+		}
+		return pregnantRanges.atAltitude(h)
+	case Child:
+		if age > 0 && age < 2 {
+			return infantRanges.atAltitude(h)
+		}
+	case Newborn:
+		return newbornRanges
+	case Preterm:
+		return pretermRanges
+	}
+	return adultRanges.atAltitude(h)
+}
+
+// Degrees of a low PaO2 (mmHg): mild 60-79, moderate 40-59, severe below 40.
+// They belong to air at sea level; Oxygen studies, common practice.
+const (
+	pao2Adequate = 80.0 // at or above
+	pao2Mild     = 60.0 // at or above
+	pao2Moderate = 40.0 // at or above
+)
+
+// Degrees of a low saturation, the same scale in saturations: 95, 90, 75.
+const (
+	satAdequate = 0.95
+	satMild     = 0.90
+	satModerate = 0.75
+)
+
+// Target saturations named when none is set.
+const (
+	retainerTargetLow  = 0.88 // O'Driscoll 2017 (BTS)
+	retainerTargetHigh = 0.92
+	pretermTargetLow   = 0.91 // NICE QS193
+	pretermTargetHigh  = 0.95
+	pretermPaO2High    = 80.0 // mmHg; above it hyperoxia is a caution, from memory
+)
+
+// Efficiency of oxygenation.
+const (
+	aaEfficientRatio = 0.75  // a/A at or above: efficient (Gilbert 1974)
+	aaPoorOxygen     = 0.35  // a/A below, on oxygen: poor; our band
+	aaPoorAir        = 0.50  // a/A below, on air: poor; our band
+	pfPoor           = 200.0 // mmHg, at or below, on oxygen: poor (Berlin 2012 moderate)
+	pfAbnormal       = 300.0 // mmHg (Berlin 2012 mild)
+	sfPoor           = 235.0 // S/F that stands for P/F 200 (Rice 2007)
+	sfAbnormal       = 315.0 // S/F that stands for P/F 300 (Rice 2007)
+	spo2Ceiling      = 0.97  // above it S/F does not grade (Matthay 2024)
+	airFiO2          = 0.22  // at or below: air
+	airAAFiO2        = 0.24  // above it the age line of A-a does not hold
+	ratioOnlyPaCO2   = 50.0  // mmHg: above it P/F says little of the lung, a/A decides
+)
+
+// Efficiency of ventilation. The ventilatory-ratio and corrected-VE bands are
+// our own, anchored on cohort medians (Sinha 2013; ROSE cohort: 2).
+const (
+	ratioReduced  = 1.2
+	ratioPoor     = 2.0
+	correctedHigh = 10.0  // L/min at PaCO2 40: above it reduced (common practice)
+	correctedPoor = 15.0  // L/min: above it poor; our band
+	deadSpaceHigh = 0.40  // VD/VT above: reduced (common practice)
+	deadSpacePoor = 0.60  // VD/VT at or above: poor (Nuckton 2002: died 0.63, lived 0.54)
+	paEtUsual     = 5.0   // mmHg PaCO2-EtCO2 above: reduced (common practice)
+	paEtWide      = 15.0  // mmHg above: poor; our band
+	vtProtective  = 8.0   // mL/kg predicted weight (ARDS Network 2000)
+	plateauLimit  = 30.0  // cmH2O (ARDS Network 2000)
+	drivingLimit  = 15.0  // cmH2O (Amato 2015)
+	patternLimit  = 105.0 // breaths/min/L (Yang and Tobin 1991)
+	powerConcern  = 17.0  // J/min (Serpa Neto 2018)
+)
+
+// defaultCritical are the critical limits of a house that has set none, after
+// Kost 1990, from memory.
+var defaultCritical = CriticalLimits{PHLow: 7.20, PHHigh: 7.60, PaCO2High: 70, PaO2Low: 45}
+
+// newbornCritical leaves out PaO2: a newborn's lower values are his range.
+var newbornCritical = CriticalLimits{PHLow: 7.20, PHHigh: 7.60, PaCO2High: 70}
+
+// Acid-base tolerances.
+const (
+	acuteTolerance    = 2.0  // mmol/L round the acute response: course
+	disorderTolerance = 3.0  // mmol/L: with 1 of measurement, a second disorder
+	chronicTolerance  = 4.0  // mmol/L above the chronic band: a second disorder
+	hypocapniaBand    = 3.0  // mmol/L round chronic hypocapnia (6 mmol/L wide, 1977)
+	sbeDisorder       = 2.0  // mmol/L: beyond it SBE is out of range
+	sbeSignificant    = 5.0  // mmol/L: a base deficit that counts beside a raised PaCO2
+	needMargin        = 1.45 // mmHg: 1.96 x SD of a repeat PaCO2 (Mallat 2015)
+	sbeNeedTolerance  = 3.0  // mmHg round 40 + SBE (Schlichtig 1998)
+	wintersTolerance  = 2.0  // mmHg (Albert, Dell and Winters 1967)
+	alkalosisBand     = 5.0  // mmHg round 0.7 x HCO3 + 20
+	gapUsual          = 12.0 // mmol/L, without K
+	gapHigh           = 15.5 // mmol/L: above 12 + 4, less half a printed digit
+	gapHidden         = 20.0 // mmol/L: high whatever the bicarbonate
+	albuminUsual      = 40.0 // g/L; Figge 1998 uses 44, most texts 40
+	deltaMixed        = 2.0  // above: alkalosis or earlier hypercapnia beside
+	chronicLatestPH   = 7.50 // chronic hypocapnia at a higher pH is not called
+)
+
+// The triple of pH, PaCO2 and HCO3: our own error budget over analyser error,
+// rounding and the spread of the constants.
+const (
+	fitFreePH    = 0.03 // pH units off: no remark
+	fitRejectPH  = 0.08 // pH units off: the three can not be of one sample
+	fitFreeHCO3  = 0.06 // of the bicarbonate, plus half its last digit
+	fitAskHCO3   = 4.0  // mmol/L off: asked
+	satMismatch  = 0.06 // measured against the curve, beyond which it is said
+	venousSatGap = 0.08 // sample below oximeter: venous until shown otherwise
+	venousPaO2   = 45.0 // mmHg at or below: could be venous
+)
+
+// Differences of venous from arterial blood, and the ages and sizes at which
+// one table hands over to the next.
+const (
+	venousPH   = 0.033 // pH units lower (Byrne 2014)
+	venousPCO2 = 6.0   // mmHg higher (Kelly 2013)
+	venousHCO3 = 1.2   // mmol/L higher (Kelly 2013)
+
+	childBelow    = 16.0       // years, common practice
+	newbornBelow  = 29.0 / 365 // years: 28 days, common practice
+	pbwFromHeight = 130.0      // cm; below it predicted weight means nothing
+
+	cohbUsual  = 0.10  // smokers reach about 10 %, from memory
+	methbUsual = 0.015 // from memory
+
+	beFree = 3.0 // mmol/L: blood and extracellular base excess differ by so much
+	beAsk  = 6.0 // mmol/L: beyond any form of base excess
+)
+
+// Bounds of the two axes that belong to bedside values, age and newborns.
+const (
+	venousScreen = 45.0  // mmHg: a venous PCO2 below it makes hypercapnia unlikely (Kelly 2013)
+	tcMargin     = 7.5   // mmHg: agreement of transcutaneous CO2, from memory
+	aaImpossible = -10.0 // mmHg: a more negative A-a has a wrong input (sheet, section 3)
+	oldestLine   = 75.0  // years: PaO2 no longer falls (Cerveri 1995)
+	oldestPaO2   = 68.4  // mmHg: 5th centile at 75 years and above (Cerveri 1995)
+	newbornAA    = 40.0  // mmHg on air, from memory
+
+	newbornPaO2         = 50.0 // mmHg: at or above it inside the usual newborn range, from memory
+	newbornPaO2Mild     = 40.0
+	newbornPaO2Moderate = 30.0
+	newbornSatMild      = 0.85
+	newbornSatModerate  = 0.75
+)
+
+// Bounds of cautions.
+const (
+	raisedHCO3      = 28.0 // mmol/L: above it a chronic retention is thought of, common practice
+	flatPaO2        = 80.0 // mmHg: the curve is flat above
+	temperatureSaid = 2.0  // C away from 37: PCO2 moves by more than 9 %
+)

@@ -173,4 +173,7 @@ type Choice struct {
 	// Blood and Device are set when the choice names them.
 	Blood  physio.Blood  `json:"blood,omitempty"`
 	Device physio.Device `json:"device,omitempty"`
+	// Sex and Circumstance are set when the choice names them.
+	Sex          physio.Sex          `json:"sex,omitempty"`
+	Circumstance physio.Circumstance `json:"circumstance,omitempty"`
 }

@@ -1,0 +1,355 @@
+package memory
+
+import (
+	"context"
+	"encoding/json"
+	"errors"
+	"fmt"
+	"slices"
+	"strings"
+	"time"
+
+	"galeward/bot/store"
+)
+
+var (
+	// ErrUncertain says that the store broke off while a change was written:
+	// it may or may not be stored, and must not be reported as either.
+	ErrUncertain = errors.New("the store broke off: whether the change is stored is not known")
+	// ErrBusy says that others kept writing at the same time; nothing was
+	// stored.
+	ErrBusy = errors.New("others kept changing the same thing at this moment: nothing was stored")
+	// ErrNoRevision says that there is no revision of this number.
+	ErrNoRevision = errors.New("there is no such revision")
+)
+
+// Change is what one revision did to one field, in the words of the file form.
+// From and To are "" for "not set".
+type Change struct {
+	Field string `json:"field"`
+	From  string `json:"from,omitempty"`
+	To    string `json:"to,omitempty"`
+}
+
+// Revision is one numbered change of house rules. Numbers begin at 1 and have
+// no gaps.
+type Revision struct {
+	N  int
+	At time.Time
+	// By is the platform's id of who made the change.
+	By string
+	// What lists the changed fields; it is empty when nothing was to change.
+	What []Change
+	// House are the rules as they stood after the change.
+	House House
+}
+
+// ClashError says that someone else changed the same field between the
+// reading of the rules and the writing: nothing was stored.
+type ClashError struct {
+	// Theirs is what they changed of what was to be changed.
+	Theirs []Change
+	// N is the revision that stands now.
+	N int
+}
+
+// Error says what was changed meanwhile.
+func (e *ClashError) Error() string {
+	parts := make([]string, len(e.Theirs))
+	for i, c := range e.Theirs {
+		parts[i] = fmt.Sprintf("%s is now %s", c.Field, orUnset(c.To))
+	}
+	return fmt.Sprintf("someone else changed the same rule a moment ago (%s, revision %d): nothing was stored",
+		strings.Join(parts, "; "), e.N)
+}
+
+func orUnset(s string) string {
+	if s == "" {
+		return "not set"
+	}
+	return s
+}
+
+// ChangeHouse changes the rules of a channel: change gets a copy of them and
+// gives the new ones; it may be called again, on newer rules, when others
+// write at the same time, and its error ends the matter. The change is stored
+// only when it stands where a store that asks for it has it on a second server.
+//
+// Errors: what change said; Problems when the new rules are not possible;
+// *ClashError when someone changed the same field meanwhile; ErrBusy, ErrDown,
+// store.ErrFull and *DocumentError with nothing stored; ErrUncertain; and
+// store.ErrNotReplicated when all is stored, but on one server only: then the
+// results are valid. When nothing was to change, the Revision is the one in
+// force with an empty What.
+func (m *Memory) ChangeHouse(ctx context.Context, where Where, by string, change func(House) (House, error)) (House, Revision, error) {
+	return m.ChangeHouseSince(ctx, where, by, -1, change)
+}
+
+// ChangeHouseSince is ChangeHouse for a change that was decided while revision
+// base was shown (0 for the default rules): what others changed since then of
+// the same fields is a *ClashError.
+func (m *Memory) ChangeHouseSince(ctx context.Context, where Where, by string, base int, change func(House) (House, error)) (House, Revision, error) {
+	p := &pen{m: m, partition: where.partition(), by: by, base: base, change: change}
+	rev, err := p.write(ctx)
+	if err != nil && !errors.Is(err, store.ErrNotReplicated) {
+		return House{}, Revision{}, err
+	}
+	return rev.House.Clone(), rev, err
+}
+
+// pen is one change of house rules on its way into the store.
+type pen struct {
+	m         *Memory
+	partition string
+	by        string
+	base      int // the revision the change was decided on, -1 for the present one
+	change    func(House) (House, error)
+	seen      *House // the rules of base
+}
+
+func (p *pen) write(ctx context.Context) (Revision, error) {
+	ops := []store.Op{{Key: houseKey}}
+	if p.base > 0 {
+		ops = append(ops, store.Op{Key: revisionKey(p.base)})
+	}
+	items, err := p.m.guard.Do(ctx, p.partition, ops...)
+	if err != nil {
+		return Revision{}, err
+	}
+	if err := p.look(items); err != nil {
+		return Revision{}, err
+	}
+	for range tries {
+		var rev Revision
+		if rev, items, err = p.attempt(ctx, items[0]); !errors.Is(err, store.ErrConflict) {
+			return rev, err
+		}
+	}
+	return Revision{}, ErrBusy
+}
+
+// look finds the rules that the change was decided on.
+func (p *pen) look(items []store.Item) error {
+	switch {
+	case p.base == 0:
+		p.seen = &House{}
+	case p.base > 0 && items[1].Tag == "":
+		return fmt.Errorf("%w: %d", ErrNoRevision, p.base)
+	case p.base > 0:
+		rev, err := decodeRevision(revisionSchema, items[1].Value)
+		p.seen = &rev.House
+		return err
+	}
+	return nil
+}
+
+// attempt writes the change on the rules that the store holds. On a conflict
+// it gives what the store holds instead.
+func (p *pen) attempt(ctx context.Context, item store.Item) (Revision, []store.Item, error) {
+	now, err := p.m.houseOf(p.partition, item)
+	if err != nil {
+		return Revision{}, nil, err
+	}
+	rev, err := p.draft(now)
+	if err != nil || len(rev.What) == 0 {
+		return rev, nil, err
+	}
+	tag := newTag()
+	ops, err := revisionOps(rev, item.Tag, tag)
+	if err != nil {
+		return Revision{}, nil, err
+	}
+	items, err := p.m.guard.Do(ctx, p.partition, ops...)
+	switch {
+	case err == nil, errors.Is(err, store.ErrNotReplicated):
+		p.m.houses.put(p.partition, known{tag, rev.N, rev.House})
+		return rev, nil, err
+	case errors.Is(err, store.ErrConflict) && items[0].Tag == tag: // written by a repeat inside the store's client
+		return p.confirm(ctx, rev, tag, items)
+	case errors.Is(err, ErrDown):
+		return p.doubt(ctx, rev, item.Tag, tag, err)
+	}
+	return Revision{}, items, err
+}
+
+// draft applies the change, and looks whether others changed the same.
+func (p *pen) draft(now known) (Revision, error) {
+	if p.seen == nil {
+		p.seen = &now.house
+	}
+	next, err := p.change(now.house.Clone())
+	if err != nil {
+		return Revision{}, err
+	}
+	next = next.tidy()
+	if err := next.Validate(); err != nil {
+		return Revision{}, err
+	}
+	what := diff(now.house, next)
+	if len(what) == 0 {
+		return Revision{N: now.n, House: now.house}, nil
+	}
+	if theirs := overlap(diff(*p.seen, now.house), what); len(theirs) > 0 {
+		return Revision{}, &ClashError{Theirs: theirs, N: now.n}
+	}
+	return Revision{N: now.n + 1, At: p.m.now().UTC(), By: p.by, What: what, House: next}, nil
+}
+
+// overlap gives the changes of theirs that touch a field of ours.
+func overlap(theirs, ours []Change) []Change {
+	return slices.DeleteFunc(theirs, func(c Change) bool {
+		return !slices.ContainsFunc(ours, func(o Change) bool { return o.Field == c.Field })
+	})
+}
+
+// lookUp bounds the question what became of a write, so that a line is
+// answered within two seconds.
+const lookUp = 500 * time.Millisecond
+
+// doubt finds out what became of a write whose reply was lost.
+func (p *pen) doubt(ctx context.Context, rev Revision, before, tag string, cause error) (Revision, []store.Item, error) {
+	ctx, cancel := context.WithTimeout(context.WithValue(context.WithoutCancel(ctx), pressing{}, true), lookUp)
+	defer cancel()
+	items, err := p.m.guard.Do(ctx, p.partition, store.Op{Key: houseKey}, store.Op{Key: revisionKey(rev.N)})
+	switch {
+	case err != nil:
+		return Revision{}, nil, fmt.Errorf("%w: %w", ErrUncertain, cause)
+	case items[0].Tag == tag:
+		return p.confirm(ctx, rev, tag, items)
+	case items[1].Tag == tag: // ours stands, and another change on top of it
+		return rev, nil, nil
+	}
+	// Not there, yet it may still be on its way. Written anew under the same
+	// condition, one of the two writes wins and the other is refused.
+	return Revision{}, items, store.ErrConflict
+}
+
+// confirm writes the same rules once more under a new tag, so that a store
+// that keeps a second server can say whether that has them.
+func (p *pen) confirm(ctx context.Context, rev Revision, tag string, items []store.Item) (Revision, []store.Item, error) {
+	again := newTag()
+	ops, err := revisionOps(rev, tag, again)
+	if err != nil {
+		return Revision{}, nil, err
+	}
+	_, err = p.m.guard.Do(ctx, p.partition, ops[0])
+	switch {
+	case err == nil, errors.Is(err, store.ErrNotReplicated):
+		p.m.houses.put(p.partition, known{again, rev.N, rev.House})
+		return rev, nil, err
+	case errors.Is(err, store.ErrConflict): // changed further by someone else: ours stands below
+		return rev, nil, nil
+	}
+	return rev, items, store.ErrNotReplicated
+}
+
+// revisionOps are the writes of one revision, under the condition that the
+// rules are still the ones it was made from.
+func revisionOps(rev Revision, before, tag string) ([]store.Op, error) {
+	now, err := encodeRevision(houseSchema, rev)
+	if err != nil {
+		return nil, err
+	}
+	kept, err := encodeRevision(revisionSchema, rev)
+	return []store.Op{
+		{Key: houseKey, If: &before, Value: now, Tag: tag, Durable: true},
+		{Key: revisionKey(rev.N), If: store.Absent(), Value: kept, Tag: tag, Durable: true},
+	}, err
+}
+
+func encodeRevision(s schema, rev Revision) ([]byte, error) {
+	house, err := rev.House.file()
+	if err != nil {
+		return nil, err
+	}
+	return json.Marshal(houseDoc{head: s.head(), N: rev.N, At: rev.At, By: rev.By, What: rev.What, House: house})
+}
+
+func decodeRevision(s schema, raw []byte) (Revision, error) {
+	var d houseDoc
+	if err := s.decode(raw, &d); err != nil {
+		return Revision{}, err
+	}
+	house, err := readHouse(d.House)
+	if err != nil {
+		return Revision{}, s.unreadable(err)
+	}
+	return Revision{N: d.N, At: d.At, By: d.By, What: d.What, House: house}, nil
+}
+
+// Revision gives one revision of a channel's rules. Errors: ErrNoRevision,
+// ErrDown, *DocumentError.
+func (m *Memory) Revision(ctx context.Context, where Where, n int) (Revision, error) {
+	if n < 1 {
+		return Revision{}, fmt.Errorf("%w: %d", ErrNoRevision, n)
+	}
+	items, err := m.guard.Do(ctx, where.partition(), store.Op{Key: revisionKey(n)})
+	if err != nil {
+		return Revision{}, err
+	}
+	if items[0].Tag == "" {
+		return Revision{}, fmt.Errorf("%w: %d", ErrNoRevision, n)
+	}
+	return decodeRevision(revisionSchema, items[0].Value)
+}
+
+// Revisions gives the last revisions of a channel's rules, the newest first,
+// at most 32. Errors: ErrDown, *DocumentError.
+func (m *Memory) Revisions(ctx context.Context, where Where, last int) ([]Revision, error) {
+	partition := where.partition()
+	items, err := m.guard.Do(ctx, partition, store.Op{Key: houseKey})
+	if err != nil {
+		return nil, err
+	}
+	now, err := m.houseOf(partition, items[0])
+	if err != nil {
+		return nil, err
+	}
+	var ops []store.Op
+	for n := now.n; n > 0 && len(ops) < min(last, store.MaxOps); n-- {
+		ops = append(ops, store.Op{Key: revisionKey(n)})
+	}
+	if len(ops) == 0 {
+		return nil, nil
+	}
+	if items, err = m.guard.Do(ctx, partition, ops...); err != nil {
+		return nil, err
+	}
+	return decodeRevisions(items)
+}
+
+func decodeRevisions(items []store.Item) ([]Revision, error) {
+	var all []Revision
+	for _, item := range items {
+		if item.Tag == "" {
+			continue
+		}
+		rev, err := decodeRevision(revisionSchema, item.Value)
+		if err != nil {
+			return nil, err
+		}
+		all = append(all, rev)
+	}
+	return all, nil
+}
+
+// Restore makes the rules of an earlier revision the rules in force, as a new
+// revision. Errors: those of Revision and of ChangeHouse.
+func (m *Memory) Restore(ctx context.Context, where Where, by string, n int) (House, Revision, error) {
+	earlier, err := m.Revision(ctx, where, n)
+	if err != nil {
+		return House{}, Revision{}, err
+	}
+	return m.ChangeHouse(ctx, where, by, func(House) (House, error) { return earlier.House.Clone(), nil })
+}
+
+// HouseOf gives the rules in force and their revision number, read from the
+// store. Errors: ErrDown, *DocumentError.
+func (m *Memory) HouseOf(ctx context.Context, where Where) (House, int, error) {
+	items, err := m.guard.Do(ctx, where.partition(), store.Op{Key: houseKey})
+	if err != nil {
+		return House{}, 0, err
+	}
+	k, err := m.houseOf(where.partition(), items[0])
+	return k.house.Clone(), k.n, err
+}

@@ -59,13 +59,13 @@ func RespiratoryIndexFromRatio(ratio float64) (float64, error) {
 // airDifferenceFiO2 is the highest FiO2 at which the age line is shown.
 const airDifferenceFiO2 = 0.24
 
-// ExpectedDifference gives the band between two published lines for the
+// ExpectedAA gives the band between two published lines for the
 // alveolar-arterial difference in mmHg by age on air: 2.5 + 0.21 x age
 // (Mellemgaard 1966) and age/4 + 4 (common practice). A smaller difference than
 // the band is no finding. Above FiO2 0.24 the lines do not hold: RangeError.
 // highland is true below 680 mmHg, where the lines were not drawn and healthy
 // differences are smaller, so that a value inside the band excludes less.
-func ExpectedDifference(age Years, fio2 Fraction, pb Pressure) (band Span, highland bool, err error) {
+func ExpectedAA(age Years, fio2 Fraction, pb Pressure) (band Span, highland bool, err error) {
 	err = check(
 		given{q: Age, v: float64(age)}, pbAbove(pb, waterAt37),
 		given{q: FiO2, v: float64(fio2), low: quantities[FiO2].Low, high: airDifferenceFiO2},
@@ -73,13 +73,13 @@ func ExpectedDifference(age Years, fio2 Fraction, pb Pressure) (band Span, highl
 	if err != nil {
 		return Span{}, false, err
 	}
-	return expectedDifference(float64(age)), pb.MmHg() < highlandPB, nil
+	return expectedAA(float64(age)), pb.MmHg() < highlandPB, nil
 }
 
 // highlandPB is the pressure at about 1000 m, mmHg.
 const highlandPB = 680
 
-func expectedDifference(age float64) Span {
+func expectedAA(age float64) Span {
 	a, b := 2.5+0.21*age, age/4+4 // Mellemgaard 1966; common practice
 	return Span{Low: min(a, b), High: max(a, b)}
 }
@@ -132,6 +132,6 @@ func healthyPaO2(alveolar, fio2, age float64) Interval {
 	if age == 0 {
 		young, old = 20, 70
 	}
-	low, high := alveolar-expectedDifference(old).High, alveolar-expectedDifference(young).Low
+	low, high := alveolar-expectedAA(old).High, alveolar-expectedAA(young).Low
 	return Interval{Value: (low + high) / 2, Low: low, High: high}
 }

@@ -60,7 +60,7 @@ const (
 	PressureMeasured PressureSource = "measured"
 	PressureHouse    PressureSource = "house"
 	PressureAltitude PressureSource = "altitude"
-	PressureSeaLevel PressureSource = "sea_level"
+	PressureAssumed  PressureSource = "assumed"
 )
 
 // PressureKnown is what is known of the barometric pressure; zero fields are
@@ -93,7 +93,7 @@ func barometricPressure(measured, house, metres float64) (float64, PressureSourc
 	case math.Abs(metres) >= lowlandBelow:
 		return westPressure(metres), PressureAltitude
 	default:
-		return standardPB, PressureSeaLevel
+		return standardPB, PressureAssumed
 	}
 }
 

@@ -4,9 +4,9 @@ import "math"
 
 // How uncertainty is carried.
 //
-// Every input of a formula comes as an Interval: a measured number with the
-// 95 % range of a repeat sample (reading), a fraction of oxygen from a mask
-// with the bounds of its spread. Each input in turn is moved to its two ends
+// Every input of a formula comes with a range: a measured number with the 95 %
+// range of a repeat sample (Measured), a fraction of oxygen from a mask with the
+// bounds of its spread (Bounded). Each input in turn is moved to its two ends
 // with the others at their values; what that does to the result is collected
 // separately for the low and the high side, and the parts of one side are added
 // in quadrature, because the inputs err independently. Bounds of a device are
@@ -70,30 +70,28 @@ var imprecisions = [quantityCount]imprecision{
 // hold 95 % of repeat readings.
 const coverage = 1.96
 
-// Reading gives a measured value with the range in which 95 % of repeat samples
-// from the same patient at the same time would lie, within what is possible.
-func Reading(q Quantity, v float64) (Interval, error) {
-	if err := check(given{q: q, v: v}); err != nil {
-		return Interval{}, err
-	}
-	return reading(q, v), nil
-}
+// Input is one input of a formula with the range it may truly lie in.
+type Input struct{ Interval }
 
-func reading(q Quantity, v float64) Interval {
+// Measured gives a measured value with the range in which 95 % of repeat
+// samples from the same patient at the same time would lie, cut off at what is
+// possible. The value itself is not checked.
+func Measured(q Quantity, v float64) Input {
 	sd := max(imprecisions[q].abs, imprecisions[q].rel*math.Abs(v))
 	info := &quantities[q]
-	return Interval{
+	return Input{Interval{
 		Value: v,
 		Low:   min(v, max(info.Low, v-coverage*sd)),
 		High:  max(v, min(info.High, v+coverage*sd)),
-	}
+	}}
 }
 
-// exact is an input without uncertainty.
-func exact(v float64) Interval { return Interval{Value: v, Low: v, High: v} }
+// Bounded gives an input whose range is known as such, a fraction of oxygen
+// from a mask or an index worked out before.
+func Bounded(iv Interval) Input { return Input{iv} }
 
-// propagate carries the intervals of the inputs through f.
-func propagate(f func([]float64) float64, in []Interval) Interval {
+// propagate carries the inputs through f by the method above.
+func propagate(f func([]float64) float64, in []Input) Interval {
 	x := make([]float64, len(in))
 	for i := range in {
 		x[i] = in[i].Value

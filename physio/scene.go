@@ -69,10 +69,9 @@ func (sc *scene) pressure() {
 	if said, ok := sc.v.Get(Altitude); ok {
 		altitude = said
 	}
-	pb, source := BarometricPressure(MmHg(measured), MmHg(sc.set.PB), Metres(altitude))
-	a.PB, a.PBSource = pb.MmHg(), source
+	a.PB, a.PBSource = barometricPressure(measured, sc.set.PB, altitude)
 	a.Altitude = altitude
-	if source == PressureMeasured || source == PressureHouse {
+	if a.PBSource == PressureMeasured || a.PBSource == PressureHouse {
 		a.Altitude = 0
 		if a.PB < altitudePressureBelow {
 			a.Altitude = altitudeAt(a.PB)
@@ -115,7 +114,7 @@ func (sc *scene) volumes() {
 		}
 	}
 	if !v.Has(PBW) && v.Has(Height) && sc.s.Sex != SexUnstated && sc.adultSized() {
-		if w, err := PredictedWeight(sc.s.Sex, v.Val(Height)); err == nil {
+		if w, err := PredictedWeight(sc.s.Sex, Centimetres(v.Val(Height))); err == nil {
 			v.Set(PBW, float64(w))
 		}
 	}

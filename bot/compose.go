@@ -1,0 +1,242 @@
+package bot
+
+import (
+	"strings"
+
+	"galeward/bot/reply"
+	"galeward/bot/shorthand"
+	"galeward/physio"
+)
+
+// composer turns one assessed gas into the blocks of the answer. It chooses
+// and orders; the sentences come from the wording files.
+type composer struct {
+	gas *shorthand.Gas
+	a   *physio.Assessment
+	n   numbers
+	// inherited names what a follow-up took over, "" for none.
+	inherited string
+	// change says how a follow-up differs from the gas before it.
+	change string
+	// notice lines go before the echo: our own state, declined requests.
+	notices []string
+	// question is the one question, nil for none.
+	question *asked
+}
+
+// asked is a question in words, with the choices that answer it.
+type asked struct {
+	id, text string
+	choices  []string
+	from     *shorthand.Question
+}
+
+// compose lays the answer out in its fixed order.
+func (c *composer) compose() reply.Reply {
+	var r reply.Reply
+	c.question = c.chooseQuestion()
+	r.Add(reply.Headline, c.headline())
+	if c.criticalFirst() {
+		r.Add(reply.Critical, criticalNotice)
+	}
+	for _, n := range c.notices {
+		r.Add(reply.Notice, n)
+	}
+	r.Add(reply.Echo, c.echo())
+	r.Add(reply.Ventilation, c.ventilation())
+	r.Add(reply.Oxygenation, c.oxygenation())
+	r.Add(reply.Metabolic, c.metabolic())
+	r.Add(reply.Next, c.change)
+	r.Add(reply.Next, c.next())
+	c.addCautions(&r)
+	if c.question != nil {
+		r.Add(reply.Question, c.question.text)
+		for _, choice := range c.question.choices {
+			r.Buttons = append(r.Buttons, reply.Button{Label: choice, Token: choice})
+		}
+	}
+	return r
+}
+
+// criticalFirst says that the call comes before the text: any crossing but a
+// PaCO2 alone, which its own line names.
+func (c *composer) criticalFirst() bool {
+	crossed := c.a.Critical
+	return len(crossed) > 1 || len(crossed) == 1 && crossed[0] != physio.PaCO2
+}
+
+// headlineWidth is what a lock screen shows of the first line.
+const headlineWidth = 40
+
+// headline carries both verdicts, ventilation first, in at most 40 characters:
+// the longest pair of phrasings that fits.
+func (c *composer) headline() string {
+	if len(c.a.Critical) > 1 {
+		return c.criticalHeadline()
+	}
+	for _, v := range c.ventilationShort() {
+		for _, o := range c.oxygenationShort() {
+			if h := joinHeads(v, o); len([]rune(h)) <= headlineWidth {
+				return h
+			}
+		}
+	}
+	return joinHeads(last(c.ventilationShort()), last(c.oxygenationShort()))
+}
+
+func last(s []string) string { return s[len(s)-1] }
+
+func joinHeads(v, o string) string {
+	if o == "" {
+		return v
+	}
+	if v == "" {
+		return o
+	}
+	return v + "; " + o
+}
+
+func (c *composer) criticalHeadline() string {
+	parts := make([]string, len(c.a.Critical))
+	for i, q := range c.a.Critical {
+		parts[i] = c.criticalValue(q)
+	}
+	h := "CRITICAL " + strings.Join(parts, ", ")
+	if len([]rune(h)) > headlineWidth {
+		h = "CRITICAL " + strings.Join(parts[:2], ", ")
+	}
+	return h
+}
+
+func (c *composer) criticalValue(q physio.Quantity) string {
+	v, _ := c.gas.Sample.Get(q)
+	if q == physio.PHq {
+		return "pH " + phText(v)
+	}
+	return c.bloodSymbol(q) + " " + c.n.pressure(v)
+}
+
+// ventilationShort gives phrasings of the first axis, longest first.
+func (c *composer) ventilationShort() []string {
+	if len(c.a.Critical) == 1 {
+		return []string{c.criticalValue(c.a.Critical[0]) + " critical"}
+	}
+	level := c.ventilationHead()
+	if c.a.Ventilation.Efficiency == physio.Poor {
+		return []string{level + ", efficiency poor", level + ", costly", level}
+	}
+	return []string{level}
+}
+
+func (c *composer) ventilationHead() string {
+	switch c.a.Blood {
+	case physio.Cord:
+		return "Cord gas: no lung verdict"
+	case physio.Venous, physio.CentralVenous, physio.MixedVenous, physio.Intraosseous, physio.BloodUncertain:
+		return "CO2 can't say (" + shortBlood[c.a.Blood] + ")"
+	}
+	v, ab := c.a.Ventilation, c.a.AcidBase
+	answers := ab.Need == physio.Matches
+	switch v.Level {
+	case physio.LevelAdequate:
+		if v.Borderline {
+			return "CO2 borderline"
+		}
+		return "CO2 in range"
+	case physio.LevelShortForNeed:
+		return "CO2 above need"
+	case physio.LevelHypoventilation:
+		return c.highHead(answers && ab.Primary == physio.MetabolicAlkalosis)
+	case physio.LevelHyperventilation:
+		if answers && ab.Primary == physio.MetabolicAcidosis {
+			return "CO2 low, fits acidosis"
+		}
+		return "CO2 low"
+	}
+	return "CO2 can't say"
+}
+
+func (c *composer) highHead(answersAlkalosis bool) string {
+	switch {
+	case answersAlkalosis:
+		return "CO2 high, fits alkalosis"
+	case c.a.Ventilation.Floor:
+		return "CO2 high (EtCO2)"
+	case c.a.AcidBase.Course == physio.Acute:
+		return "CO2 high, acute"
+	case c.a.AcidBase.Course == physio.Chronic:
+		return "CO2 high, chronic"
+	}
+	return "CO2 high"
+}
+
+var shortBlood = map[physio.Blood]string{
+	physio.Venous: "venous", physio.CentralVenous: "venous", physio.MixedVenous: "venous",
+	physio.Intraosseous: "bone", physio.BloodUncertain: "sample?",
+}
+
+// oxygenationShort gives phrasings of the second axis, longest first.
+func (c *composer) oxygenationShort() []string {
+	if c.a.Blood == physio.Cord {
+		return []string{""}
+	}
+	level := "O2 " + c.oxygenHead()
+	switch c.a.Oxygenation.Efficiency {
+	case physio.Poor, physio.Reduced, physio.Efficient:
+		word := ", transfer " + efficiencyWord[c.a.Oxygenation.Efficiency]
+		if c.a.Oxygenation.Efficiency == physio.Efficient {
+			word = ", efficient"
+		}
+		return []string{level + word, level}
+	}
+	return []string{level}
+}
+
+// oxygenHead is the level in few words.
+func (c *composer) oxygenHead() string {
+	o := c.a.Oxygenation
+	if o.ExpectedHere {
+		return "low, expected here"
+	}
+	switch o.AgainstTarget {
+	case physio.BelowTarget:
+		return "below target"
+	case physio.InsideTarget:
+		return "inside target"
+	case physio.AboveTarget:
+		if o.OnOxygen {
+			return "above target"
+		}
+	}
+	return c.levelWord()
+}
+
+// levelWord is the level without a target: on oxygen 60-79 is "borderline",
+// below 60 "low", below 45 "critically low"; on air the same words, with the
+// degree in the body.
+func (c *composer) levelWord() string {
+	o := c.a.Oxygenation
+	if pao2, ok := c.gas.Sample.Get(physio.PaO2); ok && o.SaturationSource != physio.SpO2 && c.a.Ranges.PaO2 {
+		switch {
+		case o.Scale == physio.DegreeUnknown:
+			return "can't say"
+		case pao2 < 45:
+			return "critically low"
+		case pao2 < 60:
+			return "low"
+		case o.Scale == physio.DegreeMild && o.OnOxygen:
+			return "borderline"
+		}
+	}
+	switch o.Scale {
+	case physio.DegreeAdequate:
+		return "adequate"
+	case physio.DegreeMild:
+		return "mildly low"
+	case physio.DegreeModerate:
+		return "low"
+	case physio.DegreeSevere:
+		return "critically low"
+	}
+	return "can't say"
+}

@@ -1,0 +1,293 @@
+package bot
+
+import (
+	"fmt"
+	"strings"
+
+	"galeward/physio"
+)
+
+// ventilation is the sentence of the first axis: level, course, efficiency.
+func (c *composer) ventilation() string {
+	if c.a.Blood == physio.Cord {
+		return ""
+	}
+	parts := []string{c.ventilationLevel()}
+	if course := c.courseSentence(); course != "" {
+		parts = append(parts, course)
+	}
+	if e := c.ventilationEfficiency(); e != "" {
+		parts = append(parts, e)
+	}
+	return "Ventilation: " + strings.Join(parts, " ")
+}
+
+func (c *composer) ventilationLevel() string {
+	v := c.a.Ventilation
+	switch v.Level {
+	case physio.LevelAdequate:
+		return c.adequateCO2()
+	case physio.LevelShortForNeed:
+		return fmt.Sprintf("PaCO2 %s is above what this metabolic acidosis needs (%s %s): short for the need%s.",
+			c.n.about(v.PaCO2.Value), c.needSpan(), c.n.unit(), c.borderlineNeed())
+	case physio.LevelHypoventilation:
+		return c.highCO2()
+	case physio.LevelHyperventilation:
+		return c.lowCO2()
+	}
+	return c.unknownCO2()
+}
+
+func (c *composer) needSpan() string {
+	n := c.a.AcidBase.NeedSpan
+	return c.n.between(n.Low, n.High)
+}
+
+func (c *composer) borderlineNeed() string {
+	if c.a.AcidBase.NeedBorderline {
+		return ", borderline"
+	}
+	return ""
+}
+
+func (c *composer) adequateCO2() string {
+	level := "level adequate"
+	if c.a.Ventilation.Borderline {
+		level = "level borderline (" + c.rangeWords() + ")"
+	}
+	if c.a.AcidBase.Need == physio.Matches && c.a.AcidBase.Primary == physio.MetabolicAcidosis {
+		return level + fmt.Sprintf(", and PaCO2 fits the metabolic side (%s %s).", c.needSpan(), c.n.unit())
+	}
+	if c.a.AcidBase.Need == physio.Beyond && c.a.AcidBase.Primary == physio.MetabolicAlkalosis {
+		return level + fmt.Sprintf(", but PaCO2 is below what this alkalosis expects (%s %s).", c.needSpan(), c.n.unit())
+	}
+	return level + "."
+}
+
+// rangeWords names the range that PaCO2 is judged by.
+func (c *composer) rangeWords() string {
+	r := c.a.Ranges
+	return "range " + c.n.between(r.PaCO2Low, r.PaCO2High) + " " + c.n.unit()
+}
+
+func (c *composer) highCO2() string {
+	v, ab := c.a.Ventilation, c.a.AcidBase
+	switch {
+	case v.Floor:
+		return "EtCO2 is a floor: PaCO2 is at least about that, so the level is inadequate."
+	case ab.Primary == physio.MetabolicAlkalosis && ab.Need == physio.Matches:
+		return fmt.Sprintf("PaCO2 above its range, as this metabolic alkalosis expects (%s %s).", c.needSpan(), c.n.unit())
+	case v.AtUsual:
+		return "high, at this patient's usual PaCO2."
+	case v.ChronicPattern:
+		return "high, chronic pattern" + c.limitWords() + "."
+	}
+	level := "inadequate"
+	if v.Borderline {
+		level = "borderline high"
+	}
+	return level + c.limitWords() + "."
+}
+
+// limitWords names the critical limit or, off the adult table, the range.
+func (c *composer) limitWords() string {
+	for _, q := range c.a.Critical {
+		if q == physio.PaCO2 {
+			return " (critical limit " + c.n.about(c.a.CriticalLimits.PaCO2High) + ")"
+		}
+	}
+	if c.a.Ventilation.Borderline || !plainAdult(c.a) {
+		return " (" + c.rangeWords() + ")"
+	}
+	return ""
+}
+
+// plainAdult says that the adult table at sea level was used.
+func plainAdult(a *physio.Assessment) bool {
+	return a.Ranges.PaCO2Low == 35 && a.Ranges.PaCO2High == 45
+}
+
+func (c *composer) lowCO2() string {
+	ab := c.a.AcidBase
+	if ab.Primary == physio.MetabolicAcidosis {
+		switch ab.Need {
+		case physio.Matches:
+			return fmt.Sprintf("PaCO2 is low as the metabolic acidosis needs (%s %s): level matches the need%s.", c.needSpan(), c.n.unit(), c.borderlineNeed())
+		case physio.Beyond:
+			return fmt.Sprintf("PaCO2 is lower than the metabolic acidosis needs (%s %s)%s.", c.needSpan(), c.n.unit(), c.borderlineNeed())
+		}
+	}
+	level := "PaCO2 below its range"
+	if c.a.Ventilation.Borderline {
+		level += ", borderline"
+	}
+	return level + " (" + c.n.between(c.a.Ranges.PaCO2Low, c.a.Ranges.PaCO2High) + "): more than adequate."
+}
+
+func (c *composer) unknownCO2() string {
+	switch c.a.Blood {
+	case physio.Venous, physio.CentralVenous, physio.MixedVenous:
+		if c.a.Ventilation.Screen {
+			return "a venous PCO2 below 45 mmHg makes arterial hypercapnia unlikely; the level itself can't be said."
+		}
+		return "can't say from venous blood: PCO2 only screens, arterial is some 6 mmHg lower, at times 20."
+	case physio.Intraosseous, physio.BloodUncertain:
+		return "can't say from this sample."
+	}
+	if c.a.Ventilation.Floor {
+		return "can't say: a usual EtCO2 excludes nothing about PaCO2."
+	}
+	return "can't say without PaCO2 or EtCO2."
+}
+
+// courseSentence is the time course, with what an acute change alone would
+// have done.
+func (c *composer) courseSentence() string {
+	ab := c.a.AcidBase
+	respiratory := ab.Primary == physio.RespiratoryAcidosis || ab.Primary == physio.RespiratoryAlkalosis
+	if !respiratory || c.a.Ventilation.Level == physio.LevelUnknown || c.a.Ventilation.Borderline && c.a.Problem == physio.ProblemNone {
+		return ""
+	}
+	acute, ok := c.a.Index("expected_ph_acute")
+	bracket := ""
+	if ok {
+		bracket = " (acute alone: pH about " + aboutPH(acute.Value) + ")"
+	}
+	switch ab.Course {
+	case physio.Acute:
+		return "Acute pattern" + bracket + "."
+	case physio.AcuteOnChronic:
+		if ab.DaysFit {
+			return "Acute on chronic" + bracket + "; a rise over days also fits."
+		}
+		return "Acute on chronic" + bracket + "."
+	case physio.Chronic:
+		if ab.Primary == physio.RespiratoryAlkalosis {
+			return "Chronic pattern."
+		}
+	case physio.CourseNotClear:
+		if c.a.Ranges.Responses && ab.Primary == physio.RespiratoryAlkalosis {
+			return "Days of low PaCO2, or acute with a metabolic acidosis: the gas alone can't tell."
+		}
+	}
+	return ""
+}
+
+func (c *composer) ventilationEfficiency() string {
+	v := c.a.Ventilation
+	switch c.a.Blood {
+	case physio.Arterial, physio.Capillary, physio.NoBlood:
+	default:
+		return ""
+	}
+	if v.Efficiency == physio.EfficiencyUnknown {
+		if c.a.Blood == physio.NoBlood && v.Level == physio.LevelUnknown {
+			return ""
+		}
+		return "Efficiency: can't say without " + c.lacking() + "."
+	}
+	ix, _ := c.a.Index(v.Basis)
+	return "Efficiency: " + c.indexPhrase(ix) + ": " + efficiencyWord[v.Efficiency] + "."
+}
+
+// lacking names the one value that would settle the efficiency: the minute
+// volume, or its missing half.
+func (c *composer) lacking() string {
+	s := &c.gas.Sample
+	rate := s.Has(physio.RR) || s.Has(physio.RRSet)
+	switch {
+	case rate && !s.Has(physio.VT) && !s.Has(physio.VE):
+		return "VT"
+	case s.Has(physio.VT) && !rate:
+		return "the rate"
+	}
+	return "VE"
+}
+
+// indexPhrase names an index with its value; a soft one as "about" and a
+// range.
+func (c *composer) indexPhrase(ix physio.Index) string {
+	name := basisWord[ix.Key]
+	if c.soft(ix) {
+		return name + " about " + c.indexRange(ix)
+	}
+	about := ""
+	if ix.Key == "vent_ratio" {
+		about = "about "
+	}
+	return name + " " + about + c.n.index(ix, ix.Value)
+}
+
+// soft says that an index rests on an estimated FiO2.
+func (c *composer) soft(ix physio.Index) bool {
+	if !c.a.Oxygen.Estimated {
+		return false
+	}
+	for _, q := range ix.Inputs {
+		if q == physio.FiO2 {
+			return true
+		}
+	}
+	return false
+}
+
+func (c *composer) indexRange(ix physio.Index) string {
+	low, high := c.n.index(ix, ix.Low), c.n.index(ix, ix.High)
+	if i := strings.LastIndexByte(low, ' '); i > 0 {
+		low = low[:i]
+	}
+	return low + "-" + high
+}
+
+// metabolic is the half-line of the metabolic side, when it changes the
+// meaning.
+func (c *composer) metabolic() string {
+	ab := c.a.AcidBase
+	if c.a.Blood == physio.Cord {
+		return ""
+	}
+	var parts []string
+	for _, p := range []physio.Process{physio.MetabolicAcidosis, physio.MetabolicAlkalosis} {
+		if ab.Is(p) {
+			parts = append(parts, c.metabolicProcess(p))
+		}
+	}
+	for _, p := range []physio.Process{physio.RespiratoryAcidosis, physio.RespiratoryAlkalosis} {
+		metabolicFirst := ab.Primary == physio.MetabolicAcidosis || ab.Primary == physio.MetabolicAlkalosis
+		if ab.Is(p) && metabolicFirst && c.a.Ventilation.Level != physio.LevelShortForNeed {
+			parts = append(parts, "a "+processWord[p]+" beside it")
+		}
+	}
+	if gap := c.gapWords(); gap != "" {
+		parts = append(parts, gap)
+	}
+	if len(parts) == 0 {
+		return ""
+	}
+	return "Metabolic side: " + strings.Join(parts, "; ") + "."
+}
+
+func (c *composer) metabolicProcess(p physio.Process) string {
+	word := processWord[p]
+	if c.a.AcidBase.Primary != p {
+		word = "also " + word
+	}
+	sbe, ok := c.a.Index("sbe")
+	if !ok {
+		return word
+	}
+	return word + ", SBE " + signed(sbe.Value) + " mmol/L"
+}
+
+func (c *composer) gapWords() string {
+	if c.a.AcidBase.Gap == physio.GapUnknown {
+		return ""
+	}
+	ix, ok := c.a.Index("anion_gap_corrected")
+	if !ok {
+		if ix, ok = c.a.Index("anion_gap"); !ok {
+			return ""
+		}
+	}
+	return basisWord[ix.Key] + " " + plain(ix.Value, 0) + ", " + string(c.a.AcidBase.Gap)
+}

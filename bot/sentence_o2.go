@@ -1,0 +1,229 @@
+package bot
+
+import (
+	"fmt"
+	"strings"
+
+	"galeward/physio"
+)
+
+// oxygenation is the sentence of the second axis: the level against the
+// target, the saturation at this pH, and the efficiency with what it was
+// reached on.
+func (c *composer) oxygenation() string {
+	if c.a.Blood == physio.Cord {
+		return ""
+	}
+	o := c.a.Oxygenation
+	if o.Level == physio.DegreeUnknown {
+		return "Oxygenation: " + c.unknownO2()
+	}
+	parts := []string{c.oxygenLevel()}
+	if e := c.oxygenEfficiency(); e != "" {
+		parts = append(parts, e)
+	}
+	if h := c.healthyAtPaCO2(); h != "" {
+		parts = append(parts, h)
+	}
+	if x := c.otherOxygenIndices(); x != "" {
+		parts = append(parts, x)
+	}
+	return "Oxygenation: " + strings.Join(parts, " ")
+}
+
+func (c *composer) unknownO2() string {
+	switch c.a.Blood {
+	case physio.Venous, physio.CentralVenous, physio.MixedVenous:
+		return "can't say: venous PO2 tells nothing of the lungs; SpO2 would."
+	case physio.Capillary:
+		return "can't say: capillary PO2 is not used; SpO2 would tell."
+	case physio.Intraosseous, physio.BloodUncertain:
+		return "can't say from this sample; SpO2 would tell."
+	}
+	if c.gas.Sample.Has(physio.PaO2) {
+		return "can't say here."
+	}
+	return "can't say without PaO2 or SpO2."
+}
+
+// oxygenLevel is the level in words, with the saturation and the oxygen.
+func (c *composer) oxygenLevel() string {
+	o := c.a.Oxygenation
+	var b strings.Builder
+	b.WriteString(c.oxygenWords())
+	if s := c.saturationWords(); s != "" {
+		b.WriteString(" (" + s + ")")
+	}
+	if o.Level == physio.DegreeAdequate && o.OnOxygen {
+		b.WriteString(c.onlyOn())
+	} else if c.a.Oxygen.Known && !o.OnOxygen {
+		b.WriteString(" on air")
+	}
+	b.WriteString(".")
+	return b.String()
+}
+
+func (c *composer) oxygenWords() string {
+	o := c.a.Oxygenation
+	if o.AgainstTarget != physio.NoTarget {
+		target := wholePercent(o.Target.Low) + "-" + wholePercent(o.Target.High) + " %"
+		return string(o.AgainstTarget) + " the target " + target + c.borderlineO2()
+	}
+	if o.ExpectedHere {
+		return "low, expected here (" + c.expectedWhy() + ")"
+	}
+	word := c.levelWord()
+	if word == "adequate" {
+		return "level adequate" + c.borderlineO2()
+	}
+	if word == "borderline" {
+		return "PaO2 60-79 on oxygen: borderline, no target set"
+	}
+	if !o.OnOxygen && c.a.Oxygen.Known && c.a.Ranges.PaO2 && o.Scale != physio.DegreeAdequate {
+		return word + ", " + string(o.Scale) + " on the scale for air at sea level" + c.borderlineO2()
+	}
+	return word + c.borderlineO2()
+}
+
+// expectedWhy names what explains a low PaO2.
+func (c *composer) expectedWhy() string {
+	if c.a.Altitude >= 1000 {
+		return "altitude"
+	}
+	return "age"
+}
+
+func (c *composer) borderlineO2() string {
+	if c.a.Oxygenation.Borderline {
+		return ", borderline"
+	}
+	return ""
+}
+
+func (c *composer) saturationWords() string {
+	o := c.a.Oxygenation
+	if o.Saturation.Value == 0 {
+		return ""
+	}
+	s := wholePercent(o.Saturation.Value) + " %"
+	switch o.SaturationSource {
+	case physio.SaO2:
+		return "SaO2 " + s + " measured"
+	case physio.SpO2:
+		return "SpO2 " + s
+	}
+	if ph, ok := c.gas.Sample.Get(physio.PHq); ok && (ph < 7.35 || ph > 7.45) {
+		return "SaO2 about " + s + " at this pH"
+	}
+	return "SaO2 about " + s
+}
+
+// onlyOn names the oxygen that buys an adequate level.
+func (c *composer) onlyOn() string {
+	o := c.a.Oxygen
+	if !o.Known {
+		return " on oxygen"
+	}
+	word := " on "
+	if c.a.Oxygenation.Efficiency == physio.Poor {
+		word = " only on "
+	}
+	if o.Estimated {
+		return word + "about " + wholePercent(o.FiO2.Low) + "-" + wholePercent(o.FiO2.High) + " %"
+	}
+	out := word + percent(o.FiO2.Value) + " %"
+	if peep, ok := c.gas.Sample.Get(physio.PEEP); ok && peep > 0 {
+		out += " and PEEP " + plain(peep, 0)
+	}
+	return out
+}
+
+func (c *composer) oxygenEfficiency() string {
+	o := c.a.Oxygenation
+	if c.gas.Sample.Circumstance.Has(physio.ECMO) {
+		return ""
+	}
+	if o.Efficiency == physio.EfficiencyUnknown {
+		switch {
+		case !c.a.Oxygen.Known:
+			return "Efficiency: can't say without the oxygen."
+		case o.SaturationSource == physio.SpO2 && o.Saturation.Value > 0.97:
+			return "Efficiency: can't say above SpO2 97 %."
+		case o.SaturationSource == physio.SpO2:
+			return "Efficiency: can't say without a PaO2."
+		}
+		return "Efficiency: can't say."
+	}
+	return c.transferPhrase() + ": " + efficiencyWord[o.Efficiency] + c.softWord() + "."
+}
+
+func (c *composer) softWord() string {
+	if c.a.Oxygenation.Soft {
+		return " (soft: FiO2 estimated)"
+	}
+	return ""
+}
+
+// transferPhrase prints the indices that the efficiency rests on: on air A-a
+// with its band, on oxygen P/F and a/A, without a PaO2 S/F.
+func (c *composer) transferPhrase() string {
+	switch c.a.Oxygenation.Basis {
+	case "aa":
+		ix, _ := c.a.Index("aa")
+		if band, ok := c.a.Index("aa_expected"); ok {
+			return fmt.Sprintf("%s (expected %s)", c.indexPhrase(ix), c.n.between(band.Low, band.High))
+		}
+		return c.indexPhrase(ix)
+	case "sf":
+		ix, _ := c.a.Index("sf")
+		return c.indexPhrase(ix)
+	}
+	var parts []string
+	if ix, ok := c.a.Index("pf"); ok {
+		parts = append(parts, c.indexPhrase(ix))
+	}
+	if ix, ok := c.a.Index("a_over_a"); ok {
+		parts = append(parts, c.indexPhrase(ix)+" (healthy: 0.75 or more)")
+	}
+	return strings.Join(parts, ", ")
+}
+
+// healthyAtPaCO2 keeps hypoventilation from being called a lung fault: what a
+// healthy lung would have at a high PaCO2.
+func (c *composer) healthyAtPaCO2() string {
+	h := c.a.Oxygenation.HealthyPaO2
+	p, ok := c.gas.Sample.Get(physio.PaCO2)
+	if !ok || h.Value <= 0 || p <= 50 || !c.gas.Sample.Has(physio.PaO2) {
+		return ""
+	}
+	return "A healthy lung at this PaCO2: PaO2 about " + c.n.about(h.Value) + "."
+}
+
+// otherOxygenIndices are indices that were asked for by what was typed: OI
+// where a mean airway pressure was, the rate index on high flow.
+func (c *composer) otherOxygenIndices() string {
+	var parts []string
+	for _, key := range []string{"oi", "osi"} {
+		if ix, ok := c.a.Index(key); ok {
+			parts = append(parts, c.indexPhrase(ix))
+			break
+		}
+	}
+	if ix, ok := c.a.Index("rox"); ok && c.gas.Sample.Device == physio.HighFlow {
+		parts = append(parts, c.indexPhrase(ix))
+	}
+	if ix, ok := c.a.Index("pf_altitude_corrected"); ok && c.a.Oxygenation.OnOxygen {
+		parts = append(parts, c.indexPhrase(ix))
+	}
+	if len(parts) == 0 {
+		return ""
+	}
+	return upperFirst(strings.Join(parts, ", ")) + "."
+}
+
+func upperFirst(s string) string {
+	if s == "" {
+		return s
+	}
+	return strings.ToUpper(s[:1]) + s[1:]
+}

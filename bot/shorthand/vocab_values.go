@@ -1,0 +1,81 @@
+package shorthand
+
+import "galeward/physio"
+
+func label(q physio.Quantity) entry     { return entry{sense: senseLabel, q: q} }
+func weakLabel(q physio.Quantity) entry { return entry{sense: senseLabel, q: q, weak: true} }
+
+// hydrogenWord is the one label whose number is of another kind than its
+// quantity: nmol/L of hydrogen ion for a pH.
+const hydrogenWord = "h+"
+
+// valueRows are the spellings of quantities. Data only. English-speaking
+// practice first, then spellings seen in other languages.
+var valueRows = []row{
+	{label(physio.PHq), "ph, pha, arterial ph, p h, ph value, ph wert, h+, hplus, h ion, ph:"},
+	{label(physio.PaCO2), "pco2, paco2, co2, pc02, pac02, c02, pco, p co2, pa co2, pcO2, carbon dioxide, carbs, pcos, pcoz, co two, pvco2, co2s"},
+	{label(physio.PaO2), "po2, pao2, o2, p02, pa02, 02, p o2, pa o2, oxygen tension, o two, ox, pvo2 sample"},
+	{label(physio.HCO3), "hco3, hc03, bic, bicarb, bicarbonate, bicarbs, hco, abic, ahco3, act bic, actual bicarb, actual bicarbonate, hco3a, hco3act, hco3 act, chco3, bik, bikarbonat, bicarbonato, bicar, hco3p, bi carb, hcos, hco3c, bc"},
+	{label(physio.StdHCO3), "sbic, sbc, std bic, std bicarb, stdhco3, std hco3, shco3, standard bicarb, standard bicarbonate, standard hco3, hco3std, hco3st, hco3 std, hco3 st, st bic, st bicarb, stand bic, stand bicarb, sb, standardbikarbonat, chco3st"},
+	{label(physio.TotalCO2), "tco2, total co2, totalco2, ttco2, ctco2, total carbon dioxide, chem co2, chemistry co2, serum co2, bmp co2"},
+	{label(physio.BE), "be, sbe, abe, base excess, base ex, bxs, bx, base xs, beecf, be ecf, beb, be b, base, b e, exceso de base, baseexzess, basenexzess, cbase, ebe, excess"},
+	{entry{sense: senseLabel, q: physio.BE, number: -1}, "bd, base def, base deficit, basedeficit, deficit, def, base d, bdef"},
+	{label(physio.SaO2), "sao2, sa02, sat, sats, so2, o2 sat, o2sat, o2 sats, o2sats, saturation, saturations, s02, hbo2, o2hb, satting, sattin, sating, fo2hb, so2c, satn, sättigung, sattigung, saturating, abg sat"},
+	{label(physio.SpO2), "spo2, sp02, spo, pulse ox, pulseox, pox, oximeter, sat probe, oximetry, spo2 now, pulse oximetry, pulse oximeter, spo2s"},
+	{label(physio.SpO2Pre), "pre, preductal, preductal sat, pre sat, preductal spo2, pre spo2, pre duct, preduct, preductal sats, pre ductal"},
+	{label(physio.SpO2Post), "post, postductal, postductal sat, post sat, postductal spo2, post spo2, post duct, postduct, postductal sats, post ductal"},
+	{label(physio.FiO2), "fio2, fi02, fi, fi o2, fio, fo2, f1o2, inspired o2, inspired oxygen, fraction, fdo2, fico2, eff fio2, fio2s, fi0"},
+	{label(physio.RR), "rr, resp rate, respiratory rate, resp, resps, respiratory, breathing, breathing at, rr total, total rr, total rate, spont rr, rr tot, rrtot, resp. rate, af, freq, patient rate, pt rate, rr spont, measured rr, rrt, spontaneous rate, spont rate, frequency, f tot, ftot, breathing rate, actual rate, actual rr, fr"},
+	{label(physio.RRSet), "set rate, set rr, rr set, rate set, rrset, backup, backup rate, bur, back up rate, mandatory rate, vent rate, set f, fset, f set, bu rate, b/u rate, backup rr, ventilator rate, br"},
+	{entry{sense: senseLabel, q: physio.RR, weak: true}, "rate, f, r, bpm, b/min"},
+	{label(physio.VT), "vt, tv, tidal volume, tidal, vte, vti, exhaled vt, tidal vol, vtexp, vte exp, tidals, tvs, evt, vol, volume, ve tidal, exp vt, vt exp, vt set, set vt, vt e, exhaled tv, expired vt, insp vt, tve, spont vt, vtspont, set tv, tv set, vtset"},
+	{label(physio.VE), "ve, mv, minute ventilation, minute volume, min vent, min vol, minute vent, ve tot, vetot, total ve, minvol, amv, mve, min ventilation, minute vol, minvent, ve total, vmin, emv"},
+	{label(physio.PEEP), "peep, set peep, peep of, pep, total peep, ppep, peeps, eep"},
+	{label(physio.AutoPEEP), "autopeep, auto peep, peepi, intrinsic peep, ipeep, peep i, air trapping, auto-peep, peepauto, autopep, occult peep"},
+	{label(physio.Pplat), "pplat, plat, plateau, plateau pressure, plats, p plat, pplateau, platpressure, platp, pl pressure, plt pressure, pplats"},
+	{label(physio.PIP), "pip, peak, ppeak, peak pressure, peak inspiratory pressure, peaks, p peak, paw peak, pmax, ppk, pawpeak, peak airway pressure, pips"},
+	{label(physio.Pmean), "mpaw, pmean, mean airway pressure, mean airway, mean paw, p mean, paw, map paw, pawm, mnaw, paw mean, pmaw, mean air way pressure, mawp, airway map"},
+	{entry{sense: senseMean, q: physio.Pmean}, "map, mean pressure"},
+	{label(physio.PHigh), "phigh, p high, phi, p hi, p-hi, pressure high"},
+	{label(physio.PLow), "plow, p low, plo, p lo, pressure low"},
+	{label(physio.THigh), "thigh, t high, thi, t hi, time high"},
+	{label(physio.TLow), "tlow, t low, tlo, t lo, time low"},
+	{label(physio.Hertz), "hz, hertz, freq hz"},
+	{label(physio.Amplitude), "amp, amplitude, delta p, deltap, dp hfov, power amp, delta pressure, amps"},
+	{label(physio.IPAP), "ipap, i pap, inspiratory pressure"},
+	{label(physio.EPAP), "epap, e pap, expiratory pressure"},
+	{label(physio.EtCO2), "etco2, et co2, end tidal, end tidal co2, endtidal, petco2, etc02, et c02, capno, capnography, etco, end tidals, etco2s, peak etco2, waveform capno, pet co2, end-tidal, capnograph, etcos"},
+	{label(physio.TcCO2), "tcco2, tcpco2, transcutaneous co2, tc co2, ptcco2, tcm co2, tosca, tcm, tc pco2, tcpc02, tcc02, transcut co2, ptcco"},
+	{label(physio.TcO2), "tco2 oxygen, tcpo2, transcutaneous o2, tc o2, ptco2, tc po2, tcpo, tcp02, transcut o2"},
+	{entry{sense: senseTcO}, "tc, transcutaneous, tcs"},
+	{label(physio.PeCO2), "peco2, mixed expired co2, expired co2, pe co2, pēco2, pebarco2, peco, mixed expired pco2"},
+	{label(physio.VDVT), "vdvt, dead space, deadspace, dead space fraction, vd vt, dead space ratio"},
+	{label(physio.Hb), "hb, hgb, haemoglobin, hemoglobin, cthb, thb, hemoglobina, hg, ctHb, h b"},
+	{label(physio.COHb), "cohb, cohgb, carboxyhaemoglobin, carboxyhemoglobin, carboxy, fcohb, co hb, co level, carboxyhb"},
+	{label(physio.MetHb), "methb, methgb, methaemoglobin, methemoglobin, fmethb, met hb, met, mthb"},
+	{label(physio.Na), "na, sodium, na+"},
+	{label(physio.K), "k, potassium, k+, pot"},
+	{label(physio.Cl), "cl, chloride, cl-, chlor, chlorid"},
+	{label(physio.Lactate), "lac, lactate, lact, laktat, lactic acid, lactic, lactato, clac, la"},
+	{label(physio.Albumin), "alb, albumin"},
+	{label(physio.Glucose), "glu, gluc, glucose, bsl, bgl, bg, bm, blood sugar, sugar, cglu, accucheck, glc"},
+	{label(physio.Phosphate), "phos, phosphate, po4, phosphorus"},
+	{label(physio.Magnesium), "mg2+, mag, magnesium"},
+	{label(physio.Calcium), "ica, ica2+, ionised ca, ionized ca, ionised calcium, ionized calcium, ca2+, ca++, ical, i ca"},
+	{label(physio.Temp), "temp, temperature, tmp, body temp, core temp, temp of"},
+	{weakLabel(physio.Temp), "t"},
+	{label(physio.Age), "age, aged, ages"},
+	{label(physio.Gestation), "ga, gestation, gestational age, cga, pma, corrected ga"},
+	{label(physio.Height), "ht, height, hgt, tall, length"},
+	{label(physio.Weight), "wt, weight, wgt, actual weight, abw, bw, birth weight, birthweight, actual wt"},
+	{label(physio.PBW), "pbw, ibw, predicted weight, predicted body weight, ideal body weight, ideal weight"},
+	{label(physio.PB), "pb, baro, barometric, barometric pressure, barometer, atm pressure, pbar, patm, baro pressure"},
+	{label(physio.Altitude), "altitude, alt, elevation, elev"},
+	{label(physio.SvO2), "svo2, mixed venous sat, mixed venous saturation, sv02, smvo2"},
+	{label(physio.ScvO2), "scvo2, central venous sat, central venous saturation, scv02, cvo2"},
+	{label(physio.PvO2), "pvo2, pv02, venous po2, mixed venous po2"},
+	{label(physio.PvCO2), "pvco2, pvc02, venous pco2, mixed venous pco2, venous co2"},
+	{label(physio.CardiacOutput), "cardiac output, qt, c.o, cardiac out"},
+	{label(physio.OxygenFlow), "flow, flow rate, oxygen flow, o2 flow, gas flow"},
+	{label(physio.VTPerKg), "vt per kg, vt kg, tv per kg"},
+}

@@ -1,0 +1,165 @@
+//go:build unix
+
+package storetest
+
+import (
+	"bufio"
+	"fmt"
+	"net"
+	"os"
+	"os/exec"
+	"path/filepath"
+	"strings"
+	"sync"
+	"syscall"
+	"testing"
+	"time"
+)
+
+// Server is a Redis server of a test's own, with its data in a folder of the
+// test. It ends with the test.
+type Server struct {
+	t    testing.TB
+	args []string
+	dir  string
+	port string
+
+	mu   sync.Mutex
+	cmd  *exec.Cmd
+	ends chan struct{} // closed when cmd has ended
+}
+
+// Redis starts redis-server with further arguments of its command line. The
+// append-only file is on, so that Restart finds what was acknowledged.
+func Redis(t testing.TB, args ...string) *Server {
+	t.Helper()
+	if _, err := exec.LookPath("redis-server"); err != nil {
+		t.Fatal("this test needs redis-server in the PATH; on Debian: apt-get install -y --no-install-recommends redis-server")
+	}
+	s := &Server{t: t, args: args, dir: t.TempDir()}
+	t.Cleanup(s.Kill)
+	var err error
+	for range 5 { // another program may take the port that was free
+		s.port = freePort(t)
+		if err = s.start(); err == nil {
+			return s
+		}
+	}
+	t.Fatal(err)
+	return nil
+}
+
+// Addr is the host and port.
+func (s *Server) Addr() string { return net.JoinHostPort("127.0.0.1", s.port) }
+
+// Port is the port alone, for the command line of a replica or a sentinel.
+func (s *Server) Port() string { return s.port }
+
+// Kill ends the server as a crash would, without a word to its clients.
+func (s *Server) Kill() {
+	s.mu.Lock()
+	defer s.mu.Unlock()
+	if s.cmd == nil {
+		return
+	}
+	_ = s.cmd.Process.Kill() // an ended one can't be killed, and need not
+	<-s.ends
+	s.cmd = nil
+}
+
+// Stop makes the server hang: it keeps its connections and answers nothing.
+func (s *Server) Stop() { s.signal(syscall.SIGSTOP) }
+
+// Cont lets a stopped server go on.
+func (s *Server) Cont() { s.signal(syscall.SIGCONT) }
+
+// Restart starts a killed server on the same port with the same data.
+func (s *Server) Restart() {
+	s.t.Helper()
+	s.Kill()
+	if err := s.start(); err != nil {
+		s.t.Fatal(err)
+	}
+}
+
+// Raw sends one command, its words separated by spaces, on a connection of its
+// own and returns the first line of the reply.
+func (s *Server) Raw(command string) string {
+	s.t.Helper()
+	line, err := ask(s.Addr(), command)
+	if err != nil {
+		s.t.Fatalf("redis-server: %v", err)
+	}
+	return line
+}
+
+func (s *Server) signal(sig syscall.Signal) {
+	s.t.Helper()
+	s.mu.Lock()
+	defer s.mu.Unlock()
+	if err := s.cmd.Process.Signal(sig); err != nil {
+		s.t.Fatalf("redis-server: %v", err)
+	}
+}
+
+func (s *Server) start() error {
+	args := append([]string{"--port", s.port, "--bind", "127.0.0.1", "--dir", s.dir, "--save", "",
+		"--appendonly", "yes", "--logfile", filepath.Join(s.dir, "log")}, s.args...)
+	cmd := exec.Command("redis-server", args...)
+	if err := cmd.Start(); err != nil {
+		return err
+	}
+	ends := make(chan struct{})
+	go func() { _ = cmd.Wait(); close(ends) }() // how it ended is in its log
+	s.mu.Lock()
+	s.cmd, s.ends = cmd, ends
+	s.mu.Unlock()
+	return s.ready(ends)
+}
+
+// ready waits until the server answers; one that wants a password answers too.
+func (s *Server) ready(ends <-chan struct{}) error {
+	for deadline := time.Now().Add(10 * time.Second); time.Now().Before(deadline); {
+		line, err := ask(s.Addr(), "PING")
+		if err == nil && !strings.HasPrefix(line, "-LOADING") {
+			return nil
+		}
+		select {
+		case <-ends:
+			log, _ := os.ReadFile(filepath.Join(s.dir, "log"))
+			return fmt.Errorf("redis-server ended at its start: %s", log)
+		case <-time.After(10 * time.Millisecond):
+		}
+	}
+	return fmt.Errorf("redis-server on port %s does not answer", s.port)
+}
+
+func ask(addr, command string) (string, error) {
+	c, err := net.DialTimeout("tcp", addr, time.Second)
+	if err != nil {
+		return "", err
+	}
+	defer c.Close()
+	if err := c.SetDeadline(time.Now().Add(2 * time.Second)); err != nil {
+		return "", err
+	}
+	if _, err := fmt.Fprintf(c, "%s\r\n", command); err != nil {
+		return "", err
+	}
+	line, err := bufio.NewReader(c).ReadString('\n')
+	return strings.TrimSpace(line), err
+}
+
+func freePort(t testing.TB) string {
+	t.Helper()
+	l, err := net.Listen("tcp", "127.0.0.1:0")
+	if err != nil {
+		t.Fatal(err)
+	}
+	defer l.Close()
+	_, port, err := net.SplitHostPort(l.Addr().String())
+	if err != nil {
+		t.Fatal(err)
+	}
+	return port
+}

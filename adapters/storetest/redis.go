@@ -93,6 +93,15 @@ func (s *Server) Raw(command string) string {
 	return line
 }
 
+// Obstruct puts a folder where the server would write a file of that name in
+// its data folder.
+func (s *Server) Obstruct(name string) {
+	s.t.Helper()
+	if err := os.MkdirAll(filepath.Join(s.dir, name, "full"), 0o700); err != nil {
+		s.t.Fatal(err)
+	}
+}
+
 func (s *Server) signal(sig syscall.Signal) {
 	s.t.Helper()
 	s.mu.Lock()

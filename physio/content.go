@@ -19,14 +19,27 @@ var (
 // solubilityO2 is 0.0105 mmol/L/kPa (Siggaard-Andersen 1984) in mL/dL/mmHg.
 const solubilityO2 = 0.0031
 
-const (
-	molarVolume   = 22.394  // L/mol of oxygen at STPD
-	tetramerGrams = 64458.0 // g/mol of haemoglobin
-)
+// molarVolume is that of oxygen at STPD, L/mol.
+const molarVolume = 22.394
+
+// HaemoglobinMolar holds the molar constants of the theoretical capacity.
+type HaemoglobinMolar struct {
+	MolarVolume float64 // of oxygen at STPD, mL/mol: 22394
+	Tetramer    float64 // of haemoglobin, g/mol: 64458
+}
 
 // TheoreticalCapacity gives the oxygen that a gram of fully active haemoglobin
-// binds, in mL: 1.39.
-func TheoreticalCapacity() float64 { return 4 * molarVolume * 1000 / tetramerGrams } // Dijkhuizen 1977
+// binds, in mL: four molecules a tetramer, 1.39.
+func TheoreticalCapacity(m HaemoglobinMolar) (float64, error) {
+	err := check(
+		given{name: "molar volume", v: m.MolarVolume, low: 22000, high: 23000},
+		given{name: "mass of haemoglobin", v: m.Tetramer, low: 60000, high: 70000},
+	)
+	if err != nil {
+		return 0, err
+	}
+	return 4 * m.MolarVolume / m.Tetramer, nil // Dijkhuizen 1977
+}
 
 // ActiveFraction gives the part of the haemoglobin that a measured capacity
 // shows to be active.

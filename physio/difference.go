@@ -97,12 +97,17 @@ func pfRatio(pao2, fio2 float64) float64 { return pao2 / fio2 } // Horovitz 1974
 
 // PFAtAltitude gives P/F x PB/760, as the Berlin definition asks above 1000 m.
 // Experts differ whether it should be used: show it beside the raw ratio.
-func PFAtAltitude(pf, pb Pressure) (Pressure, error) {
-	err := check(given{name: "P/F", v: pf.MmHg(), low: 10, high: 1000}, pbAbove(pb, waterAt37))
+func PFAtAltitude(at PFAt) (Pressure, error) {
+	err := check(given{name: "P/F", v: at.PF.MmHg(), low: 10, high: 1000}, pbAbove(at.PB, waterAt37))
 	if err != nil {
 		return 0, err
 	}
-	return MmHg(pfAtAltitude(pf.MmHg(), pb.MmHg())), nil
+	return MmHg(pfAtAltitude(at.PF.MmHg(), at.PB.MmHg())), nil
+}
+
+// PFAt is a P/F with the barometric pressure it was found at.
+type PFAt struct {
+	PF, PB Pressure
 }
 
 func pfAtAltitude(pf, pb float64) float64 { return pf * pb / standardPB } // Ranieri 2012 (Berlin), footnote

@@ -35,12 +35,12 @@ func (l Line) At(v float64) (float64, error) {
 
 // Published slopes of bicarbonate in mmol/L per mmHg of PaCO2.
 const (
-	SlopeAcuteUp       = acuteUpSlope
-	SlopeAcuteDown     = acuteDownSlope
-	SlopeChronicBoston = chronicUpLow
-	SlopeChronicTen4   = 0.4 // 4 per 10, common practice in Australia and in hypocapnia
-	SlopeChronicMartin = chronicUpHigh
-	SlopeChronicDown   = chronicDownSlope
+	SlopeAcuteUp        = acuteUpSlope
+	SlopeAcuteDown      = acuteDownSlope
+	SlopeChronicBoston  = chronicUpLow
+	SlopeChronicTen4    = 0.4 // 4 per 10, common practice in Australia and in hypocapnia
+	SlopeChronicMartinu = chronicUpHigh
+	SlopeChronicDown    = chronicDownSlope
 )
 
 // BicarbonateBySlope gives the bicarbonate in mmol/L that one published slope

@@ -4,6 +4,7 @@ import (
 	"crypto/sha256"
 	"encoding/hex"
 	"errors"
+	"strings"
 
 	"galeward/bot"
 
@@ -51,11 +52,10 @@ func (a *Adapter) translateInteraction(c slackapi.InteractionCallback) (asked, b
 		return asked{}, false
 	}
 	e := bot.Event{
-		Kind:     bot.Pressed,
-		Delivery: "press:" + or(c.TriggerID, channel+":"+message+":"+press.ActionTs+":"+c.User.ID),
-		Message:  message,
-		Where: bot.Place{Platform: platform, Workspace: c.Team.ID, Channel: channel,
-			Thread: or(c.Message.ThreadTimestamp, c.Container.ThreadTs)},
+		Kind:      bot.Pressed,
+		Delivery:  "press:" + or(c.TriggerID, channel+":"+message+":"+press.ActionTs+":"+c.User.ID),
+		Message:   message,
+		Where:     bot.Place{Platform: platform, Workspace: c.Team.ID, Channel: channel, Thread: threadOf(c, press)},
 		User:      c.User.ID,
 		Token:     press.Value,
 		At:        a.now(),
@@ -64,7 +64,14 @@ func (a *Adapter) translateInteraction(c slackapi.InteractionCallback) (asked, b
 		Can:       canMessage,
 	}
 	return asked{event: e, hook: a.newHook(c.ResponseURL, e.At), pressed: ref(channel, message),
-		threaded: e.Where.Thread != "", how: "button"}, true
+		threaded: or(c.Message.ThreadTimestamp, c.Container.ThreadTs) != "", how: "button"}, true
+}
+
+func threadOf(c slackapi.InteractionCallback, press *slackapi.BlockAction) string {
+	if thread, ok := strings.CutPrefix(press.BlockID, threadMark); ok {
+		return thread
+	}
+	return or(c.Message.ThreadTimestamp, c.Container.ThreadTs)
 }
 
 // private asks the bot before the first acknowledgement. Should that fail, the

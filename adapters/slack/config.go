@@ -53,7 +53,7 @@ const (
 	DefaultPace      = time.Second
 	DefaultBusy      = "Too many questions at once: this one was not read. Ask again in a minute."
 
-	defaultWorkers      = 64
+	defaultWorkers      = 128
 	defaultQueue        = 16384
 	defaultChannelQueue = 256
 

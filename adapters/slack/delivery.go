@@ -49,7 +49,7 @@ func (w *way) Deliver(ctx context.Context, post bot.Post) (bot.Ref, error) {
 		return "", nil
 	}
 	n := 0
-	made, err := w.send(ctx, post.Reply, maxMessage, func(m message) (bot.Ref, error) {
+	made, err := w.send(ctx, post.Reply, post.To.Thread, maxMessage, func(m message) (bot.Ref, error) {
 		n++
 		if n == 1 && post.Amends != "" {
 			if made, err := w.amend(ctx, post, m); !gone(err) {
@@ -67,12 +67,12 @@ func (w *way) Deliver(ctx context.Context, post bot.Post) (bot.Ref, error) {
 // send makes the messages of a reply one after the other. A message that Slack
 // refuses for its size or its blocks is split in two and, at last, sent as bare
 // text: a reply is never cut to please a limit.
-func (w *way) send(ctx context.Context, r reply.Reply, limit int, one func(message) (bot.Ref, error)) (first bot.Ref, err error) {
+func (w *way) send(ctx context.Context, r reply.Reply, thread string, limit int, one func(message) (bot.Ref, error)) (first bot.Ref, err error) {
 	for _, part := range parts(r, limit) {
-		m := render(part)
+		m := render(part, thread)
 		made, err := one(m)
 		if tooBig(err) && limit > smallest {
-			made, err = w.send(ctx, part, min(limit, size(part))/2+1, one)
+			made, err = w.send(ctx, part, thread, min(limit, size(part))/2+1, one)
 		} else if tooBig(err) {
 			made, err = one(message{text: m.text})
 		}

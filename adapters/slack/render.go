@@ -32,16 +32,18 @@ type message struct {
 // first, and what may not is spread over further messages, never cut.
 func parts(r reply.Reply, limit int) []reply.Reply {
 	r = r.Fit(limit, size)
-	r = r.Fit(maxBlocks, count)
 	var out []reply.Reply
 	var part reply.Reply
+	room := limit
 	for _, b := range pieces(r.Blocks, limit) {
-		next := reply.Reply{Blocks: append(part.Blocks[:len(part.Blocks):len(part.Blocks)], b)}
-		if len(part.Blocks) > 0 && (size(next) > limit || count(next) >= maxBlocks) {
+		need := width(escape(b.Text)) + 1
+		// One block is left for the buttons.
+		if len(part.Blocks) > 0 && (need > room || len(part.Blocks) == maxBlocks-1) {
 			out = append(out, part)
-			next = reply.Reply{Blocks: []reply.Block{b}}
+			part, room = reply.Reply{}, limit
 		}
-		part = next
+		part.Blocks = append(part.Blocks, b)
+		room -= need
 	}
 	part.Buttons = r.Buttons // beside the question, which stands last
 	return append(out, part)
@@ -68,11 +70,10 @@ func size(r reply.Reply) int {
 	return n
 }
 
-func count(r reply.Reply) int { return len(render(r).blocks) }
-
 // render lays out a reply that parts has fitted. All text is plain text
-// objects: Slack reads no mention, link or formatting in them.
-func render(r reply.Reply) message {
+// objects: Slack reads no mention, link or formatting in them. thread is where
+// the question stands; see actions.
+func render(r reply.Reply, thread string) message {
 	m := message{text: escape(r.Text())}
 	for i := 0; i < len(r.Blocks); i++ {
 		b := r.Blocks[i]
@@ -82,7 +83,7 @@ func render(r reply.Reply) message {
 		}
 		m.blocks = append(m.blocks, block(b.Kind, text, len(m.blocks) == 0))
 	}
-	if row := actions(r.Buttons); row != nil {
+	if row := actions(r.Buttons, thread); row != nil {
 		m.blocks = append(m.blocks, row)
 	}
 	return m
@@ -122,7 +123,13 @@ func object(text string) *slackapi.TextBlockObject {
 	return slackapi.NewTextBlockObject(slackapi.PlainTextType, text, false, false)
 }
 
-func actions(buttons []reply.Button) slackapi.Block {
+// threadMark begins the id of a block of buttons that belongs to a thread.
+const threadMark = "thread:"
+
+// actions is the row of buttons. Its id carries the thread of the question: a
+// private message under a question without replies stands outside the thread,
+// and the press of its button is to find back.
+func actions(buttons []reply.Button, thread string) slackapi.Block {
 	var row []slackapi.BlockElement
 	for i, b := range buttons {
 		if len(row) == maxButtons || width(b.Token) > maxValue {
@@ -133,5 +140,9 @@ func actions(buttons []reply.Button) slackapi.Block {
 	if row == nil {
 		return nil
 	}
-	return slackapi.NewActionBlock("", row...)
+	id := ""
+	if thread != "" {
+		id = threadMark + thread
+	}
+	return slackapi.NewActionBlock(id, row...)
 }

@@ -94,7 +94,7 @@ func chop(text string, limit int) []string {
 				space = i
 			}
 		}
-		if space > end/2 {
+		if space >= end/2 && space > 0 {
 			end = space
 		}
 		pieces = append(pieces, strings.TrimRight(text[:end], " \n"))

@@ -80,7 +80,7 @@ type Post struct {
 }
 
 // Button is a button that a post shows.
-type Button struct{ ActionID, Label, Value string }
+type Button struct{ BlockID, ActionID, Label, Value string }
 
 // Fault makes one call fail. The zero value of a field means that this does
 // not happen.

@@ -26,6 +26,7 @@ type Block struct {
 	Type     string    `json:"type"`
 	Text     *Object   `json:"text,omitempty"`
 	Elements []Element `json:"elements,omitempty"`
+	ID       string    `json:"block_id,omitempty"`
 	Expand   bool      `json:"expand,omitempty"`
 }
 
@@ -133,7 +134,7 @@ func (f *Fake) context(p *Post, b Block) (lines []string) {
 }
 
 func (f *Fake) actions(p *Post, b Block) (lines []string) {
-	if len(b.Elements) == 0 || len(b.Elements) > maxButtons {
+	if len(b.Elements) == 0 || len(b.Elements) > maxButtons || len(b.ID) > maxID {
 		f.violate("%s: %d elements in an actions block", p.Route, len(b.Elements))
 	}
 	seen := map[string]bool{}
@@ -145,7 +146,7 @@ func (f *Fake) actions(p *Post, b Block) (lines []string) {
 			f.violate("%s: button with a bad type, value or action id", p.Route)
 		}
 		seen[e.ActionID] = true
-		p.Buttons = append(p.Buttons, Button{e.ActionID, label.Text, e.Value})
+		p.Buttons = append(p.Buttons, Button{b.ID, e.ActionID, label.Text, e.Value})
 	}
 	return lines
 }

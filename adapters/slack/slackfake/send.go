@@ -230,7 +230,7 @@ func (f *Fake) Press(p Post, label, user string) Ack {
 			"user": answer{"id": user}, "channel": answer{"id": p.Channel}, "response_url": f.server.URL + "/commands/" + id,
 			"container": answer{"type": "message", "message_ts": ts, "thread_ts": p.Thread, "channel_id": p.Channel, "is_ephemeral": p.For != ""},
 			"message":   answer{"ts": ts, "thread_ts": p.Thread, "bot_id": BotID},
-			"actions":   []answer{{"type": "button", "action_id": b.ActionID, "block_id": "b1", "value": b.Value, "action_ts": f.NewTS()}}}
+			"actions":   []answer{{"type": "button", "action_id": b.ActionID, "block_id": either(b.BlockID, "b1"), "value": b.Value, "action_ts": f.NewTS()}}}
 		return f.Interact(payload, Wire{})
 	}
 	return Ack{Err: fmt.Errorf("no button %q below %q", label, p.Shown)}

@@ -92,9 +92,13 @@ func ours(err error) bool {
 		errors.Is(err, errForeign) || errors.Is(err, errReply) || errors.Is(err, errSecret)
 }
 
-// stale says whether a connection led to a server that has handed over: it
-// did nothing, and a new connection may lead to the right one.
-func stale(err error) bool { return serverCode(err) == "READONLY" }
+// turnedAway says whether a server did nothing because it is handing over: to
+// another that takes its place (a new connection may lead there), or a part of
+// a cluster's keys to another node, between which a call can't be split.
+func turnedAway(err error) bool {
+	code := serverCode(err)
+	return code == "READONLY" || code == "TRYAGAIN"
+}
 
 // moved says whether a node of a cluster sent the call elsewhere.
 func moved(err error) bool {

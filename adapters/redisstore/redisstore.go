@@ -18,6 +18,7 @@ package redisstore
 import (
 	"context"
 	"fmt"
+	"time"
 
 	"github.com/redis/go-redis/v9"
 	"github.com/redis/go-redis/v9/logging"
@@ -86,13 +87,33 @@ func (s *Store) Do(ctx context.Context, partition string, ops ...store.Op) ([]st
 	}
 	c := newCall(s.o.Prefix, partition, ops)
 	began := s.pause.now()
-	r, err := s.send(ctx, c, false)
-	if ctx.Err() == nil && (lost(err) && c.repeatable() || stale(err)) {
-		r, err = s.send(ctx, c, lost(err))
-	}
+	r, err := s.ask(ctx, c)
 	s.pause.note(err, s.pause.now()-began >= s.o.Timeout/2)
 	if err != nil {
 		return nil, fault(ctx, err)
 	}
 	return c.outcome(r)
+}
+
+// A call that was turned away is given again so often, so far apart.
+const (
+	turns    = 4
+	turnWait = 25 * time.Millisecond
+)
+
+// ask sends the call, and sends it again where that is harmless and helps.
+func (s *Store) ask(ctx context.Context, c *call) (reply, error) {
+	r, err := s.send(ctx, c, false)
+	for turn := 0; turn < turns && turnedAway(err); turn++ {
+		select {
+		case <-ctx.Done():
+			return r, err
+		case <-time.After(turnWait):
+			r, err = s.send(ctx, c, false)
+		}
+	}
+	if lost(err) && c.repeatable() && ctx.Err() == nil {
+		r, err = s.send(ctx, c, true)
+	}
+	return r, err
 }

@@ -97,6 +97,7 @@ func TestContract(t *testing.T) {
 }
 
 func TestContractOnACluster(t *testing.T) {
+	t.Parallel() // a cluster takes seconds to form
 	server := storetest.Redis(t, "--cluster-enabled", "yes")
 	oneNode(t, server)
 	o := on(server)

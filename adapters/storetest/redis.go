@@ -5,10 +5,13 @@ package storetest
 import (
 	"bufio"
 	"fmt"
+	"io"
 	"net"
 	"os"
 	"os/exec"
 	"path/filepath"
+	"slices"
+	"strconv"
 	"strings"
 	"sync"
 	"syscall"
@@ -36,16 +39,31 @@ func Redis(t testing.TB, args ...string) *Server {
 	if _, err := exec.LookPath("redis-server"); err != nil {
 		t.Fatal("this test needs redis-server in the PATH; on Debian: apt-get install -y --no-install-recommends redis-server")
 	}
-	s := &Server{t: t, args: args, dir: t.TempDir()}
-	t.Cleanup(s.Kill)
+	s := &Server{t: t, dir: t.TempDir()}
+	s.args = append([]string{"--bind", "127.0.0.1", "--dir", s.dir, "--save", "", "--appendonly", "yes",
+		"--repl-diskless-sync-delay", "0"}, args...)
+	return s.first()
+}
+
+// Sentinel starts a sentinel with a configuration file, which it rewrites.
+func Sentinel(t testing.TB, conf string) *Server {
+	t.Helper()
+	s := &Server{t: t, dir: t.TempDir(), args: []string{conf, "--sentinel", "--bind", "127.0.0.1"}}
+	return s.first()
+}
+
+// first starts a server on a port that is free.
+func (s *Server) first() *Server {
+	s.t.Helper()
+	s.t.Cleanup(s.Kill)
 	var err error
 	for range 5 { // another program may take the port that was free
-		s.port = freePort(t)
+		s.port = FreePort(s.t)
 		if err = s.start(); err == nil {
 			return s
 		}
 	}
-	t.Fatal(err)
+	s.t.Fatal(err)
 	return nil
 }
 
@@ -83,14 +101,24 @@ func (s *Server) Restart() {
 }
 
 // Raw sends one command, its words separated by spaces, on a connection of its
-// own and returns the first line of the reply.
+// own and returns the first line of the reply as the protocol has it.
 func (s *Server) Raw(command string) string {
 	s.t.Helper()
-	line, err := ask(s.Addr(), command)
+	line, _, err := ask(s.Addr(), command)
 	if err != nil {
 		s.t.Fatalf("redis-server: %v", err)
 	}
 	return line
+}
+
+// Ask is Raw for a command whose reply is one text, which it returns.
+func (s *Server) Ask(command string) string {
+	s.t.Helper()
+	line, text, err := ask(s.Addr(), command)
+	if err != nil || !strings.HasPrefix(line, "$") {
+		s.t.Fatalf("redis-server: %s, error %v", line, err)
+	}
+	return text
 }
 
 // Obstruct puts a folder where the server would write a file of that name in
@@ -112,8 +140,7 @@ func (s *Server) signal(sig syscall.Signal) {
 }
 
 func (s *Server) start() error {
-	args := append([]string{"--port", s.port, "--bind", "127.0.0.1", "--dir", s.dir, "--save", "",
-		"--appendonly", "yes", "--logfile", filepath.Join(s.dir, "log")}, s.args...)
+	args := append(slices.Clone(s.args), "--port", s.port, "--logfile", filepath.Join(s.dir, "log"))
 	cmd := exec.Command("redis-server", args...)
 	if err := cmd.Start(); err != nil {
 		return err
@@ -129,7 +156,7 @@ func (s *Server) start() error {
 // ready waits until the server answers; one that wants a password answers too.
 func (s *Server) ready(ends <-chan struct{}) error {
 	for deadline := time.Now().Add(10 * time.Second); time.Now().Before(deadline); {
-		line, err := ask(s.Addr(), "PING")
+		line, _, err := ask(s.Addr(), "PING")
 		if err == nil && !strings.HasPrefix(line, "-LOADING") {
 			return nil
 		}
@@ -143,23 +170,37 @@ func (s *Server) ready(ends <-chan struct{}) error {
 	return fmt.Errorf("redis-server on port %s does not answer", s.port)
 }
 
-func ask(addr, command string) (string, error) {
+// ask sends a command and reads the first line of the reply, and the text that
+// follows where the line announces one.
+func ask(addr, command string) (line, text string, err error) {
 	c, err := net.DialTimeout("tcp", addr, time.Second)
 	if err != nil {
-		return "", err
+		return "", "", err
 	}
 	defer c.Close()
 	if err := c.SetDeadline(time.Now().Add(2 * time.Second)); err != nil {
-		return "", err
+		return "", "", err
 	}
 	if _, err := fmt.Fprintf(c, "%s\r\n", command); err != nil {
-		return "", err
+		return "", "", err
 	}
-	line, err := bufio.NewReader(c).ReadString('\n')
-	return strings.TrimSpace(line), err
+	r := bufio.NewReader(c)
+	if line, err = r.ReadString('\n'); err != nil {
+		return "", "", err
+	}
+	line = strings.TrimSpace(line)
+	if n, err := strconv.Atoi(strings.TrimPrefix(line, "$")); err == nil && n > 0 && line[0] == '$' {
+		b := make([]byte, n)
+		if _, err := io.ReadFull(r, b); err != nil {
+			return "", "", err
+		}
+		text = string(b)
+	}
+	return line, text, nil
 }
 
-func freePort(t testing.TB) string {
+// FreePort is a port of this machine that nothing listens on.
+func FreePort(t testing.TB) string {
 	t.Helper()
 	l, err := net.Listen("tcp", "127.0.0.1:0")
 	if err != nil {

@@ -2,6 +2,9 @@ package bot
 
 import (
 	"context"
+	"crypto/rand"
+	"encoding/hex"
+	"fmt"
 	"log/slog"
 	"time"
 
@@ -29,6 +32,8 @@ type Bot struct {
 	version string
 }
 
+var _ Handler = (*Bot)(nil)
+
 // Answer is one whole answer: the reply for people and the machine form.
 type Answer struct {
 	Reply   reply.Reply
@@ -51,6 +56,51 @@ func New(o Options) *Bot {
 	return &Bot{memory: o.Memory, now: o.Now, log: o.Log, version: o.Version}
 }
 
-// Answer answers one event without delivering anything: it reads and writes
-// memory, and never panics.
-func (b *Bot) Answer(ctx context.Context, e Event) Answer { return Answer{} }
+// Answer answers one event without delivering anything; memory is read and
+// written as for a delivered one. It never panics.
+func (b *Bot) Answer(ctx context.Context, e Event) (answer Answer) {
+	defer b.rescue(&answer)
+	t, err := b.begin(ctx, e)
+	if t == nil {
+		return b.trouble(err)
+	}
+	t.work()
+	if t.keeps {
+		if err := b.memory.Save(ctx, t.v); err != nil {
+			b.log.Error("save", "error", err.Error())
+		}
+	}
+	return t.answer
+}
+
+// rescue turns a panic into an answer of ours.
+func (b *Bot) rescue(answer *Answer) {
+	if p := recover(); p != nil {
+		*answer = b.trouble(fmt.Errorf("panic: %v", p))
+	}
+}
+
+// trouble is an error of ours: one sentence with an id, the cause only in the
+// log. A nil error (an event that was already taken) is silence.
+func (b *Bot) trouble(err error) Answer {
+	if err == nil {
+		return Answer{Machine: Machine{V: MachineVersion, Kind: "silence"}}
+	}
+	id := newID()
+	b.log.Error("trouble", "id", id, "error", err.Error())
+	var r reply.Reply
+	r.Add(reply.Notice, fmt.Sprintf(troubleText, id))
+	return Answer{Reply: r, Machine: Machine{V: MachineVersion, Kind: "trouble", Text: r.Text()}}
+}
+
+func newID() string {
+	var b [4]byte
+	_, _ = rand.Read(b[:]) // crypto/rand does not fail; an id of zeros would do
+	return hex.EncodeToString(b[:])
+}
+
+// Private tells from memory, at once, whether answers here are private.
+func (b *Bot) Private(where Place) bool {
+	h, _ := b.memory.HouseNow(whereOf(where))
+	return h.Private
+}

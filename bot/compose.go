@@ -22,6 +22,8 @@ type composer struct {
 	notices []string
 	// question is the one question, nil for none.
 	question *asked
+	// brief is the step of brevity, 0 for the whole answer.
+	brief int
 }
 
 // asked is a question in words, with the choices that answer it.
@@ -31,8 +33,29 @@ type asked struct {
 	from     *shorthand.Question
 }
 
-// compose lays the answer out in its fixed order.
+// answerLength is about what a phone shows without scrolling far, characters.
+const answerLength = 620
+
+// compose lays the answer out; a long one loses, step by step, what stands
+// behind "why" anyway.
 func (c *composer) compose() reply.Reply {
+	r := c.layout()
+	for c.brief = 1; c.brief <= briefest && len([]rune(r.Text())) > answerLength; c.brief++ {
+		r = c.layout()
+	}
+	return r
+}
+
+// The steps of brevity: no next numbers, no second index and healthy PaO2, no
+// minor caution.
+const (
+	briefNoNext = 1 + iota
+	briefOneIndex
+	briefest
+)
+
+// layout composes the answer in its fixed order.
+func (c *composer) layout() reply.Reply {
 	var r reply.Reply
 	c.question = c.chooseQuestion()
 	r.Add(reply.Headline, c.headline())
@@ -47,7 +70,9 @@ func (c *composer) compose() reply.Reply {
 	r.Add(reply.Oxygenation, c.oxygenation())
 	r.Add(reply.Metabolic, c.metabolic())
 	r.Add(reply.Next, c.change)
-	r.Add(reply.Next, c.next())
+	if c.brief < briefNoNext {
+		r.Add(reply.Next, c.next())
+	}
 	c.addCautions(&r)
 	if c.question != nil {
 		r.Add(reply.Question, c.question.text)
@@ -74,26 +99,30 @@ func (c *composer) headline() string {
 	if len(c.a.Critical) > 1 {
 		return c.criticalHeadline()
 	}
+	critical := ""
+	if len(c.a.Critical) == 1 {
+		critical = c.criticalValue(c.a.Critical[0]) + " critical"
+	}
 	for _, v := range c.ventilationShort() {
 		for _, o := range c.oxygenationShort() {
-			if h := joinHeads(v, o); len([]rune(h)) <= headlineWidth {
+			if h := joinHeads(critical, v, o); len([]rune(h)) <= headlineWidth {
 				return h
 			}
 		}
 	}
-	return joinHeads(last(c.ventilationShort()), last(c.oxygenationShort()))
+	return joinHeads(critical, last(c.ventilationShort()))
 }
 
 func last(s []string) string { return s[len(s)-1] }
 
-func joinHeads(v, o string) string {
-	if o == "" {
-		return v
+func joinHeads(heads ...string) string {
+	var kept []string
+	for _, h := range heads {
+		if h != "" {
+			kept = append(kept, h)
+		}
 	}
-	if v == "" {
-		return o
-	}
-	return v + "; " + o
+	return strings.Join(kept, "; ")
 }
 
 func (c *composer) criticalHeadline() string {
@@ -118,14 +147,16 @@ func (c *composer) criticalValue(q physio.Quantity) string {
 
 // ventilationShort gives phrasings of the first axis, longest first.
 func (c *composer) ventilationShort() []string {
-	if len(c.a.Critical) == 1 {
-		return []string{c.criticalValue(c.a.Critical[0]) + " critical"}
-	}
 	level := c.ventilationHead()
+	short, _, _ := strings.Cut(level, ",")
+	out := []string{level, short}
 	if c.a.Ventilation.Efficiency == physio.Poor {
-		return []string{level + ", efficiency poor", level + ", costly", level}
+		out = append([]string{level + ", efficiency poor", level + ", costly"}, out...)
 	}
-	return []string{level}
+	if len(c.a.Critical) == 1 && c.a.Critical[0] == physio.PaCO2 {
+		return []string{""} // the critical value names the axis
+	}
+	return out
 }
 
 func (c *composer) ventilationHead() string {
@@ -232,7 +263,7 @@ func (c *composer) levelWord() string {
 	case physio.DegreeAdequate:
 		return "adequate"
 	case physio.DegreeMild:
-		return "mildly low"
+		return "low (mild)"
 	case physio.DegreeModerate:
 		return "low"
 	case physio.DegreeSevere:

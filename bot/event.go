@@ -42,6 +42,7 @@ const (
 	CanPrivate                     // show a post to one user only
 	CanForm                        // open a form now
 	CanPicture                     // take a picture after the text
+	CanThread                      // answer in a thread under the message
 )
 
 // Has says that all of o are there.
@@ -65,6 +66,11 @@ type Event struct {
 	// Addressed is true when the bot was meant: command, mention, direct
 	// message, or a reply in a thread in which it answers.
 	Addressed bool
+	// Listening is true where every line is meant to be read although chatter
+	// gets silence: a console, the ask command.
+	Listening bool
+	// Manager is true when the platform says that the user manages the channel.
+	Manager bool
 	// Private asks that only the user sees the answer (a slash command whose
 	// first acknowledgement was private, a shortcut on a colleague's message).
 	Private bool

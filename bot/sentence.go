@@ -38,6 +38,13 @@ func (c *composer) ventilationLevel() string {
 	return c.unknownCO2()
 }
 
+// answersNeed says that PaCO2 is what a metabolic process needs, at most
+// borderline off it.
+func (c *composer) answersNeed() bool {
+	ab := c.a.AcidBase
+	return ab.Need == physio.Matches || ab.Need != physio.NoNeed && ab.NeedBorderline
+}
+
 func (c *composer) needSpan() string {
 	n := c.a.AcidBase.NeedSpan
 	return c.n.between(n.Low, n.High)
@@ -75,8 +82,10 @@ func (c *composer) highCO2() string {
 	switch {
 	case v.Floor:
 		return "EtCO2 is a floor: PaCO2 is at least about that, so the level is inadequate."
-	case ab.Primary == physio.MetabolicAlkalosis && ab.Need == physio.Matches:
-		return fmt.Sprintf("PaCO2 above its range, as this metabolic alkalosis expects (%s %s).", c.needSpan(), c.n.unit())
+	case ab.Primary == physio.MetabolicAlkalosis && c.answersNeed():
+		return fmt.Sprintf("PaCO2 above its range, as this metabolic alkalosis expects (%s %s)%s.", c.needSpan(), c.n.unit(), c.borderlineNeed())
+	case ab.Primary == physio.MetabolicAlkalosis:
+		return fmt.Sprintf("inadequate: PaCO2 above what this metabolic alkalosis expects (%s %s).", c.needSpan(), c.n.unit())
 	case v.AtUsual:
 		return "high, at this patient's usual PaCO2."
 	case v.ChronicPattern:

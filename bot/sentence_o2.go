@@ -22,7 +22,7 @@ func (c *composer) oxygenation() string {
 	if e := c.oxygenEfficiency(); e != "" {
 		parts = append(parts, e)
 	}
-	if h := c.healthyAtPaCO2(); h != "" {
+	if h := c.healthyAtPaCO2(); h != "" && c.brief < briefOneIndex {
 		parts = append(parts, h)
 	}
 	if x := c.otherOxygenIndices(); x != "" {
@@ -79,8 +79,9 @@ func (c *composer) oxygenWords() string {
 	if word == "borderline" {
 		return "PaO2 60-79 on oxygen: borderline, no target set"
 	}
-	if !o.OnOxygen && c.a.Oxygen.Known && c.a.Ranges.PaO2 && o.Scale != physio.DegreeAdequate {
-		return word + ", " + string(o.Scale) + " on the scale for air at sea level" + c.borderlineO2()
+	if !o.OnOxygen && c.a.Ranges.PaO2 && (o.Scale == physio.DegreeMild || o.Scale == physio.DegreeModerate) {
+		scale := " on the scale for air at sea level"
+		return strings.TrimSuffix(word, " (mild)") + ", " + string(o.Scale) + scale + c.borderlineO2()
 	}
 	return word + c.borderlineO2()
 }
@@ -94,7 +95,9 @@ func (c *composer) expectedWhy() string {
 }
 
 func (c *composer) borderlineO2() string {
-	if c.a.Oxygenation.Borderline {
+	o := c.a.Oxygenation
+	near := o.Scale == physio.DegreeAdequate || o.Scale == physio.DegreeMild || o.AgainstTarget != physio.NoTarget
+	if o.Borderline && near {
 		return ", borderline"
 	}
 	return ""
@@ -182,7 +185,7 @@ func (c *composer) transferPhrase() string {
 	if ix, ok := c.a.Index("pf"); ok {
 		parts = append(parts, c.indexPhrase(ix))
 	}
-	if ix, ok := c.a.Index("a_over_a"); ok {
+	if ix, ok := c.a.Index("a_over_a"); ok && (c.brief < briefOneIndex || c.a.Oxygenation.Basis == "a_over_a") {
 		parts = append(parts, c.indexPhrase(ix)+" (healthy: 0.75 or more)")
 	}
 	return strings.Join(parts, ", ")

@@ -140,7 +140,7 @@ func (c *composer) addCautions(r *reply.Reply) {
 		case caution.Severity == physio.Major && major < majorShown:
 			r.Add(reply.Major, text)
 			major++
-		case caution.Severity == physio.Minor && major == 0 && minor < minorShown && c.worthSaying(caution.Code):
+		case caution.Severity == physio.Minor && major == 0 && minor < minorShown && c.brief < briefest && c.worthSaying(caution.Code):
 			r.Add(reply.Minor, text)
 			minor++
 		}

@@ -21,7 +21,7 @@ func (sc *scene) acidBase() {
 	a.AcidBase = AcidBase{Primary: UnknownProcess, Course: NoCourse, Compensation: CompensationNotStated, Gap: GapUnknown}
 	d := a.Triple
 	if d.known() && a.Blood != Cord {
-		t := triple{ph: d.PH, pco2: d.PaCO2, hco3: d.HCO3, sbe: standardBaseExcess(d.PH, d.HCO3), r: sc.bloodRanges()}
+		t := sc.tripleOf(d)
 		a.AcidBase = classify(t)
 		if d.Any && d.Quantity == PaCO2 {
 			// A PaCO2 that was calculated is too soft to name a second process.
@@ -29,6 +29,20 @@ func (sc *scene) acidBase() {
 		}
 		sc.gap(t)
 	}
+}
+
+// tripleOf gives the triple with the ranges of its blood. What a metabolic
+// process needs is a PaCO2: from venous blood it is compared as it stands, and
+// a miss counts only beyond the usual difference of the two.
+func (sc *scene) tripleOf(d Derived) triple {
+	t := triple{
+		ph: d.PH, pco2: d.PaCO2, hco3: d.HCO3, sbe: standardBaseExcess(d.PH, d.HCO3),
+		r: sc.bloodRanges(), need: sc.a.Ranges.Anchor, margin: needMargin,
+	}
+	if !sc.lungCO2 {
+		t.margin = venousMargin
+	}
+	return t
 }
 
 // bloodRanges shifts the ranges of venous blood: pH 0.03 lower, PCO2 6 mmHg
@@ -113,7 +127,7 @@ func (sc *scene) ventilationCounts() bool {
 	case LevelShortForNeed:
 		return true
 	case LevelHypoventilation:
-		answers := sc.a.AcidBase.Primary == MetabolicAlkalosis && need != Short
+		answers := sc.a.AcidBase.Primary == MetabolicAlkalosis && (need != Short || sc.a.AcidBase.NeedBorderline)
 		return !answers && !v.AtUsual
 	case LevelHyperventilation:
 		answers := sc.a.AcidBase.Primary == MetabolicAcidosis && need != Beyond

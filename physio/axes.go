@@ -313,7 +313,8 @@ func (sc *scene) efficiencyFromGas(aa Index) {
 	ratioOnly := sc.v.Val(PaCO2) > ratioOnlyPaCO2 || sc.a.Altitude >= altitudeShiftFrom || !sc.adultScale()
 	o.Basis = "a_over_a"
 	o.Efficiency = sc.transfer(ratio.Value, pf.Value, ratioOnly)
-	o.Soft = sc.transfer(ratio.Low, pf.Low, ratioOnly) != sc.transfer(ratio.High, pf.High, ratioOnly)
+	o.Soft = sc.a.Oxygen.Estimated &&
+		sc.transfer(ratio.Low, pf.Low, ratioOnly) != sc.transfer(ratio.High, pf.High, ratioOnly)
 	if !ratioOnly && pf.Value <= pfPoor {
 		o.Basis = "pf"
 	}

@@ -81,6 +81,10 @@ type AcidBase struct {
 type triple struct {
 	ph, pco2, hco3, sbe float64
 	r                   Ranges
+	// need is the anchor of what a metabolic process expects, and margin the
+	// miss in mmHg beyond which a second process is named.
+	need   Anchor
+	margin float64
 }
 
 // classify names the acid-base processes of a triple. It follows the
@@ -154,9 +158,9 @@ func (t triple) balanced(ab *AcidBase) {
 		t.metabolicAcidosis(ab)
 	case t.lowCO2():
 		t.respiratoryAlkalosis(ab)
-	case t.highHCO3() && t.excess() > sbeDisorder:
+	case t.highHCO3() && t.excess() > sbeAlone:
 		t.metabolicAlkalosis(ab)
-	case t.lowHCO3() && t.excess() < -sbeDisorder:
+	case t.lowHCO3() && t.excess() < -sbeAlone:
 		t.metabolicAcidosis(ab)
 	}
 }
@@ -235,8 +239,8 @@ func (t triple) metabolicAlkalosis(ab *AcidBase) {
 // acidosisNeed is the PaCO2 that a metabolic acidosis expects: both bands,
 // 40 + SBE (+-3) and Winters (+-2), so that "short" means above both.
 func (t triple) acidosisNeed() Span {
-	bySBE := acidosisPaCO2BySBE(t.sbe, t.r.Anchor)
-	byWinters := winters(t.hco3, t.r.Anchor)
+	bySBE := acidosisPaCO2BySBE(t.sbe, t.need)
+	byWinters := winters(t.hco3, t.need)
 	return Span{
 		Low:  min(bySBE-sbeNeedTolerance, byWinters-wintersTolerance),
 		High: max(bySBE+sbeNeedTolerance, byWinters+wintersTolerance),
@@ -245,8 +249,8 @@ func (t triple) acidosisNeed() Span {
 
 // alkalosisNeed is the PaCO2 that a metabolic alkalosis expects.
 func (t triple) alkalosisNeed() Span {
-	byHCO3 := alkalosisPaCO2(t.hco3, t.r.Anchor)
-	bySBE := alkalosisPaCO2BySBE(t.sbe, t.r.Anchor)
+	byHCO3 := alkalosisPaCO2(t.hco3, t.need)
+	bySBE := alkalosisPaCO2BySBE(t.sbe, t.need)
 	return Span{
 		Low:  min(byHCO3-alkalosisBand, bySBE-sbeNeedTolerance),
 		High: max(byHCO3+alkalosisBand, bySBE+sbeNeedTolerance),
@@ -264,11 +268,11 @@ func (t triple) compareNeed(ab *AcidBase, above, below Process) {
 	case under > 0:
 		ab.Need = Beyond
 	}
-	ab.NeedBorderline = abs(over) < needMargin || abs(under) < needMargin
+	ab.NeedBorderline = abs(over) < t.margin || abs(under) < t.margin
 	switch {
-	case over > needMargin:
+	case over > t.margin:
 		ab.Also = append(ab.Also, above)
-	case under > needMargin:
+	case under > t.margin:
 		ab.Also = append(ab.Also, below)
 	}
 }

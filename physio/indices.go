@@ -202,7 +202,7 @@ func (sc *scene) needs() {
 	sc.add("expected_ph_acute", "", point(phAtPCO2(anchor.SBE, d.PaCO2)), PaCO2)
 	low, high := phFrom(d.PaCO2, chronic.Low), phFrom(d.PaCO2, chronic.High)
 	sc.add("expected_ph_chronic", "", span(low, high), PaCO2)
-	t := triple{ph: d.PH, pco2: d.PaCO2, hco3: d.HCO3, sbe: standardBaseExcess(d.PH, d.HCO3), r: r}
+	t := sc.tripleOf(d)
 	switch p := classify(t).Primary; p {
 	case MetabolicAcidosis:
 		n := t.acidosisNeed()

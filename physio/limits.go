@@ -187,6 +187,7 @@ const (
 	chronicTolerance  = 4.0  // mmol/L above the chronic band: a second disorder
 	hypocapniaBand    = 3.0  // mmol/L round chronic hypocapnia (6 mmol/L wide, 1977)
 	sbeDisorder       = 2.0  // mmol/L: beyond it SBE is out of range
+	sbeAlone          = 3.0  // mmol/L: the wider range in use, for a lone change
 	sbeSignificant    = 5.0  // mmol/L: a base deficit that counts beside a raised PaCO2
 	needMargin        = 1.45 // mmHg: 1.96 x SD of a repeat PaCO2 (Mallat 2015)
 	sbeNeedTolerance  = 3.0  // mmHg round 40 + SBE (Schlichtig 1998)
@@ -218,6 +219,9 @@ const (
 	venousPH   = 0.033 // pH units lower (Byrne 2014)
 	venousPCO2 = 6.0   // mmHg higher (Kelly 2013)
 	venousHCO3 = 1.2   // mmol/L higher (Kelly 2013)
+	// venousMargin, mmHg, is between the mean differences that were found, 2.9
+	// (in COPD) to 6.2 (Kelly 2013).
+	venousMargin = 5.0
 
 	childBelow    = 16.0       // years, common practice
 	newbornBelow  = 29.0 / 365 // years: 28 days, common practice

@@ -5,6 +5,8 @@ import (
 	"encoding/json"
 	"errors"
 	"fmt"
+	"maps"
+	"slices"
 	"strconv"
 	"strings"
 
@@ -44,9 +46,9 @@ var houseFields = []field{
 	{"order", wantOrder, readOrder, writeOrder},
 	{"words", wantWords, func(h *House, raw json.RawMessage) error { return strict(raw, &h.Words) },
 		func(h House) any { return unlessEmpty(h.Words, len(h.Words)) }},
-	{"pressure_mmhg", wantPressure, func(h *House, raw json.RawMessage) error { return number(raw, &h.PB) },
+	{"pressure_mmhg", wantPressure, func(h *House, raw json.RawMessage) error { return nonZero(raw, &h.PB) },
 		func(h House) any { return unlessZero(h.PB) }},
-	{"altitude_m", wantAltitude, func(h *House, raw json.RawMessage) error { return number(raw, &h.Altitude) },
+	{"altitude_m", wantAltitude, func(h *House, raw json.RawMessage) error { return strict(raw, &h.Altitude) },
 		func(h House) any { return unlessZero(h.Altitude) }},
 	{"population", wantPopulation, func(h *House, raw json.RawMessage) error { return strict(raw, &h.Population) },
 		func(h House) any { return text(string(h.Population)) }},
@@ -96,11 +98,13 @@ func strict(raw json.RawMessage, into any) error {
 	return d.Decode(into)
 }
 
-// number reads a number that is not 0: 0 means "not set" in a House.
-func number(raw json.RawMessage, into *float64) error {
+// nonZero reads a number for which 0 would mean "not set" in a House.
+func nonZero(raw json.RawMessage, into *float64) error {
 	if err := strict(raw, into); err != nil {
-		*into = 0
 		return err
+	}
+	if *into == 0 {
+		return errOther
 	}
 	return nil
 }
@@ -211,11 +215,25 @@ type criticalFile struct {
 }
 
 func readCritical(h *House, raw json.RawMessage) error {
-	var f criticalFile
-	if err := strict(raw, &f); err != nil {
+	var given map[string]json.RawMessage
+	if err := strict(raw, &given); err != nil {
 		return err
 	}
-	h.Critical = &physio.CriticalLimits{PHLow: f.PHLow, PHHigh: f.PHHigh, PaCO2High: f.PaCO2High, PaO2Low: f.PaO2Low}
+	var c physio.CriticalLimits
+	into := map[string]*float64{
+		"ph_low": &c.PHLow, "ph_high": &c.PHHigh, "paco2_high_mmhg": &c.PaCO2High, "pao2_low_mmhg": &c.PaO2Low,
+	}
+	for _, key := range slices.Sorted(maps.Keys(given)) {
+		field := "critical." + shown(key)
+		at, ok := into[key]
+		if !ok {
+			return &FieldError{field, shown(string(given[key])), wantCritical, perhaps(key, slices.Sorted(maps.Keys(into)))}
+		}
+		if nonZero(given[key], at) != nil {
+			return &FieldError{Field: field, Got: shown(string(given[key])), Want: "a number"}
+		}
+	}
+	h.Critical = &c
 	return nil
 }
 

@@ -64,7 +64,7 @@ func (l fileLine) apply(h *House, found *Problems) error {
 	case l.double:
 		found.add(shown(l.key), "it twice", "each key once", "")
 	case f == nil:
-		found.add(shown(l.key), shown(string(l.raw)), "one of the keys "+strings.Join(fieldKeys(), ", "), perhaps(l.key, fieldKeys()))
+		unknownKey(found, l.key, l.raw)
 	default:
 		if err := f.read(h, l.raw); err != nil {
 			var at *FieldError
@@ -75,6 +75,15 @@ func (l fileLine) apply(h *House, found *Problems) error {
 		}
 	}
 	return nil
+}
+
+// unknownKey names a key that is no rule, and the one that was probably meant.
+func unknownKey(found *Problems, key string, raw json.RawMessage) {
+	want, hint := "a key that is known", perhaps(key, fieldKeys())
+	if hint == "" {
+		want = "one of the keys " + strings.Join(fieldKeys(), ", ")
+	}
+	found.add(shown(key), shown(string(raw)), want, hint)
 }
 
 func fileVersion(raw json.RawMessage, found *Problems) error {

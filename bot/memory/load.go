@@ -34,6 +34,7 @@ type houseDoc struct {
 
 func (m *Memory) load(ctx context.Context, c Call) (*Visit, error) {
 	v := m.visit(c)
+	v.seen = m.seen(v.partition)
 	ops := m.readings(v)
 	items, err := m.guard.Do(ctx, v.partition, ops...)
 	if errors.Is(err, store.ErrFull) {
@@ -138,7 +139,6 @@ func (m *Memory) follow(ctx context.Context, v *Visit) error {
 	v.docs[0].key = v.docs[1].thread.flat
 	items, err := m.guard.Do(ctx, v.partition, store.Op{Key: v.docs[0].key})
 	if err != nil {
-		v.docs[0].key = ""
 		if errors.Is(err, ErrDown) {
 			m.degraded(v)
 			return nil
@@ -150,7 +150,7 @@ func (m *Memory) follow(ctx context.Context, v *Visit) error {
 
 // takeHouse reads the rules, and remembers them for when the store is down.
 func (m *Memory) takeHouse(v *Visit, item store.Item) error {
-	k, err := m.houseOf(v.partition, item)
+	k, err := m.houseOf(v.partition, v.seen, item)
 	if err != nil {
 		return err
 	}
@@ -159,8 +159,16 @@ func (m *Memory) takeHouse(v *Visit, item store.Item) error {
 	return nil
 }
 
-// houseOf decodes the house unless this process knows it already.
-func (m *Memory) houseOf(partition string, item store.Item) (known, error) {
+// seen is the tag of the rules that this process knows, noted before a read.
+func (m *Memory) seen(partition string) string {
+	k, _ := m.houses.get(partition)
+	return k.tag
+}
+
+// houseOf decodes the house unless this process knows it already. What was
+// read is remembered only when the rules known here are still those seen before
+// the read: a slow read must not bring back rules that were changed meanwhile.
+func (m *Memory) houseOf(partition, seen string, item store.Item) (known, error) {
 	if k, ok := m.houses.get(partition); ok && k.tag == item.Tag {
 		return k, nil
 	}
@@ -172,7 +180,7 @@ func (m *Memory) houseOf(partition string, item store.Item) (known, error) {
 		}
 		k.n, k.house = rev.N, rev.House
 	}
-	m.houses.put(partition, k)
+	m.houses.putIf(partition, k, func(old known) bool { return old.tag == seen })
 	return k, nil
 }
 

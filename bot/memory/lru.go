@@ -34,10 +34,21 @@ func (c *lru[V]) get(key string) (V, bool) {
 	return e.Value.(*lruEntry[V]).value, true
 }
 
-func (c *lru[V]) put(key string, v V) {
+func (c *lru[V]) put(key string, v V) { c.putIf(key, v, func(V) bool { return true }) }
+
+// putIf puts a value in place of one that may go; the zero V stands for none.
+func (c *lru[V]) putIf(key string, v V, may func(old V) bool) {
 	c.mu.Lock()
 	defer c.mu.Unlock()
-	if e, ok := c.at[key]; ok {
+	e, ok := c.at[key]
+	var old V
+	if ok {
+		old = e.Value.(*lruEntry[V]).value
+	}
+	if !may(old) {
+		return
+	}
+	if ok {
 		e.Value.(*lruEntry[V]).value = v
 		c.order.MoveToFront(e)
 		return

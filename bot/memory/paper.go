@@ -129,6 +129,9 @@ func (p *paper) op(now time.Time, life time.Duration, tag string) (store.Op, err
 	}
 	value, err := encodeThread(&p.thread)
 	o.Value, o.Tag, o.TTL = value, tag, life
+	if len(p.thread.entries) > 0 { // no longer than its gases
+		o.TTL = time.Second
+	}
 	for i := range p.thread.entries {
 		o.TTL = max(o.TTL, p.thread.entries[i].until.Sub(now))
 	}

@@ -28,8 +28,9 @@ func (e *FieldError) Error() string {
 	return s
 }
 
-// Problems are all the rules that are not possible, in the order of the file
-// form. Nothing of the rules is applied.
+// Problems are all the rules that are not possible: first those that can not
+// be read, in the order of the file, then those that are out of range or
+// contradict another. Nothing of the rules is applied.
 type Problems []*FieldError
 
 // mostProblems bounds what is printed of one file.

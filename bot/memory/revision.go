@@ -105,6 +105,7 @@ type pen struct {
 	base      int // the revision the change was decided on, -1 for the present one
 	change    func(House) (House, error)
 	seen      *House // the rules of base
+	tag       string // of the rules known here before the read
 }
 
 func (p *pen) write(ctx context.Context) (Revision, error) {
@@ -112,6 +113,7 @@ func (p *pen) write(ctx context.Context) (Revision, error) {
 	if p.base > 0 {
 		ops = append(ops, store.Op{Key: revisionKey(p.base)})
 	}
+	p.tag = p.m.seen(p.partition)
 	items, err := p.m.guard.Do(ctx, p.partition, ops...)
 	if err != nil {
 		return Revision{}, err
@@ -146,7 +148,7 @@ func (p *pen) look(items []store.Item) error {
 // attempt writes the change on the rules that the store holds. On a conflict
 // it gives what the store holds instead.
 func (p *pen) attempt(ctx context.Context, item store.Item) (Revision, []store.Item, error) {
-	now, err := p.m.houseOf(p.partition, item)
+	now, err := p.m.houseOf(p.partition, p.tag, item)
 	if err != nil {
 		return Revision{}, nil, err
 	}
@@ -167,7 +169,7 @@ func (p *pen) attempt(ctx context.Context, item store.Item) (Revision, []store.I
 	case errors.Is(err, store.ErrConflict) && items[0].Tag == tag: // written by a repeat inside the store's client
 		return p.confirm(ctx, rev, tag, items)
 	case errors.Is(err, ErrDown):
-		return p.doubt(ctx, rev, item.Tag, tag, err)
+		return p.doubt(ctx, rev, tag, err)
 	}
 	return Revision{}, items, err
 }
@@ -207,7 +209,7 @@ func overlap(theirs, ours []Change) []Change {
 const lookUp = 500 * time.Millisecond
 
 // doubt finds out what became of a write whose reply was lost.
-func (p *pen) doubt(ctx context.Context, rev Revision, before, tag string, cause error) (Revision, []store.Item, error) {
+func (p *pen) doubt(ctx context.Context, rev Revision, tag string, cause error) (Revision, []store.Item, error) {
 	ctx, cancel := context.WithTimeout(context.WithValue(context.WithoutCancel(ctx), pressing{}, true), lookUp)
 	defer cancel()
 	items, err := p.m.guard.Do(ctx, p.partition, store.Op{Key: houseKey}, store.Op{Key: revisionKey(rev.N)})
@@ -297,22 +299,19 @@ func (m *Memory) Revision(ctx context.Context, where Where, n int) (Revision, er
 // at most 32. Errors: ErrDown, *DocumentError.
 func (m *Memory) Revisions(ctx context.Context, where Where, last int) ([]Revision, error) {
 	partition := where.partition()
-	items, err := m.guard.Do(ctx, partition, store.Op{Key: houseKey})
-	if err != nil {
-		return nil, err
-	}
-	now, err := m.houseOf(partition, items[0])
+	_, newest, err := m.HouseOf(ctx, where)
 	if err != nil {
 		return nil, err
 	}
 	var ops []store.Op
-	for n := now.n; n > 0 && len(ops) < min(last, store.MaxOps); n-- {
+	for n := newest; n > 0 && len(ops) < min(last, store.MaxOps); n-- {
 		ops = append(ops, store.Op{Key: revisionKey(n)})
 	}
 	if len(ops) == 0 {
 		return nil, nil
 	}
-	if items, err = m.guard.Do(ctx, partition, ops...); err != nil {
+	items, err := m.guard.Do(ctx, partition, ops...)
+	if err != nil {
 		return nil, err
 	}
 	return decodeRevisions(items)
@@ -346,10 +345,12 @@ func (m *Memory) Restore(ctx context.Context, where Where, by string, n int) (Ho
 // HouseOf gives the rules in force and their revision number, read from the
 // store. Errors: ErrDown, *DocumentError.
 func (m *Memory) HouseOf(ctx context.Context, where Where) (House, int, error) {
-	items, err := m.guard.Do(ctx, where.partition(), store.Op{Key: houseKey})
+	partition := where.partition()
+	seen := m.seen(partition)
+	items, err := m.guard.Do(ctx, partition, store.Op{Key: houseKey})
 	if err != nil {
 		return House{}, 0, err
 	}
-	k, err := m.houseOf(where.partition(), items[0])
+	k, err := m.houseOf(partition, seen, items[0])
 	return k.house.Clone(), k.n, err
 }

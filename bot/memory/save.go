@@ -16,7 +16,7 @@ func (m *Memory) save(ctx context.Context, v *Visit) error {
 		return nil
 	}
 	m.noteClaim(v, true)
-	if v.Degraded { // nothing was read: read now, and repeat the changes on it
+	if v.Degraded && len(v.edits) > 0 { // nothing was read: read now, and repeat the changes on it
 		if err := m.reread(ctx, v); err != nil {
 			return err
 		}
@@ -91,6 +91,9 @@ func (m *Memory) reread(ctx context.Context, v *Visit) error {
 			ops = append(ops, store.Op{Key: v.docs[i].key})
 			papers = append(papers, &v.docs[i])
 		}
+	}
+	if len(ops) == 0 {
+		return nil
 	}
 	items, err := m.guard.Do(ctx, v.partition, ops...)
 	if err != nil {

@@ -1,6 +1,7 @@
 package memory
 
 import (
+	"cmp"
 	"encoding/json"
 	"slices"
 	"time"
@@ -98,24 +99,32 @@ func (t *Thread) clone() Thread {
 	return c
 }
 
-// put replaces what a message brought by new entries.
+// put replaces what a message brought by new entries. An edited question keeps
+// its place among the others and its answer; a new one ends an open question.
 func (t *Thread) put(message string, entries []held) {
-	t.remove(message)
-	t.entries = append(t.entries, entries...)
+	earlier := t.ByMessage(message)
+	if len(earlier) == 0 || t.of == message {
+		t.pending, t.of = nil, ""
+	}
+	t.entries = slices.DeleteFunc(t.entries, func(e held) bool { return e.Message == message })
+	for _, e := range entries {
+		if len(earlier) > 0 {
+			e.At, e.Post = earlier[0].At, cmp.Or(e.Post, earlier[0].Post)
+		}
+		t.entries = append(t.entries, e)
+	}
 	slices.SortStableFunc(t.entries, func(a, b held) int { return a.At.Compare(b.At) })
-	t.pending, t.of = nil, ""
 	t.trim()
 }
 
 // trim drops the oldest messages beyond what is kept.
 func (t *Thread) trim() {
-	for len(t.entries) > mostEntries || t.messages() > mostMessages {
+	for n := t.messages(); n > mostMessages || n > 1 && len(t.entries) > mostEntries; n-- {
 		oldest := t.entries[0].Message
-		before := len(t.entries)
 		t.entries = slices.DeleteFunc(t.entries, func(e held) bool { return e.Message == oldest })
-		if len(t.entries) == 0 && before > mostEntries { // one message alone is too long
-			t.entries = t.entries[before-mostEntries : before]
-		}
+	}
+	if over := len(t.entries) - mostEntries; over > 0 { // one message alone is too long
+		t.entries = t.entries[over:]
 	}
 }
 
@@ -144,6 +153,9 @@ func (t *Thread) remove(message string) {
 	t.entries = slices.DeleteFunc(t.entries, func(e held) bool { return e.Message == message })
 	if t.of == message {
 		t.pending, t.of = nil, ""
+	}
+	if len(t.entries) == 0 && t.pending == nil {
+		t.asked = nil
 	}
 }
 

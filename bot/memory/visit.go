@@ -20,7 +20,8 @@ type Call struct {
 	// when there is none.
 	Message string
 	// Opens says that the answer opens a thread under Message, so that what is
-	// remembered must be found from inside it too.
+	// remembered must be found from inside it too; or that the platform will not
+	// say whose message was deleted, so that it must be found by the message.
 	Opens bool
 }
 
@@ -43,7 +44,8 @@ type Visit struct {
 	// House are the channel's rules, Revision their number, 0 for the default.
 	House    House
 	Revision int
-	// FirstTime says that the user has not had the standing notice here.
+	// FirstTime says that the user has not had the standing notice here. Save
+	// notes that the answer carried it; the caller clears it when it did not.
 	FirstTime bool
 	// Degraded says that the store is down: House is the last known one, or
 	// the default when Known is false, and there is no thread.
@@ -56,11 +58,12 @@ type Visit struct {
 	call      Call
 	partition string
 	tag       string // of the claim
+	seen      string // the tag of the rules known here before the read
 	docs      []paper
 	edits     []edit
 	now       time.Time
 	life      time.Duration
-	frozen    bool // documents that must not be overwritten
+	frozen    bool // a document could not be read: none is overwritten
 }
 
 // Thread gives what the thread remembers; outside a thread, what this user's

@@ -65,6 +65,6 @@ var unitRows = []row{
 	{unit(uYear), "yo, yr, yrs, year, years, y, year old, years old, yr old, yrs old, yom, yof, y o, years of age"},
 	{unit(uMonth), "mo, mth, months, month, mos, month old, months old, mo old"},
 	{unit(uDay), "do, days, day old, days old, dol, d old"},
-	{unit(uPerMin), "/min, per min, per minute, breaths, breaths a minute, breaths per minute, breaths/min, a minute, min-1, times a minute, bpm"},
+	{unit(uPerMin), "/min, per min, per minute, breaths, breaths a minute, breaths per minute, breaths/min, a minute, min-1, times a minute"},
 	{unit(uTime), "min, mins, minute, minutes, h, hr, hrs, hour, hours, sec, secs, second, seconds, d, s, ms, hrs ago, min ago, mins ago, hr ago"},
 }

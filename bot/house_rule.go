@@ -1,0 +1,294 @@
+package bot
+
+import (
+	"fmt"
+	"sort"
+	"strconv"
+	"strings"
+
+	"galeward/bot/memory"
+	"galeward/bot/shorthand"
+	"galeward/physio"
+)
+
+// houseRule is one row of the table of house rules: the key of the file form,
+// the words that name it, how its value is read, and how it is shown.
+type houseRule struct {
+	key   string
+	names []string
+	parse func(value string) (any, error)
+	show  func(memory.House) string
+}
+
+// houseRules is the one table of rules that can be set by plain words.
+var houseRules = []houseRule{
+	{"units", []string{"units", "unit"}, parseText, func(h memory.House) string {
+		return "Pressures are typed and shown in " + numbers{h.Units}.unit() + "."
+	}},
+	{"order", []string{"order"}, parseOrder, func(h memory.House) string {
+		return "Order of unlabelled values: " + orderWords(h.Order) + "."
+	}},
+	{"altitude_m", []string{"altitude", "height above sea"}, parseNumber, func(h memory.House) string {
+		return ifSet(h.Altitude, "Altitude: "+plain(h.Altitude, 0)+" m.")
+	}},
+	{"pressure_mmhg", []string{"pressure", "barometer", "pb"}, parseNumber, func(h memory.House) string {
+		return ifSet(h.PB, "Barometric pressure: "+plain(h.PB, 0)+" mmHg.")
+	}},
+	{"population", []string{"population", "patients"}, parseText, func(h memory.House) string {
+		if h.Population == physio.PopulationUnstated {
+			return ""
+		}
+		return "Population: " + populationWord[h.Population] + "."
+	}},
+	{"target_spo2", []string{"target", "saturation target", "spo2 target"}, parseSpan, func(h memory.House) string {
+		if h.Target == nil {
+			return "No saturation target is set."
+		}
+		return "Saturation target: " + wholePercent(h.Target.Low) + "-" + wholePercent(h.Target.High) + " %."
+	}},
+	{"target_paco2_mmhg", []string{"co2 target", "paco2 target"}, parseSpan, func(h memory.House) string {
+		if h.TargetPaCO2 == nil {
+			return ""
+		}
+		return fmt.Sprintf("PaCO2 wanted: %s-%s mmHg.", plain(h.TargetPaCO2.Low, 0), plain(h.TargetPaCO2.High, 0))
+	}},
+	{"critical", []string{"critical", "critical limits"}, parseCritical, func(h memory.House) string {
+		if h.Critical == nil {
+			return "Critical limits: the default ones (pH below 7.20 or above 7.60, PaCO2 above 70, PaO2 below 45 mmHg)."
+		}
+		return "Critical limits: " + criticalWords(*h.Critical) + "."
+	}},
+	{"private", []string{"private"}, parseSwitch, func(h memory.House) string {
+		if h.Private {
+			return "Answers are private to the asker."
+		}
+		return "Answers are seen by the channel."
+	}},
+	{"listen", []string{"listen", "listening"}, parseSwitch, func(h memory.House) string {
+		if h.Listen {
+			return "Bare gases in the channel are read."
+		}
+		return ""
+	}},
+	{"zone", []string{"zone", "time zone"}, parseZone, func(h memory.House) string {
+		return ifText(h.Zone, "Time zone: "+h.Zone+".")
+	}},
+	{"shift_ends", []string{"shift ends", "shift"}, parseText, func(h memory.House) string {
+		return ifText(strings.Join(h.ShiftEnds, ", "), "Shifts end at "+strings.Join(h.ShiftEnds, ", ")+".")
+	}},
+	{"words", []string{"words"}, func(string) (any, error) {
+		return nil, fmt.Errorf("words are taken over from a file: galeward ask --house FILE shows the form")
+	}, showWords},
+}
+
+func ifSet(v float64, text string) string {
+	if v == 0 {
+		return ""
+	}
+	return text
+}
+
+func ifText(v, text string) string {
+	if v == "" {
+		return ""
+	}
+	return text
+}
+
+func showWords(h memory.House) string {
+	if len(h.Words) == 0 {
+		return ""
+	}
+	keys := make([]string, 0, len(h.Words))
+	for w := range h.Words {
+		keys = append(keys, w)
+	}
+	sort.Strings(keys)
+	for i, w := range keys {
+		keys[i] = w + " = " + h.Words[w]
+	}
+	return "Own words: " + strings.Join(keys, "; ") + "."
+}
+
+// findRule finds the rule that the first words name, the longest name first.
+func findRule(words []string) (houseRule, string, bool) {
+	line := strings.Join(words, " ")
+	best, length := -1, 0
+	for i, rule := range houseRules {
+		for _, name := range rule.names {
+			if (line == name || strings.HasPrefix(line, name+" ")) && len(name) > length {
+				best, length = i, len(name)
+			}
+		}
+	}
+	if best < 0 {
+		return houseRule{}, "", false
+	}
+	value := strings.TrimSpace(line[length:])
+	for _, filler := range []string{"is ", "= ", "to ", "at "} {
+		value = strings.TrimPrefix(value, filler)
+	}
+	return houseRules[best], value, true
+}
+
+// off says that a rule is to be taken away.
+func off(value string) bool {
+	switch value {
+	case "off", "none", "not set", "default", "clear":
+		return true
+	}
+	return false
+}
+
+func parseText(value string) (any, error) {
+	if off(value) {
+		return nil, nil
+	}
+	if value == "" {
+		return nil, fmt.Errorf("a value is missing. Example: house units kPa")
+	}
+	return value, nil
+}
+
+func parseNumber(value string) (any, error) {
+	if off(value) {
+		return nil, nil
+	}
+	fields := strings.FieldsFunc(value, func(r rune) bool { return r == ' ' || r >= 'a' && r <= 'z' })
+	if len(fields) == 0 {
+		return nil, fmt.Errorf("a number is missing. Example: house altitude 1600 m")
+	}
+	v, err := strconv.ParseFloat(strings.ReplaceAll(fields[0], ",", "."), 64)
+	if err != nil {
+		return nil, fmt.Errorf("%q is no number. Example: house altitude 1600 m", fields[0])
+	}
+	if strings.Contains(value, "ft") || strings.Contains(value, "feet") {
+		v *= 0.3048
+	}
+	return v, nil
+}
+
+func parseSpan(value string) (any, error) {
+	if off(value) {
+		return nil, nil
+	}
+	value = strings.NewReplacer(" to ", "-", "%", "", " ", "", "mmhg", "", "–", "-").Replace(value)
+	if !strings.Contains(value, "-") {
+		return nil, fmt.Errorf("a range is expected, low before high. Example: house target 88-92")
+	}
+	return value, nil
+}
+
+func parseSwitch(value string) (any, error) {
+	switch value {
+	case "on", "yes", "true", "":
+		return true, nil
+	case "off", "no", "false":
+		return nil, nil
+	}
+	return nil, fmt.Errorf("on or off is expected. Example: house private on")
+}
+
+// parseZone restores the capitals of a zone's name, which a typed line loses.
+func parseZone(value string) (any, error) {
+	if off(value) {
+		return nil, nil
+	}
+	if strings.EqualFold(value, "utc") {
+		return "UTC", nil
+	}
+	parts := strings.Split(value, "/")
+	for i, p := range parts {
+		words := strings.FieldsFunc(p, func(r rune) bool { return r == ' ' || r == '_' })
+		for j, w := range words {
+			words[j] = upperFirst(w)
+		}
+		parts[i] = strings.Join(words, "_")
+	}
+	return strings.Join(parts, "/"), nil
+}
+
+func parseOrder(value string) (any, error) {
+	if off(value) {
+		return nil, nil
+	}
+	var keys []string
+	for _, w := range strings.FieldsFunc(value, func(r rune) bool { return strings.ContainsRune(" /,;>", r) }) {
+		q, ok := shorthand.QuantityNamed(w)
+		if !ok {
+			return nil, fmt.Errorf("%q names no value. Example: house order ph co2 o2 hco3 sat", w)
+		}
+		keys = append(keys, q.Key())
+	}
+	return keys, nil
+}
+
+func orderWords(order []physio.Quantity) string {
+	if len(order) == 0 {
+		return "pH, PaCO2, PaO2, HCO3, SaO2"
+	}
+	names := make([]string, len(order))
+	for i, q := range order {
+		names[i] = q.Info().Symbol
+	}
+	return strings.Join(names, ", ")
+}
+
+// parseCritical reads "ph 7.2-7.6 paco2 70 pao2 45".
+func parseCritical(value string) (any, error) {
+	if off(value) {
+		return nil, nil
+	}
+	out := map[string]float64{}
+	fields := strings.FieldsFunc(value, func(r rune) bool { return r == ' ' || r == ',' || r == ';' })
+	for i := 0; i+1 < len(fields); i += 2 {
+		if err := criticalPair(out, fields[i], fields[i+1]); err != nil {
+			return nil, err
+		}
+	}
+	if len(out) == 0 || len(fields)%2 != 0 {
+		return nil, fmt.Errorf("limits are expected in pairs. Example: house critical ph 7.2-7.6 paco2 70 pao2 45")
+	}
+	return out, nil
+}
+
+func criticalPair(out map[string]float64, name, value string) error {
+	q, ok := shorthand.QuantityNamed(name)
+	low, high, isRange := strings.Cut(value, "-")
+	a, errA := strconv.ParseFloat(low, 64)
+	b, errB := a, error(nil)
+	if isRange {
+		b, errB = strconv.ParseFloat(high, 64)
+	}
+	if !ok || errA != nil || errB != nil {
+		return fmt.Errorf("%q %q is no limit. Example: house critical ph 7.2-7.6 paco2 70 pao2 45", name, value)
+	}
+	switch q {
+	case physio.PHq:
+		out["ph_low"], out["ph_high"] = a, b
+		if !isRange {
+			delete(out, "ph_high")
+		}
+	case physio.PaCO2:
+		out["paco2_high_mmhg"] = b
+	case physio.PaO2:
+		out["pao2_low_mmhg"] = a
+	default:
+		return fmt.Errorf("limits are kept for pH, PaCO2 and PaO2, not for %s", q.Info().Symbol)
+	}
+	return nil
+}
+
+func criticalWords(c physio.CriticalLimits) string {
+	var parts []string
+	addIf := func(v float64, text string) {
+		if v > 0 {
+			parts = append(parts, text)
+		}
+	}
+	addIf(c.PHLow, "pH below "+aboutPH(c.PHLow))
+	addIf(c.PHHigh, "pH above "+aboutPH(c.PHHigh))
+	addIf(c.PaCO2High, "PaCO2 above "+plain(c.PaCO2High, 0)+" mmHg")
+	addIf(c.PaO2Low, "PaO2 below "+plain(c.PaO2Low, 0)+" mmHg")
+	return strings.Join(parts, ", ")
+}

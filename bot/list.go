@@ -1,0 +1,126 @@
+package bot
+
+import (
+	"sort"
+	"strconv"
+
+	"galeward/bot/memory"
+	"galeward/bot/reply"
+	"galeward/physio"
+)
+
+// several answers a line with more than one gas: a series in its order, a list
+// of beds worst first, each read on its own, one line each.
+func (t *turn) several() {
+	cs := make([]*composer, len(t.line.Gases))
+	for i := range t.line.Gases {
+		g := t.line.Gases[i]
+		a := physio.Assess(g.Sample, t.settingFor(&g))
+		cs[i] = &composer{gas: &g, a: &a, n: numbers{t.v.House.Units}}
+	}
+	kind := "trend"
+	shown := append([]*composer(nil), cs...)
+	if t.line.List {
+		kind = "beds"
+		sort.SliceStable(shown, func(i, j int) bool { return shown[i].weight() > shown[j].weight() })
+	}
+	var r reply.Reply
+	r.Add(reply.Headline, countWords(cs))
+	for _, n := range t.notices() {
+		r.Add(reply.Notice, n)
+	}
+	for _, c := range shown {
+		r.Add(reply.Item, c.itemLine())
+	}
+	t.askOnce(cs, &r)
+	t.finish(kind, r)
+	for _, c := range cs {
+		t.answer.Machine.Gases = append(t.answer.Machine.Gases, c.machine(c.compose()))
+	}
+	t.keepSeveral(cs)
+}
+
+func (t *turn) keepSeveral(cs []*composer) {
+	entries := make([]memory.Entry, 0, len(cs))
+	for _, c := range cs {
+		entries = append(entries, memory.Entry{Message: t.e.Message, At: t.now(), Gas: *c.gas})
+	}
+	t.v.Put(entries...)
+	t.keeps = true
+}
+
+// askOnce puts the first open question of the list behind it.
+func (t *turn) askOnce(cs []*composer, r *reply.Reply) {
+	for i, c := range cs {
+		c.question = c.chooseQuestion()
+		if q := c.question; q != nil {
+			text := c.label(i) + ": " + q.text
+			r.Add(reply.Question, text)
+			t.answer.Machine.Question = &MachineQuestion{ID: q.id, Text: text, Choices: q.choices}
+			return
+		}
+	}
+}
+
+func (c *composer) label(i int) string {
+	switch {
+	case c.gas.Bed != "" && c.gas.Time != "":
+		return "Bed " + c.gas.Bed + ", " + c.gas.Time
+	case c.gas.Bed != "":
+		return "Bed " + c.gas.Bed
+	case c.gas.Time != "":
+		return c.gas.Time
+	}
+	return "Gas " + strconv.Itoa(i+1)
+}
+
+// itemLine is one gas in one sentence: label, verdicts, values as read.
+func (c *composer) itemLine() string {
+	label := ""
+	if c.gas.Bed != "" || c.gas.Time != "" {
+		label = c.label(0) + ": "
+	}
+	line := label + c.headline() + ". " + c.echo()
+	for _, caution := range c.a.Cautions {
+		if caution.Severity == physio.Major {
+			line += " Caution: " + c.cautionSentence(caution.Code)
+			break
+		}
+	}
+	return line
+}
+
+// weight orders a list of beds: critical first, then both axes, then one.
+func (c *composer) weight() int {
+	w := 10 * len(c.a.Critical)
+	switch c.a.Problem {
+	case physio.ProblemBoth:
+		w += 4
+	case physio.ProblemVentilation, physio.ProblemOxygenation:
+		w += 3
+	case physio.ProblemUndetermined:
+		w++
+	}
+	return w
+}
+
+// countWords counts the problems of a list in its first line.
+func countWords(cs []*composer) string {
+	counts := map[physio.Problem]int{}
+	for _, c := range cs {
+		counts[c.a.Problem]++
+	}
+	text := strconv.Itoa(len(cs)) + " gases"
+	for _, p := range []struct {
+		problem physio.Problem
+		word    string
+	}{
+		{physio.ProblemBoth, "both"}, {physio.ProblemVentilation, "CO2"},
+		{physio.ProblemOxygenation, "O2"}, {physio.ProblemNone, "neither"}, {physio.ProblemUndetermined, "open"},
+	} {
+		if n := counts[p.problem]; n > 0 {
+			text += ", " + strconv.Itoa(n) + " " + p.word
+		}
+	}
+	return text
+}

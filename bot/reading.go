@@ -1,0 +1,248 @@
+package bot
+
+import (
+	"strings"
+	"time"
+
+	"galeward/bot/memory"
+	"galeward/bot/reply"
+	"galeward/bot/shorthand"
+	"galeward/physio"
+)
+
+// reading answers a line that holds one gas or several.
+func (t *turn) reading() {
+	if len(t.line.Gases) > 1 {
+		t.several()
+		return
+	}
+	gas := t.line.Gases[0]
+	c := &composer{gas: &gas, n: numbers{t.v.House.Units}}
+	c.notices = t.notices()
+	last, hasLast := t.last()
+	switch {
+	case gas.Follow == shorthand.FollowNone:
+	case !hasLast:
+		c.question = &asked{id: askParent, text: askParentText}
+	case gas.Follow == shorthand.FollowNow:
+		t.inherit(c, last)
+	default:
+		t.complete(c, last)
+	}
+	t.deliverReading(c)
+}
+
+// deliverReading assesses, composes and remembers.
+func (t *turn) deliverReading(c *composer) {
+	a := physio.Assess(c.gas.Sample, t.settingFor(c.gas))
+	c.a = &a
+	if c.gas.Follow == shorthand.FollowNow && c.change != "" {
+		c.change = c.changeSentence(c.change, t)
+	}
+	r := c.compose()
+	t.answer.Machine = c.machine(r)
+	if t.v.FirstTime && t.e.User != "" {
+		r.Add(reply.Standing, standingNotice)
+	}
+	t.answer.Reply = r
+	t.keep(c)
+}
+
+// keep remembers the gas and the question that it left open.
+func (t *turn) keep(c *composer) {
+	t.keeps = true
+	t.v.Put(memory.Entry{Message: t.e.Message, At: t.now(), Gas: *c.gas})
+	if c.question != nil && c.question.from != nil {
+		t.v.Ask(*c.question.from, t.e.Message)
+	}
+}
+
+func (t *turn) now() time.Time {
+	if !t.e.At.IsZero() {
+		return t.e.At
+	}
+	return t.b.now()
+}
+
+// notices are our own state and the declined requests.
+func (t *turn) notices() []string {
+	var out []string
+	switch {
+	case t.v.Degraded && t.v.Known:
+		out = append(out, storeDown)
+	case t.v.Degraded:
+		out = append(out, storeDownBlank)
+	case t.v.Full:
+		out = append(out, storeFull)
+	}
+	for _, d := range t.line.Declined {
+		out = append(out, refusalText[d])
+	}
+	if text := laterWork[t.line.Intent]; text != "" {
+		out = append(out, text)
+	}
+	return out
+}
+
+// inherited quantities: what a follow-up takes over from the gas before it,
+// settings and the patient, never what was measured in the blood.
+var inheritedQuantities = []physio.Quantity{
+	physio.FiO2, physio.OxygenFlow, physio.RR, physio.RRSet, physio.VT, physio.VTPerKg, physio.VE,
+	physio.PEEP, physio.PS, physio.PC, physio.IPAP, physio.EPAP, physio.CPAP, physio.PHigh, physio.PLow,
+	physio.THigh, physio.TLow, physio.Hb, physio.Age, physio.Gestation, physio.Height, physio.Weight,
+	physio.PBW, physio.PB, physio.Altitude,
+}
+
+// inherit takes over from the gas before what the follow-up did not say, and
+// names it and its age.
+func (t *turn) inherit(c *composer, last memory.Entry) {
+	g, before := c.gas, last.Gas
+	oxygenSaid := g.Sample.Has(physio.FiO2) || g.Sample.Device != physio.DeviceUnstated || g.Sample.Has(physio.OxygenFlow)
+	var names []string
+	for _, q := range inheritedQuantities {
+		if g.Sample.Has(q) || oxygenSaid && (q == physio.FiO2 || q == physio.OxygenFlow) {
+			continue
+		}
+		if v, ok := before.Sample.Get(q); ok {
+			g.Sample.Set(q, v)
+			names = append(names, shortName(q))
+		}
+	}
+	if !oxygenSaid && before.Sample.Device != physio.DeviceUnstated {
+		g.Sample.Device, g.Sample.DeviceTaken = before.Sample.Device, before.Sample.DeviceTaken
+		names = append(names, deviceWord[before.Sample.Device])
+	}
+	inheritPatient(g, &before)
+	c.change = agoWords(t.now().Sub(last.At))
+	if len(names) > 0 {
+		c.inherited = "Taken over from the gas " + c.change + ": " + strings.Join(names, ", ") + "."
+	}
+	t.before = &before
+}
+
+func shortName(q physio.Quantity) string { return q.Info().Symbol }
+
+// inheritPatient takes over what belongs to the patient and the bed.
+func inheritPatient(g, before *shorthand.Gas) {
+	if g.Sample.Sex == physio.SexUnstated {
+		g.Sample.Sex = before.Sample.Sex
+	}
+	if g.Sample.Population == physio.PopulationUnstated {
+		g.Sample.Population, g.Sample.Trimester = before.Sample.Population, before.Sample.Trimester
+	}
+	if g.Sample.Mode == physio.ModeUnstated {
+		g.Sample.Mode = before.Sample.Mode
+	}
+	if g.Bed == "" {
+		g.Bed = before.Bed
+	}
+	if g.Target == nil {
+		g.Target = before.Target
+	}
+	g.Sample.Circumstance |= before.Sample.Circumstance &^ (physio.JustChanged | physio.CPR)
+}
+
+// agoWords says how old the parent gas is.
+func agoWords(d time.Duration) string {
+	switch {
+	case d < 90*time.Second:
+		return "just before"
+	case d < 2*time.Hour:
+		return plain(d.Minutes(), 0) + " min ago"
+	}
+	return plain(d.Hours(), 0) + " h ago"
+}
+
+// complete adds to the last gas or corrects it: the result stands in its place
+// and the earlier reading is void.
+func (t *turn) complete(c *composer, last memory.Entry) {
+	g := last.Gas
+	add := c.gas
+	oxygenSaid := add.Sample.Has(physio.FiO2) || add.Sample.Device != physio.DeviceUnstated
+	if oxygenSaid && !add.Sample.Has(physio.FiO2) {
+		g.Sample.Drop(physio.FiO2)
+	}
+	g.Sample.Values.Merge(&add.Sample.Values)
+	mergeWords(&g.Sample, &add.Sample)
+	if add.Bed != "" {
+		g.Bed = add.Bed
+	}
+	if add.Target != nil {
+		g.Target = add.Target
+	}
+	g.Notes = append(append([]shorthand.Note(nil), g.Notes...), add.Notes...)
+	g.Questions = add.Questions
+	g.Follow = add.Follow
+	if add.Follow == shorthand.FollowCorrection {
+		c.notices = append(c.notices, earlierVoid)
+	}
+	t.v.Void(last.Message)
+	*c.gas = g
+}
+
+func mergeWords(s, add *physio.Sample) {
+	if add.Blood != physio.BloodUnstated && add.Blood != physio.NoBlood {
+		s.Blood, s.Site = add.Blood, add.Site
+	}
+	if add.Device != physio.DeviceUnstated {
+		s.Device, s.DeviceTaken = add.Device, add.DeviceTaken
+	}
+	if add.Mode != physio.ModeUnstated {
+		s.Mode = add.Mode
+	}
+	if add.Sex != physio.SexUnstated {
+		s.Sex = add.Sex
+	}
+	if add.Population != physio.PopulationUnstated {
+		s.Population, s.Trimester = add.Population, add.Trimester
+	}
+	s.Circumstance |= add.Circumstance
+}
+
+// released applies the choice that answered the open question.
+func (t *turn) released() {
+	_, message := t.v.Thread().Pending()
+	var parent memory.Entry
+	for _, e := range t.v.Thread().Entries() {
+		if e.Message == message && !e.Void {
+			parent = e
+		}
+	}
+	if parent.Message == "" || t.line.Picked == nil {
+		t.unclear()
+		return
+	}
+	g := parent.Gas
+	p := t.line.Picked
+	g.Sample.Drop(p.Drop...)
+	g.Sample.Values.Merge(&p.Set)
+	if p.Blood != physio.BloodUnstated {
+		g.Sample.Blood = p.Blood
+	}
+	if p.Device != physio.DeviceUnstated {
+		g.Sample.Device, g.Sample.DeviceTaken = p.Device, false
+	}
+	g.Questions = dropAnswered(g.Questions)
+	t.v.Void(parent.Message)
+	t.deliverReading(&composer{gas: &g, n: numbers{t.v.House.Units}, notices: t.notices()})
+}
+
+// dropAnswered takes the first question away: it is the one that was asked.
+func dropAnswered(qs []shorthand.Question) []shorthand.Question {
+	if len(qs) == 0 {
+		return nil
+	}
+	return append([]shorthand.Question(nil), qs[1:]...)
+}
+
+// readAgain shows the last gas once more, with a notice before it.
+func (t *turn) readAgain(last memory.Entry, notice string) {
+	g := last.Gas
+	a := physio.Assess(g.Sample, t.settingFor(&g))
+	c := &composer{gas: &g, a: &a, n: numbers{t.v.House.Units}}
+	if notice != "" {
+		c.notices = []string{notice}
+	}
+	r := c.compose()
+	t.answer.Reply, t.answer.Machine = r, c.machine(r)
+}

@@ -1,0 +1,226 @@
+package bot
+
+import (
+	"context"
+	"fmt"
+
+	"galeward/bot/memory"
+	"galeward/bot/reply"
+	"galeward/bot/shorthand"
+	"galeward/physio"
+)
+
+// turn is one event on its way through the bot: what was remembered, what was
+// read, and the answer in the making.
+type turn struct {
+	b      *Bot
+	ctx    context.Context
+	e      Event
+	v      *memory.Visit
+	line   shorthand.Line
+	answer Answer
+	// keeps is true when the thread has to be saved even without an answer.
+	keeps bool
+	// before is the gas that a follow-up follows, nil for none.
+	before *shorthand.Gas
+	// amends is the post that the answer replaces, "" for a new one.
+	amends Ref
+}
+
+// begin loads what is remembered and claims the event. It returns nil when the
+// event was already taken.
+func (b *Bot) begin(ctx context.Context, e Event) (*turn, error) {
+	v, err := b.memory.Load(ctx, memory.Call{
+		Where: whereOf(e.Where), Delivery: e.Delivery, User: e.User, Message: e.Message,
+		Opens: e.Where.Thread == "" && e.Can.Has(CanThread),
+	})
+	if v == nil {
+		return nil, err
+	}
+	if v.Claim == memory.Duplicate {
+		return nil, nil
+	}
+	return &turn{b: b, ctx: ctx, e: e, v: v}, err
+}
+
+func whereOf(p Place) memory.Where {
+	return memory.Where{Platform: p.Platform, Workspace: p.Workspace, Channel: p.Channel, Thread: p.Thread}
+}
+
+// work answers the event.
+func (t *turn) work() {
+	switch t.e.Kind {
+	case Deleted:
+		t.deleted()
+		return
+	case Edited:
+		t.edited()
+		return
+	case Pressed:
+		t.e.Text = t.e.Token
+	case Shortcut:
+		if t.e.About != nil {
+			t.e.Text = t.e.About.Text
+		}
+		t.answer.Private = true
+	}
+	t.typed()
+}
+
+// typed reads the line and runs what it asks for.
+func (t *turn) typed() {
+	if !t.meant() {
+		return
+	}
+	t.line = shorthand.Parse(t.e.Text, t.habits())
+	t.answer.Private = t.answer.Private || t.e.Private || t.v.House.Private
+	switch t.line.Kind {
+	case shorthand.Refusal:
+		t.refuse()
+	case shorthand.Unclear:
+		t.unclear()
+	case shorthand.Command:
+		t.command()
+	case shorthand.Released:
+		t.released()
+	case shorthand.Reading:
+		t.reading()
+	default:
+		t.answer.Machine = Machine{V: MachineVersion, Kind: "silence"}
+	}
+}
+
+// meant says which messages are read: those that address the bot, replies in
+// a thread in which it answered, and the rest only where the house listens.
+func (t *turn) meant() bool {
+	inThread := t.e.Where.Thread != "" && len(t.v.Thread().Entries()) > 0
+	if t.e.Addressed || t.e.Listening || inThread || t.v.House.Listen {
+		return true
+	}
+	t.answer.Machine = Machine{V: MachineVersion, Kind: "silence"}
+	return false
+}
+
+func (t *turn) habits() shorthand.Habits {
+	h := t.v.House.Habits()
+	h.Addressed = t.e.Addressed
+	if last, ok := t.last(); ok {
+		h.Earlier = &last.Gas.Sample
+	}
+	h.Pending, _ = t.v.Thread().Pending()
+	return h
+}
+
+// last is the last gas of the thread that holds, unless the event edits it.
+func (t *turn) last() (memory.Entry, bool) {
+	entries := t.v.Thread().Entries()
+	for i := len(entries) - 1; i >= 0; i-- {
+		e := entries[i]
+		if !e.Void && (t.e.Kind != Edited || e.Message != t.e.Message) {
+			return e, true
+		}
+	}
+	return memory.Entry{}, false
+}
+
+func (t *turn) refuse() {
+	var r reply.Reply
+	r.Add(reply.Notice, refusalText[t.line.Refused])
+	t.answer.Reply = r
+	t.answer.Machine = Machine{V: MachineVersion, Kind: "refusal", Text: r.Text()}
+}
+
+func (t *turn) unclear() {
+	var r reply.Reply
+	r.Add(reply.Question, hintGas+shorthand.Example(t.habits()))
+	t.finish("question", r)
+}
+
+// finish sets an answer that is not a reading.
+func (t *turn) finish(kind string, r reply.Reply) {
+	t.answer.Reply = r
+	t.answer.Machine = Machine{V: MachineVersion, Kind: kind, Headline: headlineOf(r), Text: r.Text()}
+}
+
+func (t *turn) command() {
+	if c, ok := commandFor(t.line.Intent); ok && c.intent != shorthand.IntentNow {
+		c.run(t)
+		return
+	}
+	t.parentless()
+}
+
+// parentless answers a command that needs a gas and has none.
+func (t *turn) parentless() {
+	last, ok := t.last()
+	if !ok {
+		var r reply.Reply
+		r.Add(reply.Question, askParentText)
+		t.finish("question", r)
+		t.answer.Machine.Question = &MachineQuestion{ID: askParent, Text: askParentText}
+		return
+	}
+	t.line.Gases = []shorthand.Gas{last.Gas}
+	t.readAgain(last, laterWork[t.line.Intent])
+}
+
+// laterWork says, where a line asks for something that the gas alone does not
+// answer, what the answer below is.
+var laterWork = map[shorthand.Intent]string{
+	shorthand.IntentAim:     "Targets are not worked out by this version: the gas as it stands.",
+	shorthand.IntentSuppose: "Changes are not worked out by this version: the gas as it stands.",
+	shorthand.IntentCheck:   "Claims are not judged one by one by this version: the reading to hold them against.",
+}
+
+// forget takes the thread's gases away.
+func (t *turn) forget() {
+	n := len(t.v.Thread().Entries())
+	t.v.Forget()
+	t.keeps = true
+	var r reply.Reply
+	r.Add(reply.Headline, fmt.Sprintf("Forgotten: %d gases of this thread", n))
+	t.finish("forget", r)
+}
+
+// edited reads the changed question and replaces its answer.
+func (t *turn) edited() {
+	before := t.v.ByMessage(t.e.Message)
+	if len(before) > 0 {
+		t.amends = Ref(before[0].Post)
+	}
+	t.typed()
+	if t.line.Kind != shorthand.Reading && len(before) > 0 {
+		t.v.Remove(t.e.Message)
+		t.keeps = true
+		if t.answer.Reply.Empty() {
+			t.withdraw()
+		}
+	}
+}
+
+// deleted takes the question's gases away and says so where the answer stood.
+func (t *turn) deleted() {
+	before := t.v.ByMessage(t.e.Message)
+	if len(before) == 0 {
+		return
+	}
+	t.amends = Ref(before[0].Post)
+	t.v.Remove(t.e.Message)
+	t.keeps = true
+	t.withdraw()
+}
+
+func (t *turn) withdraw() {
+	var r reply.Reply
+	r.Add(reply.Notice, withdrawn)
+	t.finish("forget", r)
+}
+
+// settingFor is the house's setting with a target said in the line.
+func (t *turn) settingFor(g *shorthand.Gas) physio.Setting {
+	set := t.v.House.Setting()
+	if g.Target != nil {
+		set.Target = g.Target
+	}
+	return set
+}

@@ -71,7 +71,7 @@ func (w *way) send(ctx context.Context, r reply.Reply, thread string, limit int,
 	for _, part := range parts(r, limit) {
 		m := render(part, thread)
 		made, err := one(m)
-		if tooBig(err) && limit > smallest {
+		if tooBig(err) && min(limit, size(part)) > smallest {
 			made, err = w.send(ctx, part, thread, min(limit, size(part))/2+1, one)
 		} else if tooBig(err) {
 			made, err = one(message{text: m.text})

@@ -169,7 +169,7 @@ func TestOneMentionTwoEvents(t *testing.T) {
 		for _, send := range sends {
 			send()
 		}
-		f.Say(slackfake.Message{Channel: slackfake.DM, Text: "last"})
+		f.Mention(slackfake.Message{Text: "last"})
 		f.Until("three answers", func() bool { return len(h.Errors()) >= 3 })
 		posts := f.Wait(2)
 		if len(posts) != 2 || posts[0].Shown != "second" || posts[0].Updates != 1 || posts[0].Thread != ts {

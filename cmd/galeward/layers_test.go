@@ -57,6 +57,8 @@ var layers = []layer{
 		"a chat adapter translates: no physiology, no sibling, its own library only"},
 	{"adapters/slack", []string{"bot", "bot/reply", "adapters/transport", "github.com/slack-go/slack/..."}, false,
 		"a chat adapter translates: no physiology, no sibling, its own library only"},
+	{"adapters/slack/slackfake", nil, true,
+		"a fake platform speaks the platform's protocol and knows nothing of the bot"},
 	{"adapters/*", []string{"bot", "bot/reply", "adapters/transport"}, true,
 		"a chat adapter translates: no physiology, no sibling"},
 	{"cmd/galeward", []string{"bot/...", "adapters/..."}, true,

@@ -50,11 +50,13 @@ type questionDoc struct {
 }
 
 type choiceDoc struct {
-	Word   string        `json:"word"`
-	Set    physio.Values `json:"set"`
-	Drop   []quantityDoc `json:"drop,omitempty"`
-	Blood  physio.Blood  `json:"blood,omitempty"`
-	Device physio.Device `json:"device,omitempty"`
+	Word         string        `json:"word"`
+	Set          physio.Values `json:"set"`
+	Drop         []quantityDoc `json:"drop,omitempty"`
+	Blood        physio.Blood  `json:"blood,omitempty"`
+	Device       physio.Device `json:"device,omitempty"`
+	Sex          physio.Sex    `json:"sex,omitempty"`
+	Circumstance []string      `json:"circumstance,omitempty"`
 }
 
 // quantityDoc is a quantity under its key.
@@ -164,7 +166,11 @@ func decodeGas(raw json.RawMessage) (g shorthand.Gas, err error) {
 		g.Notes = append(g.Notes, shorthand.Note{Code: n.Code, Quantity: physio.Quantity(n.Quantity), Typed: n.Typed, Value: n.Value})
 	}
 	for i := range d.Questions {
-		g.Questions = append(g.Questions, questionIn(&d.Questions[i]))
+		q, err := questionIn(&d.Questions[i])
+		if err != nil {
+			return g, err
+		}
+		g.Questions = append(g.Questions, q)
 	}
 	g.Follow, err = followOf(d.Follow)
 	return g, err
@@ -173,7 +179,9 @@ func decodeGas(raw json.RawMessage) (g shorthand.Gas, err error) {
 func questionOut(q *shorthand.Question) questionDoc {
 	d := questionDoc{Code: q.Code, Quantity: quantityDoc(q.Quantity), Typed: q.Typed, Value: q.Value}
 	for _, c := range q.Choices {
-		out := choiceDoc{Word: c.Word, Set: c.Set, Blood: c.Blood, Device: c.Device}
+		out := choiceDoc{
+			Word: c.Word, Set: c.Set, Blood: c.Blood, Device: c.Device, Sex: c.Sex, Circumstance: circumstanceNames(c.Circumstance),
+		}
 		for _, drop := range c.Drop {
 			out.Drop = append(out.Drop, quantityDoc(drop))
 		}
@@ -182,16 +190,19 @@ func questionOut(q *shorthand.Question) questionDoc {
 	return d
 }
 
-func questionIn(d *questionDoc) shorthand.Question {
-	q := shorthand.Question{Code: d.Code, Quantity: physio.Quantity(d.Quantity), Typed: d.Typed, Value: d.Value}
+func questionIn(d *questionDoc) (q shorthand.Question, err error) {
+	q = shorthand.Question{Code: d.Code, Quantity: physio.Quantity(d.Quantity), Typed: d.Typed, Value: d.Value}
 	for _, c := range d.Choices {
-		in := shorthand.Choice{Word: c.Word, Set: c.Set, Blood: c.Blood, Device: c.Device}
+		in := shorthand.Choice{Word: c.Word, Set: c.Set, Blood: c.Blood, Device: c.Device, Sex: c.Sex}
+		if in.Circumstance, err = circumstanceOf(c.Circumstance); err != nil {
+			return q, err
+		}
 		for _, drop := range c.Drop {
 			in.Drop = append(in.Drop, physio.Quantity(drop))
 		}
 		q.Choices = append(q.Choices, in)
 	}
-	return q
+	return q, nil
 }
 
 // clean keeps an entry to what may be remembered, whatever the reader of the
@@ -222,9 +233,15 @@ func cleanQuestion(q shorthand.Question) shorthand.Question {
 	return q
 }
 
-// digits keeps the digits and signs of a typed token.
+// digits keeps the digits and signs that a typed token begins with: what
+// comes behind anything else is not the token.
 func digits(s string) string {
-	return keep(s, 24, func(r rune) bool { return r >= '0' && r <= '9' || strings.ContainsRune(".,:/+-<>%", r) })
+	const signs = "0123456789.,:/+-<>%'\""
+	end := strings.IndexFunc(s, func(r rune) bool { return !strings.ContainsRune(signs, r) })
+	if end >= 0 {
+		s = s[:end]
+	}
+	return s[:min(len(s), 16)]
 }
 
 // label keeps what a label may hold, up to a number of characters.

@@ -91,7 +91,10 @@ func decodeThread(raw []byte) (t Thread, err error) {
 		})
 	}
 	if d.Pending != nil {
-		q := questionIn(d.Pending)
+		q, err := questionIn(d.Pending)
+		if err != nil {
+			return Thread{}, threadSchema.unreadable(err)
+		}
 		t.pending, t.of = &q, d.Of
 	}
 	t.asked, t.flat = d.Asked, d.Flat

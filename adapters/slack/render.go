@@ -36,7 +36,7 @@ func parts(r reply.Reply, limit int) []reply.Reply {
 	var part reply.Reply
 	room := limit
 	for _, b := range pieces(r.Blocks, limit) {
-		need := width(escape(b.Text)) + 1
+		need := escapedWidth(b.Text) + 1
 		// One block is left for the buttons.
 		if len(part.Blocks) > 0 && (need > room || len(part.Blocks) == maxBlocks-1) {
 			out = append(out, part)
@@ -63,7 +63,10 @@ func pieces(blocks []reply.Block, limit int) []reply.Block {
 // size measures a reply as Slack counts a message; the notification text is
 // escaped and may be longer than what the blocks show.
 func size(r reply.Reply) int {
-	n := width(escape(r.Text()))
+	n := 0
+	for _, b := range r.Blocks {
+		n += escapedWidth(b.Text) + 1
+	}
 	for _, b := range r.Buttons {
 		n += width(b.Label) + width(b.Token)
 	}

@@ -88,9 +88,10 @@ func TestGoldenRenderings(t *testing.T) {
 // words makes text of about n characters, some of which Slack escapes.
 func words(rng *rand.Rand, n int) string {
 	var b strings.Builder
+	letters := []rune("abc7.2/&<>*_~`é🫁")
 	for b.Len() < n {
 		for range 1 + rng.IntN(12) {
-			b.WriteRune([]rune("abc7.2/&<>*_~`é🫁")[rng.IntN(16)])
+			b.WriteRune(letters[rng.IntN(len(letters))])
 		}
 		b.WriteByte(' ')
 	}
@@ -124,6 +125,9 @@ func TestArbitraryReplies(t *testing.T) {
 		}
 		for _, part := range parts(r, maxMessage) {
 			m := render(part, "1.2")
+			if size(part)-1 < width(m.text) {
+				t.Fatalf("counted %d for %d characters", size(part), width(m.text))
+			}
 			if len(m.blocks) > maxBlocks || width(m.text) > 40000 {
 				t.Fatalf("%d blocks, %d characters of text", len(m.blocks), width(m.text))
 			}

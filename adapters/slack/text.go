@@ -79,6 +79,11 @@ func width(text string) int {
 	return n
 }
 
+// escapedWidth is the width of escape(text), without making it.
+func escapedWidth(text string) int {
+	return width(text) + 4*strings.Count(text, "&") + 3*strings.Count(text, "<") + 3*strings.Count(text, ">")
+}
+
 // chop cuts text into pieces of at most limit, at a space or a line's end
 // where there is one in the second half of a piece.
 func chop(text string, limit int) []string {

@@ -124,7 +124,7 @@ func (c *Console) event(text string) bot.Event {
 	return bot.Event{
 		Kind: bot.Typed, Delivery: id, Message: id,
 		Where: Place(c.session),
-		User:  "you", Text: text, At: c.now(),
+		User:  "you", Text: text, At: c.now(), Listening: true,
 	}
 }
 

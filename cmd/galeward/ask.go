@@ -116,12 +116,13 @@ func (a *asker) answer(ctx context.Context, text string) error {
 func (a *asker) event(text string) bot.Event {
 	id := strconv.Itoa(a.asked)
 	where := askPlace()
-	if a.thread {
-		where.Thread = "1"
+	where.Thread = "1"
+	if !a.thread {
+		where.Thread = id // each line stands alone
 	}
 	return bot.Event{
 		Kind: bot.Typed, Delivery: id, Message: id, Where: where,
-		User: "you", Text: text, At: time.Now(),
+		Text: text, At: time.Now(), Listening: true,
 	}
 }
 

@@ -98,15 +98,14 @@ func adultOxygen(p Population) bool {
 }
 
 func (s OxygenSupply) estimate() (Interval, bool, error) {
-	unknown := &MissingError{Need: []Quantity{FiO2}}
 	if s.BledIn {
-		return Interval{}, false, unknown
+		return unknownOxygen(FiO2)
 	}
 	if s.Device == Air {
 		return Interval{Value: airFraction, Low: airFraction, High: airFraction}, false, nil
 	}
 	if !adultOxygen(s.Population) {
-		return Interval{}, false, unknown
+		return unknownOxygen(FiO2)
 	}
 	switch {
 	case s.Device == SimpleMask:
@@ -116,7 +115,11 @@ func (s OxygenSupply) estimate() (Interval, bool, error) {
 	case s.Device == Cannula, s.Device == DeviceUnstated && s.Flow != 0:
 		return s.cannula()
 	}
-	return Interval{}, false, unknown
+	return unknownOxygen(FiO2)
+}
+
+func unknownOxygen(need Quantity) (Interval, bool, error) {
+	return Interval{}, false, &MissingError{Need: []Quantity{need}}
 }
 
 func span(low, high float64) Interval {
@@ -128,7 +131,7 @@ const cannulaMost = 6.0
 
 func (s OxygenSupply) cannula() (Interval, bool, error) {
 	if s.Flow == 0 {
-		return Interval{}, false, &MissingError{Need: []Quantity{OxygenFlow}}
+		return unknownOxygen(OxygenFlow)
 	}
 	if s.Flow > cannulaMost {
 		return Interval{}, false, &RangeError{Quantity: OxygenFlow, Got: float64(s.Flow), Low: 0, High: cannulaMost}

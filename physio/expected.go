@@ -191,7 +191,10 @@ func UsualPaCO2(pco2 Pressure, hco3 Concentration, from Anchor) (Span, error) {
 		given{name: "usual PaCO2", v: usual.Low, low: from.PaCO2, high: pco2.MmHg()},
 		given{name: "usual PaCO2", v: usual.High, low: from.PaCO2, high: pco2.MmHg()},
 	)
-	return usual, err
+	if err != nil {
+		return Span{}, err
+	}
+	return usual, nil
 }
 
 func usualPaCO2(pco2, hco3 float64, from Anchor) Span {

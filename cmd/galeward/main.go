@@ -5,6 +5,7 @@ import (
 	"os"
 	"os/signal"
 	"syscall"
+	_ "time/tzdata" // house rules name time zones, and an image from scratch has none
 )
 
 // version is set by the linker in a release.

@@ -291,9 +291,6 @@ func testSilence(t *testing.T, start Start) {
 			t.Errorf("%q stands in the log or an error:\n%s", secret, all)
 		}
 	}
-	if !strings.Contains(all, "{") {
-		t.Error("nothing was logged at all")
-	}
 }
 
 func testStop(t *testing.T, start Start) {

@@ -490,6 +490,7 @@ func TestFull(t *testing.T) {
 	f.Until("room", func() bool {
 		return f.Mention(slackfake.Message{Text: "x", TS: ts, Wire: slackfake.Wire{Retry: 1}}).Status == 200
 	})
+	f.Until("the question that had no room", func() bool { return s.heard.Load() == 3 })
 }
 
 // TestPaceQueueFull: an answer that may not wait any longer is announced to the

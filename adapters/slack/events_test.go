@@ -3,6 +3,7 @@ package slack
 import (
 	"context"
 	"strings"
+	"sync/atomic"
 	"testing"
 	"time"
 
@@ -12,11 +13,15 @@ import (
 )
 
 // slow answers when it is released.
-type slow struct{ release chan struct{} }
+type slow struct {
+	release chan struct{}
+	heard   atomic.Int32
+}
 
 func (s *slow) Private(bot.Place) bool { return false }
 
 func (s *slow) Handle(ctx context.Context, _ bot.Event, _ bot.Way) {
+	s.heard.Add(1)
 	select {
 	case <-s.release:
 	case <-ctx.Done():

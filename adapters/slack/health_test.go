@@ -5,6 +5,7 @@ import (
 	"context"
 	"fmt"
 	"log/slog"
+	"regexp"
 	"strings"
 	"testing"
 
@@ -98,5 +99,28 @@ func TestSettingsHideSecrets(t *testing.T) {
 	all := log.String() + fmt.Sprint(c) + fmt.Sprintf("%v %+v %#v %s", c, c, c, c)
 	if strings.Contains(all, "hidden-") {
 		t.Error(all)
+	}
+}
+
+// TestLogLines: one line an event, as JSON, with its kind and time and nothing
+// else of it. That no text stands there is tested for every adapter.
+func TestLogLines(t *testing.T) {
+	var log bytes.Buffer
+	h := &adaptertest.Handler{}
+	f, a := connect(t, h, slog.New(slog.NewJSONHandler(&log, nil)), nil)
+	ack := f.Mention(slackfake.Message{Text: "x"})
+	f.Mention(slackfake.Message{Text: "x", TS: ack.TS})
+	f.Send("/slack/events", "application/json", []byte("{}"), slackfake.Wire{Forged: true})
+	if err := a.Shutdown(context.Background()); err != nil {
+		t.Fatal(err)
+	}
+	for _, want := range []string{
+		`"msg":"slack: event handled","event":"[0-9a-f]{16}","how":"mention","ms":\d+}`,
+		`"msg":"slack: repeated delivery left out","event":"[0-9a-f]{16}","how":"mention"}`,
+		`"msg":"slack: request refused","path":"/slack/events","status":401}`,
+	} {
+		if n := len(regexp.MustCompile(want).FindAllString(log.String(), -1)); n != 1 {
+			t.Errorf("%d lines like %s in\n%s", n, want, log.String())
+		}
 	}
 }

@@ -51,9 +51,6 @@ func (a *Adapter) signed(next func(http.ResponseWriter, *http.Request, []byte)) 
 }
 
 func (a *Adapter) read(w http.ResponseWriter, r *http.Request) ([]byte, int) {
-	if r.ContentLength > a.cfg.BodyLimit {
-		return nil, http.StatusRequestEntityTooLarge
-	}
 	body, err := io.ReadAll(http.MaxBytesReader(w, r.Body, a.cfg.BodyLimit))
 	var tooLarge *http.MaxBytesError
 	switch {

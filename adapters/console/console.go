@@ -71,7 +71,7 @@ func New(o Options) (*Console, error) {
 func (c *Console) Run(ctx context.Context, h bot.Handler) (err error) {
 	defer func() { err = errors.Join(err, c.restore()) }()
 	if c.width() > 0 {
-		fmt.Fprintln(c.out, "Type values, or help. Leave with quit or Ctrl-D.")
+		fmt.Fprintln(c.out, Wrap("Type values, or help. Leave with quit or Ctrl-D.", c.width()))
 	}
 	for {
 		text, err := c.read(ctx)

@@ -54,7 +54,7 @@ func (a *asker) lines(ctx context.Context, in io.Reader) error {
 	for {
 		select {
 		case <-ctx.Done():
-			return context.Cause(ctx)
+			return errors.New("interrupted")
 		case l := <-next:
 			if l.text != "" {
 				if err := a.answer(ctx, strings.TrimRight(l.text, "\r\n")); err != nil {

@@ -12,8 +12,6 @@ func percent(f physio.Fraction, err error) (float64, error) { return f.Percent()
 // number turns any defined type into the plain number of its canonical unit.
 func number[T ~float64](v T, err error) (float64, error) { return float64(v), err }
 
-func inKPa(p physio.Pressure, err error) (float64, error) { return p.KPa(), err }
-
 func (in *inputs) shift() physio.CurveShift {
 	at := physio.CurveShift{PH: physio.PH(in.or("ph", 0)), Temp: physio.Celsius(in.or("temp_c", 0))}
 	if in.has("pco2_mmhg") {
@@ -22,19 +20,23 @@ func (in *inputs) shift() physio.CurveShift {
 	return at
 }
 
+// optional reads a pressure that a row may leave out.
+func (in *inputs) optional(name string, otherwise physio.Pressure) physio.Pressure {
+	if in.has(name+"_mmhg") || in.has(name+"_kpa") {
+		return in.pressure(name)
+	}
+	return otherwise
+}
+
 // gas reads the alveolar gas. The rows' water vapour, 47 or 47.1, is the one
 // of 37 C.
 func (in *inputs) gas() physio.AlveolarGas {
-	if w := in.or("ph2o_mmhg", 47); w < 46.9 || w > 47.2 {
+	if w := in.optional("ph2o", 47).MmHg(); w < 46.9 || w > 47.2 {
 		in.t.Fatalf("water vapour %v is not that of 37 C", w)
 	}
-	g := physio.AlveolarGas{
-		FiO2: physio.Fraction(in.f("fio2")), PB: physio.MmHg(in.or("pb_mmhg", 760)), R: in.or("r", 0),
+	return physio.AlveolarGas{
+		FiO2: physio.Fraction(in.f("fio2")), PB: in.optional("pb", 760), PaCO2: in.optional("paco2", 0), R: in.or("r", 0),
 	}
-	if in.has("paco2_mmhg") {
-		g.PaCO2 = in.pressure("paco2")
-	}
-	return g
 }
 
 func (in *inputs) binding() physio.Binding {
@@ -113,32 +115,32 @@ var oxygenMeasures = map[string]measure{
 		}.Saturation())
 	},
 	"po2_ellis1989": func(in *inputs) (float64, error) {
-		return number(physio.PO2Ellis(physio.Percent(in.f("so2_pct"))))
+		return in.in(physio.PO2Ellis(physio.Percent(in.f("so2_pct"))))
 	},
 	"po2_severinghaus1979_eq2": func(in *inputs) (float64, error) {
-		return number(physio.PO2Severinghaus(physio.Percent(in.f("so2_pct"))))
+		return in.in(physio.PO2Severinghaus(physio.Percent(in.f("so2_pct"))))
 	},
 	"po2_from_so2_ph": func(in *inputs) (float64, error) {
-		return number(physio.PO2EllisShifted(physio.Percent(in.f("so2_pct")), in.shift()))
+		return in.in(physio.PO2EllisShifted(physio.Percent(in.f("so2_pct")), in.shift()))
 	},
 	"p50": func(in *inputs) (float64, error) {
 		p50, ok := p50Curves[in.word("curve")]
 		if !ok {
 			return 0, fmt.Errorf("no curve %q", in.word("curve"))
 		}
-		return number(p50())
+		return in.in(p50())
 	},
 	"pb_isa": func(in *inputs) (float64, error) {
-		return number(physio.StandardAtmosphere(physio.Metres(in.f("altitude_m"))))
+		return in.in(physio.StandardAtmosphere(physio.Metres(in.f("altitude_m"))))
 	},
 	"pb_west1996": func(in *inputs) (float64, error) {
-		return number(physio.PressureAtAltitude(physio.Metres(in.f("altitude_m"))))
+		return in.in(physio.PressureAtAltitude(physio.Metres(in.f("altitude_m"))))
 	},
-	"ph2o_saturated":      func(in *inputs) (float64, error) { return inKPa(physio.WaterVapour(physio.Celsius(in.f("temp_c")))) },
-	"pio2":                func(in *inputs) (float64, error) { return number(physio.InspiredPO2(in.gas())) },
-	"pao2_alveolar_short": func(in *inputs) (float64, error) { return number(physio.AlveolarPO2Short(in.gas())) },
-	"pao2_alveolar_full":  func(in *inputs) (float64, error) { return number(physio.AlveolarPO2(in.gas())) },
-	"pao2_alveolar_r1":    func(in *inputs) (float64, error) { return number(physio.AlveolarPO2(in.gas())) },
+	"ph2o_saturated":      func(in *inputs) (float64, error) { return in.in(physio.WaterVapour(physio.Celsius(in.f("temp_c")))) },
+	"pio2":                func(in *inputs) (float64, error) { return in.in(physio.InspiredPO2(in.gas())) },
+	"pao2_alveolar_short": func(in *inputs) (float64, error) { return in.in(physio.AlveolarPO2Short(in.gas())) },
+	"pao2_alveolar_full":  func(in *inputs) (float64, error) { return in.in(physio.AlveolarPO2(in.gas())) },
+	"pao2_alveolar_r1":    func(in *inputs) (float64, error) { return in.in(physio.AlveolarPO2(in.gas())) },
 	"pao2_alveolar_F_term": func(in *inputs) (float64, error) {
 		g := in.gas()
 		full, err := physio.AlveolarPO2(g)
@@ -149,7 +151,7 @@ var oxygenMeasures = map[string]measure{
 		return float64(full - short), err
 	},
 	"aa_difference": func(in *inputs) (float64, error) {
-		return number(physio.AlveolarArterial(physio.Tensions{
+		return in.in(physio.AlveolarArterial(physio.Tensions{
 			Alveolar: physio.MmHg(in.f("pao2_alveolar")), Arterial: in.pressure("pao2"),
 		}))
 	},
@@ -229,13 +231,13 @@ var oxygenMeasures = map[string]measure{
 		if err != nil {
 			return 0, err
 		}
-		return number(physio.PFAtAltitude(physio.PFAt{PF: pf, PB: in.pressure("pb")}))
+		return in.in(physio.PFAtAltitude(physio.PFAt{PF: pf, PB: in.pressure("pb")}))
 	},
 	"pao2_predicted_sitting": func(in *inputs) (float64, error) {
-		return number(physio.PredictedPaO2Sitting(physio.Years(in.f("age"))))
+		return in.in(physio.PredictedPaO2Sitting(physio.Years(in.f("age"))))
 	},
 	"pao2_predicted_cerveri1995": func(in *inputs) (float64, error) {
-		return number(physio.PredictedPaO2Seated(physio.BuildAndPaCO2{
+		return in.in(physio.PredictedPaO2Seated(physio.BuildAndPaCO2{
 			Age: physio.Years(in.f("age")), BMI: in.f("bmi"), PaCO2: in.pressure("paco2"),
 		}))
 	},

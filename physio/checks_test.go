@@ -25,12 +25,13 @@ var notYet = map[string]string{}
 // used: a row whose inputs are not all used is not the check it seems to be.
 type inputs struct {
 	t    *testing.T
+	unit string // in which the row prints its number
 	m    map[string]string
 	used map[string]bool
 }
 
-func parseInputs(t *testing.T, cell string) *inputs {
-	in := &inputs{t: t, m: map[string]string{}, used: map[string]bool{}}
+func parseInputs(t *testing.T, unit, cell string) *inputs {
+	in := &inputs{t: t, unit: unit, m: map[string]string{}, used: map[string]bool{}}
 	for _, part := range strings.Split(cell, ";") {
 		name, value, ok := strings.Cut(strings.TrimSpace(part), "=")
 		if !ok {
@@ -84,6 +85,14 @@ func (in *inputs) pressure(name string) physio.Pressure {
 	return physio.MmHg(in.f(name + "_mmhg"))
 }
 
+// in gives a pressure in the row's unit.
+func (in *inputs) in(p physio.Pressure, err error) (float64, error) {
+	if in.unit == "kPa" {
+		return p.KPa(), err
+	}
+	return p.MmHg(), err
+}
+
 func (in *inputs) unused() []string {
 	var names []string
 	for name := range in.m {
@@ -96,8 +105,8 @@ func (in *inputs) unused() []string {
 
 // check is one row in the form both files share.
 type check struct {
-	id, measure, inputs string
-	printed, tolerance  float64
+	id, measure, inputs, unit string
+	printed, tolerance        float64
 	// equation is what the code has to give where it parts from the source, and
 	// rounding half of its last digit.
 	equation, rounding float64
@@ -158,7 +167,7 @@ func readCheck(t *testing.T, column map[string]int, row []string) check {
 		return v
 	}
 	c := check{
-		id: row[column["id"]], measure: row[column["measure"]], inputs: row[column["inputs"]],
+		id: row[column["id"]], measure: row[column["measure"]], inputs: row[column["inputs"]], unit: row[column["unit"]],
 		printed: number(row[column["expected"]]), tolerance: number(row[column["tolerance"]]),
 	}
 	if m := disagrees.FindStringSubmatch(row[column["source"]]); m != nil {
@@ -201,7 +210,7 @@ func runCheck(t *testing.T, c check, compute measure) {
 	if compute == nil {
 		t.Fatalf("no formula for measure %q", c.measure)
 	}
-	in := parseInputs(t, c.inputs)
+	in := parseInputs(t, c.unit, c.inputs)
 	got, err := compute(in)
 	passes := err == nil && math.Abs(got-c.want()) <= c.within()
 	if reason, ok := notYet[c.id]; ok {

@@ -169,7 +169,7 @@ var ventilationMeasures = map[string]measure{
 
 	// Temperature and units.
 	"PCO2 rule 2 mmHg per degree": func(in *inputs) (float64, error) {
-		return number(physio.PCO2AtTemp(physio.MmHg(in.f("pco2_37_mmhg")), in.temp()))
+		return in.in(physio.PCO2AtTemp(physio.MmHg(in.f("pco2_37_mmhg")), in.temp()))
 	},
 	"PCO2 temperature factor 10^(0.019*(T-37))":                               pco2Factor,
 	"PO2 log10 slope CLSI equals Severinghaus 1979 (0.243 outside the power)": po2Warm,
@@ -203,13 +203,13 @@ var ventilationMeasures = map[string]measure{
 		if in.f("t_body_k") != 310 || in.f("t0_k") != 273 {
 			return 0, fmt.Errorf("temperatures not known: %v", in.m)
 		}
-		return number(outputConstant(in.pressure("p0")))
+		return in.in(outputConstant(in.pressure("p0")))
 	},
 	"conversion constant kPa": func(in *inputs) (float64, error) {
 		if in.f("t_body_k") != 310 || in.f("t0_k") != 273 {
 			return 0, fmt.Errorf("temperatures not known: %v", in.m)
 		}
-		return inKPa(outputConstant(in.pressure("p0")))
+		return in.in(outputConstant(in.pressure("p0")))
 	},
 	"corrected VE = VE*PaCO2/40": func(in *inputs) (float64, error) {
 		return number(physio.CorrectedMinuteVolume(in.minute(), in.paco2()))
@@ -218,7 +218,7 @@ var ventilationMeasures = map[string]measure{
 	"ventilatory ratio at reference": ventilatoryRatio,
 	"ventilatory ratio in kPa":       ventilatoryRatio,
 	"apnoea PaCO2 rise (12 first min then 3.4/min)": func(in *inputs) (float64, error) {
-		return number(physio.ApnoeaRise(in.f("minutes")))
+		return in.in(physio.ApnoeaRise(in.f("minutes")))
 	},
 	"required VE for target PaCO2": func(in *inputs) (float64, error) {
 		return number(physio.MinuteVolumeFor(physio.Flow(in.f("ve_l")), in.aim()))

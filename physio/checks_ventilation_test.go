@@ -157,7 +157,7 @@ func (in *inputs) po2AtTemp() (physio.Pressure, error) {
 	return physio.PO2AtTemp(physio.MmHg(in.f("po2_37_mmhg")), in.temp())
 }
 
-func po2Warm(in *inputs) (float64, error) { return number(in.po2AtTemp()) }
+func po2Warm(in *inputs) (float64, error) { return in.in(in.po2AtTemp()) }
 
 func po2Factor(in *inputs) (float64, error) {
 	p, err := in.po2AtTemp()

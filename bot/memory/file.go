@@ -131,18 +131,19 @@ func fileLines(file []byte) ([]fileLine, error) {
 
 // syntax says where a file stops being JSON.
 func syntax(file []byte, d *json.Decoder, err error) error {
+	if errors.Is(err, io.EOF) || errors.Is(err, io.ErrUnexpectedEOF) {
+		return fmt.Errorf("the file ends too early, in line %d: house rules are one JSON object", lineOf(bytes.TrimSpace(file)))
+	}
 	at := d.InputOffset()
 	var s *json.SyntaxError
 	if errors.As(err, &s) {
 		at = s.Offset
 	}
-	before := file[:min(int(at), len(file))]
-	line := bytes.Count(before, []byte("\n")) + 1
-	if errors.Is(err, io.EOF) || errors.Is(err, io.ErrUnexpectedEOF) {
-		return fmt.Errorf("the file ends too early, in line %d: house rules are one JSON object", line)
-	}
-	return fmt.Errorf("line %d is not JSON: %v", line, err)
+	return fmt.Errorf("line %d is not JSON: %v", lineOf(file[:min(int(at), len(file))]), err)
 }
+
+// lineOf is the number of the line that a text ends in.
+func lineOf(text []byte) int { return bytes.Count(text, []byte("\n")) + 1 }
 
 // Encode writes the rules in their readable file form, without what is not
 // set. DecodeHouse reads it back.

@@ -3,6 +3,8 @@ package memory
 import (
 	"encoding/json"
 	"fmt"
+	"math"
+	"strconv"
 	"strings"
 	"unicode"
 
@@ -15,7 +17,7 @@ import (
 // because quantities and circumstances are stored by name: their numbers move
 // when a row is added.
 type gasDoc struct {
-	Values       physio.Values     `json:"values"`
+	Values       valuesDoc         `json:"values"`
 	Blood        physio.Blood      `json:"blood,omitempty"`
 	Site         physio.Site       `json:"site,omitempty"`
 	Device       physio.Device     `json:"device,omitempty"`
@@ -58,6 +60,30 @@ type choiceDoc struct {
 	Sex          physio.Sex    `json:"sex,omitempty"`
 	Circumstance []string      `json:"circumstance,omitempty"`
 }
+
+// valuesDoc writes values under their keys like physio.Values, without the
+// detour over a map: each save writes some.
+type valuesDoc physio.Values
+
+// MarshalJSON writes the values in echo order.
+func (d valuesDoc) MarshalJSON() ([]byte, error) {
+	out := append(make([]byte, 0, 160), '{')
+	var bad error
+	(*physio.Values)(&d).Each(func(q physio.Quantity, v float64) {
+		if math.IsNaN(v) || math.IsInf(v, 0) {
+			bad = fmt.Errorf("%s is not a number", q.Key())
+		}
+		if len(out) > 1 {
+			out = append(out, ',')
+		}
+		out = append(append(append(out, '"'), q.Key()...), `":`...)
+		out = strconv.AppendFloat(out, v, 'g', -1, 64)
+	})
+	return append(out, '}'), bad
+}
+
+// UnmarshalJSON reads values as physio does: an unknown key is an error.
+func (d *valuesDoc) UnmarshalJSON(b []byte) error { return (*physio.Values)(d).UnmarshalJSON(b) }
 
 // quantityDoc is a quantity under its key.
 type quantityDoc physio.Quantity
@@ -135,7 +161,7 @@ func followOf(name string) (shorthand.Follow, error) {
 func encodeGas(g *shorthand.Gas) (json.RawMessage, error) {
 	s := &g.Sample
 	d := gasDoc{
-		Values: s.Values, Blood: s.Blood, Site: s.Site, Device: s.Device, DeviceTaken: s.DeviceTaken, Mode: s.Mode,
+		Values: valuesDoc(s.Values), Blood: s.Blood, Site: s.Site, Device: s.Device, DeviceTaken: s.DeviceTaken, Mode: s.Mode,
 		Sex: s.Sex, Population: s.Population, Trimester: s.Trimester, Circumstance: circumstanceNames(s.Circumstance),
 		Follow: follows[g.Follow], Bed: g.Bed, Time: g.Time, Target: g.Target, Typed: g.Typed,
 	}
@@ -156,7 +182,7 @@ func decodeGas(raw json.RawMessage) (g shorthand.Gas, err error) {
 	}
 	g = shorthand.Gas{Bed: d.Bed, Time: d.Time, Target: d.Target, Typed: d.Typed}
 	g.Sample = physio.Sample{
-		Values: d.Values, Blood: d.Blood, Site: d.Site, Device: d.Device, DeviceTaken: d.DeviceTaken, Mode: d.Mode,
+		Values: physio.Values(d.Values), Blood: d.Blood, Site: d.Site, Device: d.Device, DeviceTaken: d.DeviceTaken, Mode: d.Mode,
 		Sex: d.Sex, Population: d.Population, Trimester: d.Trimester,
 	}
 	if g.Sample.Circumstance, err = circumstanceOf(d.Circumstance); err != nil {

@@ -1,7 +1,9 @@
 package memory
 
 import (
+	"encoding/json"
 	"fmt"
+	"math"
 	"reflect"
 	"slices"
 	"strings"
@@ -92,6 +94,30 @@ func TestCircumstancesHaveTheirNames(t *testing.T) {
 		back, err := circumstanceOf([]string{name})
 		if err != nil || back != c {
 			t.Errorf("%s reads as %b, %v; want %b", name, back, err, c)
+		}
+	}
+}
+
+// The claim and the values are written by hand: as json would.
+func TestWrittenByHand(t *testing.T) {
+	for _, done := range []bool{false, true} {
+		want, _ := json.Marshal(claimDoc{head: claimSchema.head(), At: base, Done: done})
+		expect(t, "claim", string(encodeClaim(base, done)), string(want))
+	}
+	var v physio.Values
+	for i, x := range []float64{7.4, 0, -3.5, 1e-7, 1e21, 123456789, 1.0 / 3} {
+		v.Set(physio.Quantity(i), x)
+	}
+	raw, err := json.Marshal(valuesDoc(v))
+	var back physio.Values
+	if err != nil || json.Unmarshal(raw, &back) != nil || back != v {
+		t.Errorf("%s, %v reads back as %v, want %v", raw, err, back, v)
+	}
+	for _, x := range []float64{math.NaN(), math.Inf(1)} {
+		g := shorthand.Gas{}
+		g.Sample.Set(physio.PaCO2, x)
+		if raw, err := encodeGas(&g); err == nil {
+			t.Errorf("%v is stored as %s", x, raw)
 		}
 	}
 }

@@ -99,7 +99,7 @@ func TestBadFiles(t *testing.T) {
 	const editors = `expected "everyone", "managers" or a list of user ids`
 	for _, c := range []struct{ file, want string }{
 		{``, "the file ends too early, in line 1: house rules are one JSON object"},
-		{"{\n\"units\":\"kPa\",\n", "the file ends too early, in line 3: house rules are one JSON object"},
+		{"{\n\"units\":\"kPa\",\n", "the file ends too early, in line 2: house rules are one JSON object"},
 		{"{\"units\":", "the file ends too early, in line 1: house rules are one JSON object"},
 		{"{\n\"units\":\n  kPa}", "line 3 is not JSON: invalid character 'k' looking for beginning of value"},
 		{"{\"private\":true,}", "line 1 is not JSON: invalid character '}'"},

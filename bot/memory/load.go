@@ -4,6 +4,7 @@ import (
 	"context"
 	"encoding/json"
 	"errors"
+	"strconv"
 	"time"
 
 	"galeward/bot/store"
@@ -87,8 +88,20 @@ func (m *Memory) readings(v *Visit) []store.Op {
 }
 
 func (m *Memory) claimOp(v *Visit, cond *string, done bool) store.Op {
-	value, _ := json.Marshal(claimDoc{head: claimSchema.head(), At: v.now.UTC(), Done: done}) // two plain fields
-	return store.Op{Key: claimKey(v.call.Delivery), If: cond, Value: value, Tag: v.tag, TTL: claimLife}
+	return store.Op{Key: claimKey(v.call.Delivery), If: cond, Value: encodeClaim(v.now, done), Tag: v.tag, TTL: claimLife}
+}
+
+// encodeClaim writes a claimDoc by hand: every event writes two of them.
+func encodeClaim(at time.Time, done bool) []byte {
+	h := claimSchema.head()
+	out := make([]byte, 0, 80)
+	out = strconv.AppendInt(append(out, `{"v":`...), int64(h.V), 10)
+	out = append(append(append(out, `,"kind":"`...), h.Kind...), `","at":"`...)
+	out = append(at.UTC().AppendFormat(out, time.RFC3339Nano), '"')
+	if done {
+		out = append(out, `,"done":true`...)
+	}
+	return append(out, '}')
 }
 
 // unwritten are the same operations without the claim's write.

@@ -2,6 +2,7 @@ package memory
 
 import (
 	"encoding/json"
+	"slices"
 	"strings"
 	"time"
 
@@ -22,7 +23,7 @@ func (p *paper) flat() bool { return strings.HasPrefix(p.key, "flat/") }
 // threadDoc is a thread as it is stored.
 type threadDoc struct {
 	head
-	Entries []entryDoc               `json:"entries,omitempty"`
+	Entries []json.RawMessage        `json:"entries,omitempty"`
 	Pending *questionDoc             `json:"pending,omitempty"`
 	Of      string                   `json:"of,omitempty"`
 	Asked   []shorthand.QuestionCode `json:"asked,omitempty"`
@@ -81,14 +82,12 @@ func decodeThread(raw []byte) (t Thread, err error) {
 	if err := threadSchema.decode(raw, &d); err != nil {
 		return t, err
 	}
-	for _, e := range d.Entries {
-		gas, err := decodeGas(e.Gas)
+	for _, raw := range d.Entries {
+		e, err := decodeEntry(raw)
 		if err != nil {
 			return Thread{}, threadSchema.unreadable(err)
 		}
-		t.entries = append(t.entries, held{
-			Entry: Entry{Message: e.Message, Post: e.Post, At: e.At, Gas: gas, Void: e.Void}, until: e.Until, raw: e.Gas,
-		})
+		t.entries = append(t.entries, e)
 	}
 	if d.Pending != nil {
 		q, err := questionIn(d.Pending)
@@ -101,25 +100,55 @@ func decodeThread(raw []byte) (t Thread, err error) {
 	return t, nil
 }
 
+func decodeEntry(raw json.RawMessage) (*held, error) {
+	var d entryDoc
+	if err := json.Unmarshal(raw, &d); err != nil {
+		return nil, err
+	}
+	gas, err := decodeGas(d.Gas)
+	return &held{Entry: Entry{Message: d.Message, Post: d.Post, At: d.At, Gas: gas, Void: d.Void}, until: d.Until}, err
+}
+
+// encode writes the entry for the store, once.
+func (e *held) encode() (err error) {
+	if e.raw != nil {
+		return nil
+	}
+	gas, err := encodeGas(&e.Gas)
+	if err != nil {
+		return err
+	}
+	e.raw, err = json.Marshal(&entryDoc{Message: e.Message, Post: e.Post, At: e.At.UTC(), Until: e.until.UTC(), Void: e.Void, Gas: gas})
+	return err
+}
+
+// encodeThread writes a thread for the store. The entries are put together
+// from what each was written as before, which is most of the work of a save.
 func encodeThread(t *Thread) ([]byte, error) {
 	d := threadDoc{head: threadSchema.head(), Of: t.of, Asked: t.asked, Flat: t.flat}
-	d.Entries = make([]entryDoc, len(t.entries))
-	for i := range t.entries {
-		e := &t.entries[i]
-		if e.raw == nil {
-			raw, err := encodeGas(&e.Gas)
-			if err != nil {
-				return nil, err
-			}
-			e.raw = raw
-		}
-		d.Entries[i] = entryDoc{Message: e.Message, Post: e.Post, At: e.At.UTC(), Until: e.until.UTC(), Void: e.Void, Gas: e.raw}
-	}
 	if t.pending != nil {
 		q := questionOut(t.pending)
 		d.Pending = &q
 	}
-	return json.Marshal(&d)
+	out, err := json.Marshal(&d)
+	if err != nil || len(t.entries) == 0 {
+		return out, err
+	}
+	size := len(out) + len(`,"entries":[]}`)
+	for _, e := range t.entries {
+		if err := e.encode(); err != nil {
+			return nil, err
+		}
+		size += len(e.raw) + 1
+	}
+	out = append(slices.Grow(out[:len(out)-1], size), `,"entries":[`...)
+	for i, e := range t.entries {
+		if i > 0 {
+			out = append(out, ',')
+		}
+		out = append(out, e.raw...)
+	}
+	return append(out, "]}"...), nil
 }
 
 // op is the write of a paper under the condition that the store holds what was

@@ -100,10 +100,11 @@ func nearest(word string, known []string) string {
 	if len(word) < 2 || len(word) > 40 {
 		return ""
 	}
-	best, least := "", max(1, len(word)/3)+1
+	best, least := "", max(1, (len(word)+1)/3)+1
 	for _, k := range known {
-		d := distance(word, strings.ToLower(k))
-		if len(word) >= 4 && (strings.Contains(k, word) || strings.Contains(word, k)) {
+		low := strings.ToLower(k)
+		d := distance(word, low)
+		if min(len(word), len(low)) >= 3 && (strings.Contains(low, word) || strings.Contains(word, low)) {
 			d = min(d, 1)
 		}
 		if d < least {

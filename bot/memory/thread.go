@@ -31,18 +31,19 @@ const (
 	mostEntries  = 24 // a pasted list of beds is one message with many entries
 )
 
-// held is an entry as it lies in a thread.
+// held is an entry as it lies in a thread. It is shared by the threads that
+// hold it and is not changed once it was stored: a change makes a new one.
 type held struct {
 	Entry
 	until time.Time
-	raw   json.RawMessage // the gas as stored, nil until it was
+	raw   json.RawMessage // the entry as stored, nil until it was
 }
 
 // Thread is what one thread remembers: its gases in the order in which they
 // were typed, its open question, and what was already asked. It is read
 // through methods and changed through the Visit that holds it.
 type Thread struct {
-	entries []held
+	entries []*held
 	pending *shorthand.Question
 	of      string // the message whose gas the pending question is about
 	asked   []shorthand.QuestionCode
@@ -101,19 +102,21 @@ func (t *Thread) clone() Thread {
 
 // put replaces what a message brought by new entries. An edited question keeps
 // its place among the others and its answer; a new one ends an open question.
-func (t *Thread) put(message string, entries []held) {
+func (t *Thread) put(message string, entries []*held) {
 	earlier := t.ByMessage(message)
 	if len(earlier) == 0 || t.of == message {
 		t.pending, t.of = nil, ""
 	}
-	t.entries = slices.DeleteFunc(t.entries, func(e held) bool { return e.Message == message })
+	t.entries = slices.DeleteFunc(t.entries, func(e *held) bool { return e.Message == message })
 	for _, e := range entries {
 		if len(earlier) > 0 {
-			e.At, e.Post = earlier[0].At, cmp.Or(e.Post, earlier[0].Post)
+			kept := *e
+			kept.At, kept.Post, kept.raw = earlier[0].At, cmp.Or(e.Post, earlier[0].Post), nil
+			e = &kept
 		}
 		t.entries = append(t.entries, e)
 	}
-	slices.SortStableFunc(t.entries, func(a, b held) int { return a.At.Compare(b.At) })
+	slices.SortStableFunc(t.entries, func(a, b *held) int { return a.At.Compare(b.At) })
 	t.trim()
 }
 
@@ -121,7 +124,7 @@ func (t *Thread) put(message string, entries []held) {
 func (t *Thread) trim() {
 	for n := t.messages(); n > mostMessages || n > 1 && len(t.entries) > mostEntries; n-- {
 		oldest := t.entries[0].Message
-		t.entries = slices.DeleteFunc(t.entries, func(e held) bool { return e.Message == oldest })
+		t.entries = slices.DeleteFunc(t.entries, func(e *held) bool { return e.Message == oldest })
 	}
 	if over := len(t.entries) - mostEntries; over > 0 { // one message alone is too long
 		t.entries = t.entries[over:]
@@ -132,7 +135,7 @@ func (t *Thread) trim() {
 func (t *Thread) messages() int {
 	n := 0
 	for i := range t.entries {
-		if !slices.ContainsFunc(t.entries[:i], func(e held) bool { return e.Message == t.entries[i].Message }) {
+		if !slices.ContainsFunc(t.entries[:i], func(e *held) bool { return e.Message == t.entries[i].Message }) {
 			n++
 		}
 	}
@@ -143,14 +146,17 @@ func (t *Thread) messages() int {
 func (t *Thread) each(message string, change func(*held)) {
 	for i := range t.entries {
 		if t.entries[i].Message == message {
-			change(&t.entries[i])
+			changed := *t.entries[i]
+			changed.raw = nil
+			change(&changed)
+			t.entries[i] = &changed
 		}
 	}
 }
 
 // remove takes a message's gases away, and the question about them.
 func (t *Thread) remove(message string) {
-	t.entries = slices.DeleteFunc(t.entries, func(e held) bool { return e.Message == message })
+	t.entries = slices.DeleteFunc(t.entries, func(e *held) bool { return e.Message == message })
 	if t.of == message {
 		t.pending, t.of = nil, ""
 	}
@@ -169,7 +175,7 @@ func (t *Thread) ask(q shorthand.Question, message string) {
 
 // expire drops the gases whose time is over.
 func (t *Thread) expire(now time.Time) {
-	gone := func(e held) bool { return !e.until.After(now) }
+	gone := func(e *held) bool { return !e.until.After(now) }
 	if slices.ContainsFunc(t.entries, gone) {
 		t.entries = slices.DeleteFunc(t.entries, gone)
 		if len(t.entries) == 0 {

@@ -89,13 +89,13 @@ func (v *Visit) Put(entries ...Entry) {
 		return
 	}
 	message, own := entries[0].Message, false
-	put := make([]held, len(entries))
+	put := make([]*held, len(entries))
 	for i, e := range entries {
 		if e.At.IsZero() {
 			e.At = v.now
 		}
 		own = own || e.Gas.Follow == shorthand.FollowNone
-		put[i] = held{Entry: clean(e), until: v.now.Add(v.life)}
+		put[i] = &held{Entry: clean(e), until: v.now.Add(v.life)}
 	}
 	v.edit(func(p *paper) {
 		switch {

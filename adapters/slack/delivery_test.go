@@ -65,7 +65,8 @@ func TestCommandIsAnsweredThroughItsAddress(t *testing.T) {
 		if hidden {
 			want = slackfake.User
 		}
-		if p.Route != "response_url" || p.For != want || p.Shown != "7.28/58/62/27" || p.Replaces {
+		if p.Route != "response_url" || p.For != want || p.Shown != "7.28/58/62/27" || p.Replaces ||
+			p.Unfurl != "false" || p.Parse != "none" {
 			t.Errorf("private %v: %+v", hidden, p)
 		}
 		if n := f.Calls("chat.postMessage") + f.Calls("chat.postEphemeral"); n != 0 {

@@ -150,6 +150,38 @@ func TestNothingIsShedWithoutNeed(t *testing.T) {
 	}
 }
 
+// TestShedding: what may go goes before a second message is made, the last
+// first, and no more than needed.
+func TestShedding(t *testing.T) {
+	var r reply.Reply
+	r.Add(reply.Echo, strings.Repeat("e ", 1400))
+	for range 20 {
+		r.Add(reply.Next, strings.Repeat("n ", 500))
+	}
+	r.Add(reply.Major, "Caution: kept.")
+	p := parts(r, maxMessage)
+	if len(p) != 1 || p[0].Blocks[0].Kind != reply.Echo || len(p[0].Blocks) < 8 || p[0].Blocks[len(p[0].Blocks)-1].Text != "Caution: kept." {
+		t.Errorf("%d parts, the first with %d blocks", len(p), len(p[0].Blocks))
+	}
+}
+
+func TestManyBlocks(t *testing.T) {
+	r := reply.Reply{Buttons: critical().Buttons}
+	for range 98 {
+		r.Add(reply.Major, "Caution.")
+	}
+	n := 0
+	for _, part := range parts(r, maxMessage) {
+		m := render(part, "")
+		if n += len(part.Blocks); len(m.blocks) > maxBlocks {
+			t.Errorf("%d blocks in a message", len(m.blocks))
+		}
+	}
+	if n != 98 {
+		t.Errorf("%d of 98 blocks", n)
+	}
+}
+
 func TestChop(t *testing.T) {
 	for _, test := range []struct {
 		text  string

@@ -178,9 +178,10 @@ func TestWhatIsNotForUs(t *testing.T) {
 		"link preview": f.Preview(m),
 		"own edit": f.Edit(slackfake.Message{Channel: slackfake.DM, User: slackfake.Bot, BotID: slackfake.BotID,
 			Text: "amended"}),
-		"own deletion": f.Delete(slackfake.Message{Channel: slackfake.DM, User: slackfake.Bot, BotID: slackfake.BotID}),
-		"form sent":    f.Interact(map[string]any{"type": "view_submission"}, slackfake.Wire{}),
-		"shortcut":     f.Interact(map[string]any{"type": "message_action", "callback_id": "x"}, slackfake.Wire{}),
+		"another bot's edit": f.Edit(slackfake.Message{Channel: slackfake.DM, User: "U0OTHER", BotID: "B0OTHER", Text: "x"}),
+		"own deletion":       f.Delete(slackfake.Message{Channel: slackfake.DM, User: slackfake.Bot, BotID: slackfake.BotID}),
+		"form sent":          f.Interact(map[string]any{"type": "view_submission"}, slackfake.Wire{}),
+		"shortcut":           f.Interact(map[string]any{"type": "message_action", "callback_id": "x"}, slackfake.Wire{}),
 	}
 	for name, ack := range acks {
 		if ack.Status != 200 {

@@ -153,6 +153,6 @@ func (s *service) stop() error {
 // logged notes an error that nobody waits for.
 func logged(log *slog.Logger, what string, err error) {
 	if err != nil {
-		log.Error(what, "error", err.Error())
+		log.Error("fault", "while", what, "error", err.Error())
 	}
 }

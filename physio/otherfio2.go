@@ -57,10 +57,15 @@ func (g LungGas) atFixedRatio(fio2 float64) float64 {
 func (g LungGas) atFixedShunt(shunt, fio2 float64) float64 {
 	alveolar := g.alveolarAt(fio2)
 	arterial := g.capillary(alveolar) - float64(g.Difference)*shunt/(1-shunt) // Benatar 1973
+	return g.po2OfContent(arterial, alveolar)
+}
+
+// po2OfContent inverts the content of blood between 1 mmHg and a PO2 above it.
+func (g LungGas) po2OfContent(content, above float64) float64 {
 	return math.Exp(bisect(func(lnP float64) float64 {
 		p := math.Exp(lnP)
-		return g.content(p, saturation(p, g.Shift)) - arterial
-	}, 0, math.Log(alveolar)))
+		return g.content(p, saturation(p, g.Shift)) - content
+	}, 0, math.Log(above)))
 }
 
 // FiO2ForPaO2 gives the FiO2 at which the two models foresee a PaO2, as an

@@ -15,6 +15,9 @@ import (
 func BenchmarkReading(b *testing.B) {
 	s := memstore.New(nil)
 	known, foreign := New(s, Options{}), New(s, Options{})
+	if _, _, err := known.ChangeHouse(ctx, ward, "U1", func(House) (House, error) { return whole(), nil }); err != nil {
+		b.Fatal(err)
+	}
 	for name, pair := range map[string][2]*Memory{"OneProcess": {known, known}, "OtherProcessWroteLast": {known, foreign}} {
 		b.Run(name, func(b *testing.B) {
 			n := 0

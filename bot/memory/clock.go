@@ -2,18 +2,26 @@ package memory
 
 import (
 	"slices"
+	"sync"
 	"time"
 	_ "time/tzdata" // house zones must be known in a container without a zone database
 )
 
+// zones are the time zones that were loaded: loading one reads a file, and
+// every reading of a channel with shifts needs one.
+var zones sync.Map // of *time.Location by name
+
 // location is the house's time zone, UTC when none is set.
 func (h House) location() *time.Location {
-	if h.Zone != "" {
-		if loc, err := time.LoadLocation(h.Zone); err == nil {
-			return loc
-		}
+	if loc, ok := zones.Load(h.Zone); ok {
+		return loc.(*time.Location)
 	}
-	return time.UTC
+	loc, err := time.LoadLocation(h.Zone)
+	if err != nil {
+		return time.UTC
+	}
+	zones.Store(h.Zone, loc)
+	return loc
 }
 
 // life is how long a gas of now is kept: to the end of the shift, or the usual

@@ -26,7 +26,7 @@ const (
 	orphaned  = 30 * time.Second     // an open claim of this age belongs to a dead process
 
 	knownHouses  = 4096
-	knownThreads = 2048
+	knownThreads = 512 // about 10 KB each when full
 	knownClaims  = 8192
 )
 

@@ -41,7 +41,8 @@ type held struct {
 
 // Thread is what one thread remembers: its gases in the order in which they
 // were typed, its open question, and what was already asked. It is read
-// through methods and changed through the Visit that holds it.
+// through methods and changed through the Visit that holds it; the slices
+// inside of what it gives are shared and must be left as they are.
 type Thread struct {
 	entries []*held
 	pending *shorthand.Question

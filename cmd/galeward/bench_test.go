@@ -4,7 +4,6 @@ import (
 	"bytes"
 	"context"
 	"io"
-	"log/slog"
 	"net/http"
 	"net/http/httptest"
 	"net/url"
@@ -177,7 +176,10 @@ func newWhole(b *testing.B, s store.Store) *whole {
 		_, _ = io.WriteString(rw, "ok")
 		w.arrived <- struct{}{}
 	}))
-	log := slog.New(slog.NewJSONHandler(io.Discard, nil))
+	log, err := newLog(io.Discard, "info") // what is logged is part of the work
+	if err != nil {
+		b.Fatal(err)
+	}
 	handler, _ := newBot(s, log)
 	a, err := slack.New(slack.Config{
 		SigningSecret: slackfake.Secret, BotToken: slackfake.Token, APIURL: w.hooks.URL + "/api/",

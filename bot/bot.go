@@ -4,6 +4,7 @@ import (
 	"context"
 	"crypto/rand"
 	"encoding/hex"
+	"errors"
 	"fmt"
 	"log/slog"
 	"time"
@@ -61,7 +62,7 @@ func New(o Options) *Bot {
 func (b *Bot) Answer(ctx context.Context, e Event) (answer Answer) {
 	defer b.rescue(&answer)
 	t, err := b.begin(ctx, e)
-	if t == nil {
+	if t == nil || err != nil {
 		return b.trouble(err)
 	}
 	t.work()
@@ -88,8 +89,13 @@ func (b *Bot) trouble(err error) Answer {
 	}
 	id := newID()
 	b.log.Error("trouble", "id", id, "error", err.Error())
+	text := fmt.Sprintf(troubleText, id)
+	var doc *memory.DocumentError
+	if errors.As(err, &doc) {
+		text = upperFirst(doc.Error()) + "."
+	}
 	var r reply.Reply
-	r.Add(reply.Notice, fmt.Sprintf(troubleText, id))
+	r.Add(reply.Notice, text)
 	return Answer{Reply: r, Machine: Machine{V: MachineVersion, Kind: "trouble", Text: r.Text()}}
 }
 

@@ -2,7 +2,6 @@ package bot
 
 import (
 	"context"
-	"errors"
 	"fmt"
 
 	"galeward/bot/memory"
@@ -47,12 +46,7 @@ func (b *Bot) answerSafely(ctx context.Context, e Event) (t *turn, answer Answer
 		}
 	}()
 	t, err := b.begin(ctx, e)
-	var doc *memory.DocumentError
-	if errors.As(err, &doc) {
-		b.log.Error("document", "error", err.Error())
-		return nil, b.trouble(err)
-	}
-	if t == nil {
+	if t == nil || err != nil {
 		return nil, b.trouble(err)
 	}
 	t.work()

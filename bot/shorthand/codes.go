@@ -73,3 +73,16 @@ const (
 	AskMAP         QuestionCode = "map"            // mean airway or mean arterial: only when an index wants it
 	AskTempCorr    QuestionCode = "temp_corrected" // are the values corrected to this temperature?
 )
+
+// askRank is the place of each question: contradiction, units, order, sample,
+// oxygen, settings, body.
+var askRank = func() map[QuestionCode]int {
+	rank := map[QuestionCode]int{}
+	for i, c := range []QuestionCode{AskComma, AskTwoGases, AskSwap, AskPH, AskPaCO2, AskPaO2, AskHCO3, AskOverRange, AskUnderRange,
+		AskUnit, AskBEForHCO3, AskHCO3Fit, AskCeiling, AskSatFit, AskBE, AskBEFit, AskTwice, AskSecondGroup, AskTwoNumbers,
+		AskVenous, AskWhichOxygen, AskFiO2, AskFifth, AskPercent, AskFlowOrFiO2, AskBare, AskFlowDevice, AskTc, AskSpO2,
+		AskVT, AskRR, AskValue, AskHeight, AskWeight, AskMetresSex, AskTempCorr, AskMAP} {
+		rank[c] = i
+	}
+	return rank
+}()

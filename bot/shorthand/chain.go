@@ -1,0 +1,389 @@
+package shorthand
+
+import (
+	"galeward/physio"
+)
+
+// defaultOrder is the order of unlabelled values when the house has none.
+var defaultOrder = []physio.Quantity{physio.PHq, physio.PaCO2, physio.PaO2, physio.HCO3, physio.SaO2}
+
+func (r *reader) order() []physio.Quantity {
+	if len(r.h.Order) > 0 {
+		return r.h.Order
+	}
+	return defaultOrder
+}
+
+// phLike says that v is in the range of a pH.
+func phLike(v float64) bool { return v >= 6.5 && v < 8 }
+
+// gasStart says that an unlabelled gas starts with the number at i: a pH and,
+// joined to it, a number that can be a PCO2.
+func (r *reader) gasStart(i int) bool { return gasStart(r.t, i) }
+
+func gasStart(t []token, i int) bool {
+	p := &t[i]
+	if p.kind != tokNumber || p.sign != 0 || p.than != 0 || p.percent || p.used || p.taken {
+		return false
+	}
+	n, slashes := chainAhead(t, i)
+	if phLike(p.v) && p.decimals > 0 {
+		return n >= 2 && (slashes || n >= 3 || p.decimals == 2)
+	}
+	if !slashes || n < 3 {
+		return false
+	}
+	return oddPH(p) && pressuresFollow(t, i)
+}
+
+// oddPH says that a number at the head of a chain of three or more may be a
+// mistyped pH.
+func oddPH(p *token) bool {
+	v := p.v
+	switch {
+	case v >= 6 && v < 9 && (p.decimals > 0 || v == 7):
+		return true
+	case v >= 65 && v < 80, v >= 650 && v < 800 && p.decimals == 0, v >= 6500 && v < 8000 && p.decimals == 0:
+		return true
+	}
+	return p.decimals > 0 && v < 10 && len(permutations(p.s)) > 0
+}
+
+// pressuresFollow says that the next two numbers can be a PCO2 and a PO2.
+func pressuresFollow(t []token, i int) bool {
+	found := 0
+	for j := i + 1; j < len(t) && found < 2; j++ {
+		if t[j].kind != tokNumber {
+			continue
+		}
+		if t[j].v < 2 || t[j].v > 700 {
+			return false
+		}
+		found++
+	}
+	return found == 2
+}
+
+// chainAhead counts the numbers that are joined from i on, and says whether
+// separators join them.
+func chainAhead(t []token, i int) (n int, slashes bool) {
+	n, slashes = 1, true
+	for j := i + 1; j < len(t); j++ {
+		switch x := &t[j]; {
+		case x.kind == tokNumber:
+			if x.used || x.taken {
+				return n, slashes
+			}
+			if !t[j-1].sep("/|\\,;-:.\n") && !t[j-1].is(senseOver) && x.sign == 0 && !t[j-1].is(senseUnit) {
+				slashes = false
+			}
+			n++
+		case x.sep("/|\\,;-:.~_"), x.is(senseOver), x.is(senseUnit) && x.e.unit != uTime && x.e.unit != uYear:
+		case x.is(senseLabel) && x.e.q != physio.PHq && isCore(x.e.q):
+			return n + 1, slashes
+		case x.sep("\n") && aloneOnLine(t, j+1):
+		case (x.sep("?") || x.word("x")) && j+1 < len(t) && t[j+1].sep("/"):
+		default:
+			return n, slashes
+		}
+		if n > 8 {
+			break
+		}
+	}
+	return n, slashes
+}
+
+// aloneOnLine says that the token at i is the only one of its line.
+func aloneOnLine(t []token, i int) bool {
+	return i < len(t) && t[i].kind == tokNumber && (i+1 >= len(t) || t[i+1].sep("\n") || t[i+1].is(senseUnit) && (i+2 >= len(t) || t[i+2].sep("\n")))
+}
+
+// chain reads the unlabelled values of the gas by the channel's order.
+func (r *reader) chain() {
+	start := -1
+	for i := range r.t {
+		if r.gasStart(i) {
+			start = i
+			break
+		}
+	}
+	slot := 0
+	switch {
+	case start >= 0 && r.raw[physio.PHq] == nil:
+	case r.raw[physio.PHq] != nil:
+		start = r.labelledPH()
+		slot = -1
+	}
+	if start < 0 {
+		return
+	}
+	r.first, r.last = start, start
+	c := &chainReader{r: r, slot: slot, seps: 0}
+	if slot < 0 {
+		c.slot = c.after(physio.PHq)
+		c.i = start + 1
+	} else {
+		c.i = start
+	}
+	c.read()
+	r.slashes = c.slashes > 0
+}
+
+// labelledPH finds the number of a labelled pH.
+func (r *reader) labelledPH() int {
+	for i := range r.t {
+		if r.t[i].kind == tokNumber && r.t[i].used && r.t[i].typed() == r.raw[physio.PHq].typed {
+			return i
+		}
+	}
+	return -1
+}
+
+// chainReader walks the chain.
+type chainReader struct {
+	r       *reader
+	i       int
+	slot    int
+	filled  int
+	seps    int // separators since the last number
+	slashes int
+	spaces  int
+	first   bool
+}
+
+// after is the slot behind q in the channel's order.
+func (c *chainReader) after(q physio.Quantity) int {
+	for k, o := range c.r.order() {
+		if o == q {
+			return k + 1
+		}
+	}
+	return c.slot
+}
+
+func (c *chainReader) read() {
+	for ; c.i < len(c.r.t); c.i++ {
+		t := &c.r.t[c.i]
+		switch {
+		case t.kind == tokNumber && t.used:
+			c.seps = 0
+			c.r.last = c.i
+		case t.kind == tokNumber:
+			if t.taken || !c.number(t) {
+				return
+			}
+		case t.is(senseOver):
+			c.seps++
+		case t.sep("/|\\;"):
+			c.empty()
+			c.seps++
+		case t.sep(",-:.~_"):
+			c.seps = max(c.seps, 1)
+		case (t.sep("?") || t.word("x")) && c.i+1 < len(c.r.t) && c.r.t[c.i+1].sep("/"), t.used && t.kind == tokWord && c.seps >= 0 && t.is(senseUnit):
+		case t.is(senseLabel) && t.used && isCore(t.e.q):
+			c.slot = c.after(t.e.q)
+		case t.sep("\n") && aloneOnLine(c.r.t, c.i+1), t.is(senseUnit) && t.e.unit != uTime && t.e.unit != uLitre && t.e.unit != uLPM:
+		default:
+			return
+		}
+	}
+}
+
+// empty steps over a place that was left empty: "7.28//62".
+func (c *chainReader) empty() {
+	if c.seps == 0 || c.filled == 0 || !c.r.t[c.i-1].sep("/|\\-?_;") && !c.r.t[c.i-1].word("x") {
+		return
+	}
+	if o := c.r.order(); c.slot < len(o) {
+		c.r.missed[o[c.slot]] = true
+		c.slot++
+	}
+	c.seps = 0
+}
+
+// number puts a number in its place and says whether the chain goes on.
+func (c *chainReader) number(t *token) bool {
+	r := c.r
+	spaced := c.seps == 0 && c.filled > 0 && t.sign == 0
+	if c.filled >= 2 && (r.gasStart(c.i) || phLike(t.v) && t.decimals == 2) {
+		return false
+	}
+	if spaced && c.slashes >= 2 && c.filled >= 3 || c.filled > 0 && c.foreignUnit() {
+		return false
+	}
+	if c.filled > 0 {
+		if spaced {
+			c.spaces++
+		} else {
+			c.slashes++
+		}
+	}
+	c.seps = 0
+	return c.place(t, spaced)
+}
+
+// foreignUnit says that the number carries a unit of something else.
+func (c *chainReader) foreignUnit() bool {
+	u, _ := c.r.unitAfter(c.i)
+	switch u {
+	case "", uMmHg, uKPa, uMmolL, uPercent, uNmolL:
+		return false
+	}
+	return true
+}
+
+// place decides what a number of the chain is: by its slot, unless its sign,
+// its percent sign or its size say that it is none of that kind.
+func (c *chainReader) place(t *token, spaced bool) bool {
+	r := c.r
+	order := r.order()
+	q := physio.Quantity(255)
+	if c.slot < len(order) {
+		q = order[c.slot]
+	}
+	for q != 255 && r.raw[q] != nil {
+		c.slot++
+		q = 255
+		if c.slot < len(order) {
+			q = order[c.slot]
+		}
+	}
+	switch {
+	case t.percent && q != physio.SaO2:
+		return c.percent(t, q)
+	case t.percent && spaced:
+		return false // its role is weighed with the oxygen
+	case t.sign != 0 && c.filled >= 3 && q != physio.BE && q != physio.HCO3:
+		return c.baseExcess(t)
+	case q == 255:
+		return false
+	case q == physio.SaO2:
+		return c.saturation(t, spaced)
+	}
+	u, n := r.unitAfter(c.i)
+	raw := &rawValue{v: t.v, decimals: t.decimals, typed: t.typed()}
+	if q == physio.BE || q == physio.HCO3 {
+		raw.v = t.signed()
+		if t.sign == '-' && q == physio.HCO3 && t.v > 12 && c.i > 0 && (c.dashes()) {
+			raw.v = t.v
+		}
+	}
+	if u == uKPa || u == uMmHg {
+		raw.unit = u
+	}
+	if q == physio.HCO3 && t.v <= 12 && t.sign != '-' {
+		r.smallPlace = true
+	}
+	r.take(c.i, n)
+	r.last = c.i
+	if !r.rangeMark(q, c.i) {
+		r.raw[q] = raw
+	}
+	c.i += n
+	c.slot++
+	c.filled++
+	return true
+}
+
+// dashes says that hyphens separate the values: an earlier one stood before
+// the PaCO2 or the PaO2, where no sign can be.
+func (c *chainReader) dashes() bool {
+	for j := c.r.first + 1; j < c.i; j++ {
+		if c.r.t[j].sign == '-' || c.r.t[j].sep("-") {
+			return true
+		}
+	}
+	return false
+}
+
+// percent takes a percentage that stands in another place than the
+// saturation's: in the place of PaO2 it is a saturation, and said.
+func (c *chainReader) percent(t *token, q physio.Quantity) bool {
+	r := c.r
+	if q != physio.PaO2 && q != physio.PaCO2 || c.filled < 2 && q == physio.PaO2 && r.raw[physio.PaCO2] == nil || t.v < 40 {
+		return false
+	}
+	if q == physio.PaO2 && r.raw[physio.SaO2] == nil {
+		if c.seps == 0 && c.slashes == 0 {
+			return false
+		}
+		r.keepSat(c.i, NoteSatForPaO2)
+		r.missed[physio.PaO2] = true
+		c.slot++
+		c.filled++
+		return true
+	}
+	return false
+}
+
+// keepSat keeps the number at i as the sample's saturation.
+func (r *reader) keepSat(i int, n NoteCode) {
+	t := &r.t[i]
+	r.take(i, 0)
+	r.last = max(r.last, i)
+	r.sample().Set(physio.SaO2, t.v/100)
+	if n != "" {
+		r.note(n, physio.SaO2, t.typed(), t.v/100)
+	}
+}
+
+// baseExcess takes a signed number behind the bicarbonate.
+func (c *chainReader) baseExcess(t *token) bool {
+	if c.r.raw[physio.BE] != nil || t.v > 30 {
+		return false
+	}
+	if t.sign == '+' && !c.r.t[c.i].glued && !c.r.fitsBE(t.v) {
+		return false // PEEP
+	}
+	c.r.raw[physio.BE] = &rawValue{v: t.signed(), decimals: t.decimals, typed: t.typed()}
+	c.r.take(c.i, 0)
+	c.r.last = c.i
+	c.filled++
+	return true
+}
+
+// saturation weighs a number in the fifth place: a saturation, a base excess,
+// or an FiO2 that is asked about.
+func (c *chainReader) saturation(t *token, spaced bool) bool {
+	r := c.r
+	switch {
+	case t.percent && t.v < 50 && !r.satFits(t.v/100) && t.v >= 21:
+		return false // FiO2, by its sign
+	case t.v >= 50 && t.v <= 100 && (r.satFits(t.v/100) || t.v >= 86 && !spaced) || t.v > 20 && r.satFits(t.v/100):
+		if spaced && r.typicalFiO2(t.v) && !t.percent {
+			return false
+		}
+		r.keepSat(c.i, "")
+		c.slot++
+		c.filled++
+		return true
+	case t.v <= 1 && t.decimals >= 2 && t.v > 0.4 && r.satFits(t.v):
+		r.take(c.i, 0)
+		r.last = c.i
+		r.sample().Set(physio.SaO2, t.v)
+		return true
+	case t.v <= 20 && t.decimals <= 1 && r.raw[physio.BE] == nil && r.fitsBE(t.signed()) && !spaced:
+		r.raw[physio.BE] = &rawValue{v: t.signed(), decimals: t.decimals, typed: t.typed()}
+		r.note(NoteBEPlace, physio.BE, t.typed(), t.signed())
+		r.take(c.i, 0)
+		r.last = c.i
+		c.filled++
+		return true
+	case !spaced && t.v >= 21 && t.v <= 100 && t.decimals == 0:
+		r.askFifth(c.i)
+		return false
+	}
+	return false
+}
+
+// typicalFiO2 says that v is a setting that people type as FiO2.
+func (r *reader) typicalFiO2(v float64) bool { return int(v)%5 == 0 || v == 21 || v == 28 || v == 24 }
+
+// askFifth asks about a bare fifth value that is no saturation here.
+func (r *reader) askFifth(i int) {
+	t := &r.t[i]
+	r.take(i, 0)
+	r.last = i
+	r.ask(Question{Code: AskFifth, Quantity: physio.FiO2, Typed: t.typed(), Value: t.v / 100, Choices: []Choice{
+		withWord(choose(physio.FiO2, t.v/100), "FiO2"), withWord(choose(physio.SaO2, t.v/100), "saturation")}})
+}

@@ -1,0 +1,263 @@
+package shorthand
+
+import (
+	"math"
+
+	"galeward/physio"
+)
+
+// unitAfter gives the unit behind the number at i and the tokens it takes.
+func (r *reader) unitAfter(i int) (string, int) {
+	if r.t[i].percent {
+		return uPercent, 0
+	}
+	j := i + 1
+	if j+1 < len(r.t) && r.t[j].sep("/") && r.t[j].glued && r.t[j+1].kind == tokWord && r.t[j+1].glued {
+		switch r.t[j+1].s {
+		case "min", "minute", "m":
+			return uPerMin, 2
+		case "kg", "kgs":
+			return uMLKg, 2
+		}
+	}
+	if j >= len(r.t) || r.t[j].kind != tokWord || r.t[j].line != r.t[i].line {
+		return "", 0
+	}
+	t := &r.t[j]
+	if t.s == "m" && t.glued {
+		return uMetre, 1
+	}
+	if t.s == "f" && t.glued && r.t[i].v > 80 {
+		return uF, 1
+	}
+	if t.e == nil || t.e.sense != senseUnit {
+		return "", 0
+	}
+	if len(t.s) == 1 && t.s != "l" && !t.glued && t.s != "g" && t.s != "c" && t.s != "h" {
+		return "", 0
+	}
+	return t.e.unit, 1
+}
+
+// take marks the number at i and its unit as used.
+func (r *reader) take(i, unitTokens int) {
+	for j := i; j <= i+unitTokens && j < len(r.t); j++ {
+		r.t[j].used = true
+	}
+}
+
+// measures takes numbers that their unit names: heights, weights, ages,
+// durations, rates, altitudes.
+func (r *reader) measures() {
+	for i := range r.t {
+		if !r.t[i].free() || r.feet(i) || r.ageSex(i) {
+			continue
+		}
+		u, n := r.unitAfter(i)
+		if u == "" {
+			r.ofGestation(i)
+			continue
+		}
+		if r.labelled(i) {
+			continue
+		}
+		r.byUnit(i, u, n)
+	}
+	r.letterSex()
+}
+
+// labelled says that a label stands directly before the number.
+func (r *reader) labelled(i int) bool {
+	for j := i - 1; j >= 0 && j >= i-3; j-- {
+		switch t := &r.t[j]; {
+		case t.is(senseLabel):
+			return t.e.q != physio.FiO2 || true
+		case t.sep(":=~") || t.is(senseFiller):
+		default:
+			return false
+		}
+	}
+	return false
+}
+
+func (r *reader) byUnit(i int, u string, n int) {
+	t, s := &r.t[i], r.sample()
+	switch u {
+	case uTime:
+		r.duration(i, n)
+	case uYear, uMonth, uDay:
+		r.age(i, u, n)
+	case uWeek:
+		r.weeks(i, n)
+	case uKg, uPound:
+		if !s.Has(physio.Weight) {
+			r.store(physio.Weight, i, u, n)
+		}
+	case uGram:
+		if t.v >= 300 && t.v < 8000 {
+			r.store(physio.Weight, i, u, n)
+		}
+	case uCm:
+		if t.v >= 30 && !s.Has(physio.Height) {
+			r.store(physio.Height, i, u, n)
+		} else {
+			r.t[i].taken = true
+		}
+	case uInch:
+		if t.v >= 10 && t.v <= 90 && r.t[i+1].glued || t.v >= 48 && t.v <= 84 && r.t[i+1].s != "in" {
+			r.store(physio.Height, i, u, n)
+		}
+	case uMetre, uFoot:
+		r.length(i, u, n)
+	case uPerMin:
+		r.store(physio.RR, i, u, n)
+	case uMLKg:
+		r.store(physio.VTPerKg, i, u, n)
+	case uC, uF:
+		if t.v > 25 && !r.joined(i) && r.first < 0 && r.t[i+1].glued {
+			r.store(physio.Temp, i, u, n)
+		}
+	case uHz:
+		r.store(physio.Hertz, i, u, n)
+	}
+}
+
+// store reads the number at i as q.
+func (r *reader) store(q physio.Quantity, i int, u string, n int) {
+	f := formOf(q, &r.t[i], u, r.adult())
+	r.take(i, n)
+	r.put(f, q, r.t[i].typed())
+}
+
+// put keeps a form that was read, or its question.
+func (r *reader) put(f form, q physio.Quantity, typed string) {
+	if f.skip {
+		return
+	}
+	if f.ask != nil {
+		r.ask(*f.ask)
+		return
+	}
+	if have, ok := r.sample().Get(f.q); ok && math.Abs(have-f.v) > 1e-9 {
+		r.twice(f.q, have, f.v, typed)
+		return
+	}
+	r.sample().Set(f.q, f.v)
+	if f.note != "" {
+		typedNote := typed
+		if f.note == NoteAge90 {
+			typedNote = "" // the exact age is not kept
+		}
+		r.note(f.note, f.q, typedNote, f.v)
+	}
+}
+
+// twice asks which of two values of one quantity counts.
+func (r *reader) twice(q physio.Quantity, a, b float64, typed string) {
+	switch q {
+	case physio.RR: // set and measured rates are often typed one after another
+		if a != b && !r.sample().Has(physio.RRSet) && r.controlled {
+			r.sample().Set(physio.RRSet, a)
+			r.sample().Set(physio.RR, b)
+			return
+		}
+	case physio.Age, physio.Weight:
+		return
+	}
+	if r.claims {
+		return
+	}
+	r.sample().Drop(q)
+	r.ask(Question{Code: AskTwice, Quantity: q, Typed: typed, Choices: []Choice{choose(q, b), choose(q, a)}})
+}
+
+// duration takes a time span; a change within the last half hour is said.
+func (r *reader) duration(i, n int) {
+	r.t[i].taken = true
+	minutes := r.t[i].v
+	if s := r.t[i+n].s; s[0] == 'h' {
+		minutes *= 60
+	} else if s[0] == 'd' || s[0] == 's' {
+		return
+	}
+	if minutes < 30 && r.near(i, 8, "changed", "increased", "decreased", "turned", "went", "started", "switched", "weaned", "change", "put", "placed", "changed to", "up", "down", "moved") && !r.near(i, 8, "later") {
+		r.sample().Circumstance |= physio.JustChanged
+	}
+}
+
+// feet takes 5'4", 5ft4, 5 ft 10 in.
+func (r *reader) feet(i int) bool {
+	a := &r.t[i]
+	if a.v < 1 || a.v > 8 || a.decimals > 0 || i+1 >= len(r.t) {
+		return false
+	}
+	mark := &r.t[i+1]
+	foot := mark.is(senseUnit) && mark.e.unit == uFoot
+	if !mark.sep("'") && !foot {
+		return false
+	}
+	cm, end, typed := a.v*cmPerFoot, i+1, a.s
+	if j := i + 2; j < len(r.t) && r.t[j].kind == tokNumber && r.t[j].v < 12 && !r.gasStart(j) && r.t[j].sign == 0 && (r.t[j].glued || foot) {
+		cm += r.t[j].v * cmPerInch
+		typed += "'" + r.t[j].s
+		end = j
+		if j+1 < len(r.t) && (r.t[j+1].sep("\"'") || r.t[j+1].is(senseUnit) && r.t[j+1].e.unit == uInch) {
+			end++
+		}
+		if end+1 < len(r.t) && r.t[end].sep("'") && r.t[end+1].sep("'") {
+			end++
+		}
+	}
+	for j := i; j <= end; j++ {
+		r.t[j].used = true
+	}
+	if physio.Height.Possible(cm) {
+		r.sample().Set(physio.Height, math.Round(cm*100)/100)
+	} else {
+		r.ask(*askImpossible(physio.Height, cm, typed))
+	}
+	return true
+}
+
+// length takes metres and feet: a height, or an altitude from 100 on.
+func (r *reader) length(i int, u string, n int) {
+	v := r.t[i].v
+	switch {
+	case u == uMetre && v >= 0.4 && v <= 2.5 && r.t[i].decimals > 0:
+		r.store(physio.Height, i, u, n)
+		r.metresOrSex(i, n)
+	case u == uMetre && v >= 100 && v == math.Trunc(v), u == uFoot && v >= 500:
+		r.store(physio.Altitude, i, u, n)
+	case u == uFoot && v >= 4 && v < 8:
+		r.ask(*askFeet(v, &r.t[i]))
+		r.take(i, n)
+	}
+}
+
+// metresOrSex asks whether the m behind a height was the unit or the sex, when
+// the sex is not said elsewhere.
+func (r *reader) metresOrSex(i, n int) {
+	if r.t[i+n].s != "m" || r.sample().Sex != "" {
+		return
+	}
+	r.ask(Question{Code: AskMetresSex, Quantity: physio.Height, Typed: r.t[i].typed(),
+		Choices: []Choice{{Word: "male", Sex: physio.Male}, {Word: "female", Sex: physio.Female}}})
+}
+
+// letterSex takes a lone m or f as the sex.
+func (r *reader) letterSex() {
+	for i := range r.t {
+		t := &r.t[i]
+		if t.used || t.kind != tokWord || t.s != "m" && t.s != "f" || r.sample().Sex != "" {
+			continue
+		}
+		if t.s == "f" && i+1 < len(r.t) && r.t[i+1].free() {
+			continue // a rate
+		}
+		if t.s == "m" && i > 0 && r.t[i-1].kind == tokNumber && r.t[i-1].decimals > 0 && r.t[i-1].v < 2.6 {
+			continue // metres
+		}
+		t.used = true
+		r.sample().Sex = physio.Sex(t.s)
+	}
+}

@@ -1,0 +1,303 @@
+package shorthand
+
+import (
+	"math"
+
+	"galeward/physio"
+)
+
+// saying is one thing that the line says on oxygen, in the order of the line.
+type saying struct {
+	at      int // token
+	device  physio.Device
+	fio2    float64
+	flow    float64
+	hasFlow bool
+}
+
+// sayFiO2 keeps a read FiO2, or its question.
+func (r *reader) sayFiO2(i int, f form) {
+	switch {
+	case f.q == physio.OxygenFlow:
+		r.oxygen = append(r.oxygen, saying{at: i, flow: f.v, hasFlow: true})
+	case f.ask != nil:
+		r.ask(*f.ask)
+	default:
+		r.oxygen = append(r.oxygen, saying{at: i, fio2: f.v})
+	}
+}
+
+// readOxygen finds litres, percentages, "on 40", bare fractions and air.
+func (r *reader) readOxygen() {
+	for i := range r.t {
+		t := &r.t[i]
+		switch {
+		case t.is(senseAir) && !r.negated(i):
+			r.oxygen = append(r.oxygen, saying{at: i, device: physio.Air, fio2: 0.21})
+		case !t.free() || t.sign != 0:
+		case t.percent:
+			r.percentage(i)
+		default:
+			r.litres(i)
+		}
+	}
+	for i := range r.t {
+		if t := &r.t[i]; t.free() && t.sign == 0 {
+			r.behindOn(i)
+		}
+	}
+	r.bareFraction()
+}
+
+// litres reads a flow.
+func (r *reader) litres(i int) {
+	u, n := r.unitAfter(i)
+	if u != uLitre && u != uLPM {
+		return
+	}
+	r.take(i, n)
+	v := r.t[i].v
+	if !physio.OxygenFlow.Possible(v) {
+		r.ask(*askImpossible(physio.OxygenFlow, v, r.t[i].typed()))
+		return
+	}
+	if v == 0 {
+		r.oxygen = append(r.oxygen, saying{at: i, device: physio.Air, fio2: 0.21, hasFlow: true})
+		return
+	}
+	r.oxygen = append(r.oxygen, saying{at: i, flow: v, hasFlow: true})
+}
+
+// percentage reads a bare percentage: FiO2, or the saturation when it fits the
+// PaO2, is no number that people set, or an FiO2 is said beside it.
+func (r *reader) percentage(i int) {
+	t := &r.t[i]
+	v := t.v / 100
+	if v < 0.205 || v > 1 {
+		r.take(i, 0)
+		f := formOf(physio.FiO2, t, uPercent, true)
+		r.sayFiO2(i, f)
+		return
+	}
+	if r.first >= 0 && !r.saidBefore(i) && r.raw[physio.SaO2] == nil && !r.sample().Has(physio.SaO2) && v > 0.5 && r.satFits(v) {
+		other := r.otherFiO2(i)
+		switch {
+		case other && !r.after(i, "on"), !other && !r.typicalFiO2(t.v):
+			r.keepSat(i, NoteBareSat)
+			return
+		case !other && v >= 0.85 && r.ceilingAllows(v) && r.adjacent(i) && v < 1:
+			r.take(i, 0)
+			r.ask(Question{Code: AskPercent, Quantity: physio.FiO2, Typed: t.typed(), Choices: []Choice{
+				withWord(choose(physio.FiO2, v), "FiO2"), withWord(choose(physio.SaO2, v), "saturation")}})
+			return
+		}
+	}
+	r.take(i, 0)
+	r.oxygen = append(r.oxygen, saying{at: i, fio2: math.Max(v, 0.21)})
+}
+
+// saidBefore says that words in front mark the number as oxygen.
+func (r *reader) saidBefore(i int) bool {
+	return r.after(i, "on") || r.after(i, "@") || i > 0 && r.t[i-1].is(senseDevice)
+}
+
+func (r *reader) after(i int, what string) bool {
+	if i == 0 {
+		return false
+	}
+	p := &r.t[i-1]
+	return p.word(what) || p.sep("@") && what == "@" || what == "on" && (p.word("at") || p.word("with"))
+}
+
+// adjacent says that the number follows the chain directly.
+func (r *reader) adjacent(i int) bool { return r.first >= 0 && i > r.last && i-r.last <= 2 }
+
+// otherFiO2 says that another free percentage, or an FiO2, is in the line.
+func (r *reader) otherFiO2(i int) bool {
+	for j := range r.t {
+		t := &r.t[j]
+		if j != i && t.free() && t.percent && t.v >= 21 {
+			return true
+		}
+		if t.is(senseAir) {
+			return true
+		}
+	}
+	for _, o := range r.oxygen {
+		if o.fio2 > 0 || o.hasFlow {
+			return true
+		}
+	}
+	for j := i + 1; j < len(r.t); j++ {
+		if u, _ := r.unitAfter(j); r.t[j].free() && (u == uLitre || u == uLPM) {
+			return true
+		}
+	}
+	return false
+}
+
+// behindOn reads "on 40", "@40", "on 2".
+func (r *reader) behindOn(i int) {
+	t := &r.t[i]
+	if !r.after(i, "on") && !r.after(i, "@") || t.than != 0 || r.gasStart(i) || r.joinedAhead(i) {
+		return
+	}
+	if r.t[i-1].word("with") {
+		return
+	}
+	switch v := t.v; {
+	case v >= 21 && v <= 100 && t.decimals == 0, v >= 0.21 && v <= 1 && t.decimals > 0:
+		r.take(i, 0)
+		r.sayFiO2(i, formOf(physio.FiO2, t, "", true))
+	case v >= 1 && v <= 20 && r.t[i-1].word("on") && r.first >= 0:
+		r.take(i, 0)
+		r.ask(*askFiO2(v, t.typed()))
+	}
+}
+
+// bareFraction reads .55 or 0.6 that stands alone.
+func (r *reader) bareFraction() {
+	for i := range r.t {
+		t := &r.t[i]
+		if !t.free() || t.sign != 0 || t.than != 0 || t.decimals == 0 || t.v < 0.21 || t.v > 1 || r.joined(i) || r.unknownBefore(i) {
+			continue
+		}
+		if u, _ := r.unitAfter(i); u != "" {
+			continue
+		}
+		r.take(i, 0)
+		r.sayFiO2(i, formOf(physio.FiO2, t, "", true))
+	}
+}
+
+// unknownBefore says that a word which the vocabulary does not know stands
+// directly before the number and so owns it.
+func (r *reader) unknownBefore(i int) bool {
+	if i == 0 || r.t[i-1].kind != tokWord || r.t[i-1].line != r.t[i].line {
+		return false
+	}
+	e := r.t[i-1].e
+	return e == nil || e.sense == senseWord || e.sense == senseLabel && !r.t[i-1].used || e.sense == senseTime
+}
+
+// flowOrFiO2 reads the bare number beside a mask or cannula: litres for those
+// that are set in litres, per cent for those that are set in per cent.
+func (r *reader) flowOrFiO2(i int, d physio.Device, nums []int) {
+	j := -1
+	if len(nums) > 0 {
+		j = nums[0]
+	} else if i > 0 && r.t[i-1].free() && r.t[i-1].line == r.t[i].line && !r.joined(i-1) && (i < 2 || r.t[i-2].kind != tokNumber) {
+		j = i - 1
+	}
+	if j < 0 || r.t[j].percent || r.t[j].sign != 0 || r.joinedAhead(j) || r.gasStart(j) {
+		return
+	}
+	if u, _ := r.unitAfter(j); u != "" {
+		return
+	}
+	v := r.t[j].v
+	byPercent := d == physio.Venturi || d == physio.TracheostomyMask || d == physio.TPiece || d == physio.FaceTent || d == physio.Hood
+	switch {
+	case d == physio.PulseDose:
+		r.take(j, 0)
+	case byPercent && (v >= 21 && v <= 100 || v >= 0.21 && v <= 1 && r.t[j].decimals > 0):
+		r.take(j, 0)
+		r.sayFiO2(j, formOf(physio.FiO2, &r.t[j], "", true))
+	case !byPercent && v > 0 && v <= 20 && d != physio.BagMask && d != physio.Chamber:
+		r.take(j, 0)
+		r.oxygen = append(r.oxygen, saying{at: j, flow: v, hasFlow: true})
+	}
+}
+
+// highFlow reads what follows a high-flow word: 50 L 60 %, or a bare pair in
+// which each number may be the flow.
+func (r *reader) highFlow(nums []int) {
+	var bare []int
+	for _, n := range nums {
+		if u, _ := r.unitAfter(n); u == "" && !r.t[n].percent && r.t[n].sign == 0 {
+			bare = append(bare, n)
+		}
+	}
+	if len(bare) == 0 || len(nums) > 0 && bare[0] != nums[0] && len(bare) > 1 {
+		return
+	}
+	if len(bare) == 1 {
+		r.highFlowOne(bare[0], len(nums) > 1)
+		return
+	}
+	r.highFlowPair(bare[0], bare[1])
+}
+
+const mostHighFlow = 70.0 // L/min: adult devices end at 60 to 70, common practice
+
+func canFlow(v float64) bool { return v >= 1 && v <= mostHighFlow }
+
+func canFiO2(t *token) bool {
+	return t.v >= 21 && t.v <= 100 && t.decimals == 0 || t.v >= 0.21 && t.v <= 1 && t.decimals > 0
+}
+
+// highFlowOne reads one bare number beside high flow.
+func (r *reader) highFlowOne(n int, paired bool) {
+	t := &r.t[n]
+	switch {
+	case paired && r.unitOfOther(n) == uPercent && canFlow(t.v):
+		r.take(n, 0)
+		r.oxygen = append(r.oxygen, saying{at: n, flow: t.v, hasFlow: true})
+	case paired && canFiO2(t):
+		r.take(n, 0)
+		r.sayFiO2(n, formOf(physio.FiO2, t, "", true))
+	case canFlow(t.v) && canFiO2(t) && t.decimals == 0:
+		r.take(n, 0)
+		r.askHighFlow(n, []Choice{withWord(choose(physio.OxygenFlow, t.v), number(t.v)+" L/min"), choose(physio.FiO2, t.v/100)})
+	case canFiO2(t):
+		r.take(n, 0)
+		r.sayFiO2(n, formOf(physio.FiO2, t, "", true))
+	case canFlow(t.v):
+		r.take(n, 0)
+		r.oxygen = append(r.oxygen, saying{at: n, flow: t.v, hasFlow: true})
+	}
+}
+
+// unitOfOther is the unit of the number beside n.
+func (r *reader) unitOfOther(n int) string {
+	for _, j := range []int{n + 2, n + 1, n - 1, n - 2, n - 3} {
+		if j >= 0 && j < len(r.t) && r.t[j].kind == tokNumber {
+			if u, _ := r.unitAfter(j); u != "" {
+				return u
+			}
+		}
+	}
+	return ""
+}
+
+func (r *reader) askHighFlow(n int, choices []Choice) {
+	r.ask(Question{Code: AskFlowOrFiO2, Quantity: physio.FiO2, Typed: r.t[n].typed(), Choices: choices})
+}
+
+// highFlowPair reads a/b: said when one reading is possible, else asked.
+func (r *reader) highFlowPair(n, m int) {
+	a, b := &r.t[n], &r.t[m]
+	first := canFlow(a.v) && canFiO2(b)
+	second := canFiO2(a) && canFlow(b.v) && a.v != b.v && b.v >= 10 && b.decimals == 0
+	switch {
+	case first && second:
+		r.take(n, 0)
+		r.take(m, 0)
+		one, two := choose(physio.OxygenFlow, a.v), choose(physio.OxygenFlow, b.v)
+		one.Set.Set(physio.FiO2, b.v/100)
+		two.Set.Set(physio.FiO2, a.v/100)
+		one.Word, two.Word = number(a.v)+" L/min", number(b.v)+" L/min"
+		r.askHighFlow(n, []Choice{one, two})
+		return
+	case second:
+		n, m, a, b = m, n, b, a
+	case !first:
+		return
+	}
+	r.take(n, 0)
+	r.take(m, 0)
+	r.oxygen = append(r.oxygen, saying{at: n, flow: a.v, hasFlow: true})
+	f := formOf(physio.FiO2, b, "", true)
+	r.sayFiO2(m, f)
+	r.note(NoteHighFlowPair, physio.OxygenFlow, a.typed(), a.v)
+}

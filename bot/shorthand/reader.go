@@ -1,0 +1,310 @@
+package shorthand
+
+import (
+	"strings"
+
+	"galeward/physio"
+)
+
+// reader reads the tokens of one gas, or of one set of bedside values.
+type reader struct {
+	h Habits
+	t []token
+	g Gas
+	// raw are the core values before they are settled.
+	raw raws
+	// first and last are the tokens of the chain of unlabelled gas values, -1
+	// when there is none. slashes says that separators joined it.
+	first, last int
+	slashes     bool
+	oxygen      []saying
+	// mixed says that the commas of the chain had two meanings.
+	mixed bool
+	// hint is the mode word of the segment, for set and measured rates.
+	controlled bool
+	smallPlace bool // a small positive number stands in the HCO3 place
+	claims     bool // the text makes claims, whose numbers are no values
+	// missed is set for an empty place of the chain.
+	missed map[physio.Quantity]bool
+	dose   bool
+}
+
+func (r *reader) sample() *physio.Sample { return &r.g.Sample }
+
+func (r *reader) note(c NoteCode, q physio.Quantity, typed string, v float64) {
+	r.g.Notes = append(r.g.Notes, Note{Code: c, Quantity: q, Typed: typed, Value: v})
+}
+
+func (r *reader) ask(q Question) { r.g.Questions = append(r.g.Questions, q) }
+
+// readGas reads one segment of a line.
+func readGas(t []token, h Habits, o segment) Gas {
+	r := &reader{h: h, t: t, raw: raws{}, first: -1, last: -1, mixed: o.mixed, claims: o.claims, missed: map[physio.Quantity]bool{}}
+	r.g.Bed, r.g.Time = o.bed, o.time
+	r.targets()
+	r.marks()
+	r.said()
+	r.measures()
+	r.headings()
+	r.labels()
+	r.settings()
+	r.chain()
+	r.labelsBehind()
+	r.signedPEEP()
+	r.readOxygen()
+	r.settle()
+	r.leftovers()
+	r.finish()
+	return r.g
+}
+
+// newborn says that the line or the house speaks of a newborn.
+func (r *reader) newborn() bool {
+	p := r.population()
+	return p == physio.Newborn || p == physio.Preterm
+}
+
+func (r *reader) population() physio.Population {
+	if p := r.sample().Population; p != "" {
+		return p
+	}
+	if r.h.Earlier != nil && r.h.Earlier.Population != "" {
+		return r.h.Earlier.Population
+	}
+	return r.h.Setting.Population
+}
+
+// adult says that adult sizes are expected.
+func (r *reader) adult() bool {
+	switch r.population() {
+	case physio.Newborn, physio.Preterm, physio.Child:
+		return false
+	}
+	w, ok := r.sample().Get(physio.Weight)
+	return !ok || w >= 30
+}
+
+// said takes the words on blood, patient, circumstance and bed.
+func (r *reader) said() {
+	s := r.sample()
+	for i := range r.t {
+		t := &r.t[i]
+		if t.kind != tokWord || t.e == nil || r.negated(i) {
+			continue
+		}
+		e := t.e
+		if e.sense == senseSaid || e.sense == senseDevice {
+			s.Circumstance |= e.circ
+		}
+		if e.sense != senseSaid {
+			continue
+		}
+		r.saidBlood(i, e)
+		if e.pop != "" && (s.Population == "" || e.pop == physio.Preterm) {
+			s.Population = e.pop
+		}
+		if e.sex != "" && s.Sex == "" {
+			s.Sex = e.sex
+		}
+	}
+}
+
+// negated says that the word before takes the meaning back.
+func (r *reader) negated(i int) bool {
+	if i == 0 || r.t[i-1].kind != tokWord {
+		return false
+	}
+	switch r.t[i-1].s {
+	case "no", "not", "without", "denies", "never", "rule", "off", "non", "isnt", "wasnt":
+		return true
+	case "out": // "rule out"
+		return i > 1 && r.t[i-2].s == "rule"
+	}
+	return false
+}
+
+// saidBlood takes a word on the sample. Doubt beside it is kept as doubt.
+func (r *reader) saidBlood(i int, e *entry) {
+	s := r.sample()
+	if e.blood == "" {
+		return
+	}
+	doubted := r.near(i, 3, "could", "maybe", "might", "possibly", "possible", "probably", "probable", "or", "query", "unsure", "think", "suspect", "?venous", "likely", "looks", "perhaps") || r.questioned(i)
+	switch {
+	case doubted && e.blood != physio.Arterial && e.site == "":
+		s.Blood = physio.BloodUncertain
+	case s.Blood == physio.BloodUncertain:
+	case s.Blood == "" || s.Blood == physio.Arterial || e.site != "" || s.Blood == physio.Venous && e.blood != physio.Arterial:
+		if e.blood == physio.Arterial && s.Blood != "" && e.site == "" {
+			return
+		}
+		s.Blood, s.Site = e.blood, e.site
+	}
+}
+
+// questioned says that a question mark directly follows or leads the word.
+func (r *reader) questioned(i int) bool {
+	return i+1 < len(r.t) && r.t[i+1].sep("?") || i > 0 && r.t[i-1].sep("?") && r.t[i].glued
+}
+
+// near says that one of the words stands within n tokens before i.
+func (r *reader) near(i, n int, words ...string) bool {
+	for j := i - 1; j >= 0 && j >= i-n; j-- {
+		for _, w := range words {
+			if r.t[j].word(w) {
+				return true
+			}
+		}
+	}
+	return false
+}
+
+// targets takes a saturation target: "target 88-92", "goal sats 92 to 96 %".
+func (r *reader) targets() {
+	for i := 0; i+2 < len(r.t); i++ {
+		a, j := &r.t[i], i+1
+		if a.kind != tokNumber || a.v < 60 || a.v > 100 || a.decimals > 0 {
+			continue
+		}
+		if !r.t[j].sep("-") && !r.t[j].word("to") && !r.t[j].word("and") || j+1 >= len(r.t) {
+			continue
+		}
+		b := &r.t[j+1]
+		if b.kind != tokNumber || b.v <= a.v || b.v > 100 || !r.targetWord(i) {
+			continue
+		}
+		r.g.Target = &physio.Target{Low: a.v / 100, High: b.v / 100}
+		a.used, b.used, a.taken, b.taken = true, true, true, true
+		r.unlabel(i)
+	}
+}
+
+func (r *reader) targetWord(i int) bool {
+	return r.near(i, 5, "target", "targets", "goal", "aim", "aiming", "aims", "keep", "range", "tgt", "scale", "prescribed", "sats target", "for", "between", "titrate", "titrated")
+}
+
+// unlabel takes the labels in front of a target away.
+func (r *reader) unlabel(i int) {
+	for j := i - 1; j >= 0 && j >= i-4; j-- {
+		if r.t[j].is(senseLabel) && (r.t[j].e.q == physio.SaO2 || r.t[j].e.q == physio.SpO2) {
+			r.t[j].e, r.t[j].used = nil, true
+		}
+	}
+}
+
+// marks takes what is no value: an index, a number behind a word that owns it,
+// a duration, a date, a clock time, a bed.
+func (r *reader) marks() {
+	for i := range r.t {
+		t := &r.t[i]
+		switch {
+		case t.kind == tokClock:
+			r.clock(i)
+		case t.is(senseBed):
+			r.bed(i)
+		case t.is(senseSwallow):
+			r.swallow(i)
+		case t.is(senseTime):
+			if r.g.Time == "" && weekday(t.s) != "" {
+				r.g.Time = weekday(t.s)
+			}
+		case t.sep("#") && i+1 < len(r.t) && r.t[i+1].kind == tokNumber && r.t[i+1].glued:
+			r.t[i+1].taken = true
+		case t.word("not") && i+1 < len(r.t) && r.t[i+1].kind == tokNumber:
+			r.t[i+1].taken = true
+		case t.word("x") && i+1 < len(r.t) && r.t[i+1].kind == tokNumber && !r.timesPair(i):
+			r.t[i+1].taken = true
+		}
+	}
+}
+
+// timesPair says that x stands between a volume and a rate: 500 x 14.
+func (r *reader) timesPair(i int) bool {
+	if i == 0 || i+1 >= len(r.t) || r.t[i-1].kind != tokNumber {
+		return false
+	}
+	a, b := r.t[i-1].v, r.t[i+1].v
+	return max(a, b) >= 100 && min(a, b) <= 60 || a < 1.6 && r.t[i-1].decimals > 0
+}
+
+func weekday(s string) string {
+	switch {
+	case len(s) < 3 || strings.Contains(s, " "):
+		return ""
+	}
+	for _, d := range []string{"mon", "tue", "wed", "thu", "fri", "sat", "sun"} {
+		if strings.HasPrefix(s, d) && (len(s) == 3 || strings.HasSuffix(s, "day") || s == "tues" || s == "thur" || s == "thurs") {
+			return strings.ToUpper(d[:1]) + d[1:]
+		}
+	}
+	if s == "yesterday" || s == "today" || s == "tonight" || s == "overnight" || s == "noon" || s == "midnight" {
+		return s
+	}
+	return ""
+}
+
+func (r *reader) clock(i int) {
+	if r.g.Time == "" {
+		r.g.Time = r.t[i].s
+	}
+	r.t[i].used = true
+}
+
+// bed takes the label behind a bed word: a number with up to two letters, or a
+// short code. "b" needs a number glued to it or none of the gas behind it.
+func (r *reader) bed(i int) {
+	j := i + 1
+	for j < len(r.t) && (r.t[j].sep("#:") || r.t[j].word("no")) {
+		j++
+	}
+	if j >= len(r.t) {
+		return
+	}
+	n := &r.t[j]
+	letter := r.t[i].s == "b" && !n.glued
+	if letter || n.kind != tokNumber || n.decimals > 0 || n.sign != 0 || n.v > 9999 {
+		return
+	}
+	label := n.s
+	if j+1 < len(r.t) && r.t[j+1].kind == tokWord && r.t[j+1].glued && len(r.t[j+1].s) == 1 {
+		label += r.t[j+1].s
+		r.t[j+1].used, r.t[j+1].e = true, nil
+	}
+	n.taken = true
+	if r.g.Bed == "" {
+		r.g.Bed = label
+	}
+}
+
+// swallow takes the numbers that belong to a word which names no value here.
+func (r *reader) swallow(i int) {
+	for j := i + 1; j < len(r.t) && j < i+6; j++ {
+		t := &r.t[j]
+		switch {
+		case t.kind == tokNumber && !r.gasStart(j):
+			t.taken = true
+			if j+2 >= len(r.t) || !r.t[j+1].sep("/:-") || r.t[j+2].kind != tokNumber || r.gasStart(j+2) {
+				return
+			}
+		case t.sep("/:=-~#@") || t.is(senseFiller):
+		default:
+			r.swallowBefore(i)
+			return
+		}
+	}
+}
+
+// swallowBefore takes the number in front of a tube word: "7.5 ETT".
+func (r *reader) swallowBefore(i int) {
+	switch r.t[i].s {
+	case "ett", "tube", "trach", "shiley", "portex", "bivona", "lip", "teeth", "ppm", "french", "gauge":
+		if i > 0 && r.t[i-1].kind == tokNumber && !r.joined(i-1) {
+			r.t[i-1].taken = true
+		}
+	}
+}
+
+// joined says that the number at i is tied to a number before it by a slash.
+func (r *reader) joined(i int) bool {
+	return i > 1 && r.t[i-1].sep("/|\\") && r.t[i-2].kind == tokNumber
+}

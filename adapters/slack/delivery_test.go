@@ -208,16 +208,25 @@ func TestFaultsOnTheWay(t *testing.T) {
 }
 
 // TestWaitsAsLongAsAsked: Retry-After is a promise about the time before which
-// another call is pointless.
+// another call is pointless, on every way.
 func TestWaitsAsLongAsAsked(t *testing.T) {
-	play(t, false, nil, mention, func(ctx context.Context, f *slackfake.Fake, e bot.Event, way bot.Way) {
-		f.Fault("chat.postMessage", slackfake.Fault{Status: 429, RetryAfter: "1"})
-		start := time.Now()
-		_, err := way.Deliver(ctx, told(e, "answer"))
-		if took := time.Since(start); err != nil || took < time.Second || took > 3*time.Second {
-			t.Errorf("%v after %s", err, took)
-		}
-	})
+	for route, send := range map[string]func(*slackfake.Fake){"chat.postMessage": mention, "chat.postEphemeral": mention, "response_url": command} {
+		t.Run(route, func(t *testing.T) {
+			t.Parallel()
+			play(t, false, nil, send, func(ctx context.Context, f *slackfake.Fake, e bot.Event, way bot.Way) {
+				f.Fault(route, slackfake.Fault{Status: 429, RetryAfter: "1"})
+				post := told(e, "answer")
+				if route == "chat.postEphemeral" {
+					post.For = e.User
+				}
+				start := time.Now()
+				_, err := way.Deliver(ctx, post)
+				if took := time.Since(start); err != nil || took < time.Second || took > 5*time.Second {
+					t.Errorf("%v after %s", err, took)
+				}
+			})
+		})
+	}
 }
 
 // TestOutage: calls stay few, and the error names no address, token or text.
@@ -229,6 +238,16 @@ func TestOutage(t *testing.T) {
 		_, err := way.Deliver(ctx, told(e, "bed-seven"))
 		if err == nil || err.Error() != "slack chat.postMessage: status 503" {
 			t.Errorf("error: %v", err)
+		}
+		for range 5 {
+			f.Fault("chat.postEphemeral", slackfake.Fault{Cut: true})
+		}
+		post := told(e, "bed-seven")
+		post.For = e.User
+		_, err = way.Deliver(ctx, post)
+		host := strings.TrimSuffix(f.APIURL(), "api/")
+		if want := "slack chat.postEphemeral: call to " + host + "...: connection lost"; err == nil || err.Error() != want {
+			t.Errorf("error: %v, want %s", err, want)
 		}
 	})
 	if n := f.Calls("chat.postMessage"); n != 4 {
@@ -455,7 +474,6 @@ func TestPacing(t *testing.T) {
 	const pace = 60 * time.Millisecond
 	h := &adaptertest.Handler{}
 	f, _ := connect(t, h, quiet(), func(c *Config) { c.Pace = pace })
-	f.WatchPace(pace * 8 / 10)
 	start := time.Now()
 	for i := range 6 {
 		f.Mention(slackfake.Message{Text: fmt.Sprint("question ", i)})

@@ -9,8 +9,11 @@ import (
 	"strings"
 	"testing"
 
+	"galeward/adapters/adaptertest"
 	"galeward/bot"
 	"galeward/bot/reply"
+
+	slackapi "github.com/slack-go/slack"
 )
 
 var renew = flag.Bool("update", false, "rewrite the golden files")
@@ -179,6 +182,24 @@ func TestManyBlocks(t *testing.T) {
 	}
 	if n != 98 {
 		t.Errorf("%d of 98 blocks", n)
+	}
+}
+
+func TestButtonLimits(t *testing.T) {
+	r := adaptertest.Echo("which?")
+	for range 30 {
+		r.Buttons = append(r.Buttons, reply.Button{Label: strings.Repeat("é", 80), Token: "t"})
+	}
+	r.Buttons[0].Token = strings.Repeat("t", maxValue+1)
+	row := render(r, "").blocks[1].(*slackapi.ActionBlock).Elements.ElementSet
+	if len(row) != maxButtons {
+		t.Errorf("%d buttons", len(row))
+	}
+	for _, e := range row {
+		b := e.(*slackapi.ButtonBlockElement)
+		if width(b.Text.Text) != maxLabel || !strings.HasPrefix(b.Text.Text, "éé") || b.Value != "t" {
+			t.Errorf("label %q, value of %d", b.Text.Text, len(b.Value))
+		}
 	}
 }
 

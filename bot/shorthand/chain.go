@@ -205,7 +205,7 @@ func (c *chainReader) empty() {
 func (c *chainReader) number(t *token) bool {
 	r := c.r
 	spaced := c.seps == 0 && c.filled > 0 && t.sign == 0
-	if c.filled >= 2 && (r.gasStart(c.i) || phLike(t.v) && t.decimals == 2) {
+	if secondGas(r.t, c.i, c.filled) {
 		return false
 	}
 	if spaced && c.slashes >= 2 && c.filled >= 3 || c.filled > 0 && c.foreignUnit() {
@@ -220,6 +220,17 @@ func (c *chainReader) number(t *token) bool {
 	}
 	c.seps = 0
 	return c.place(t, spaced)
+}
+
+// secondGas says that the number at i starts another gas: a pH with two
+// decimals, or one with one decimal that a blank sets off. In kPa a PaO2 of 7.4
+// looks like a pH.
+func secondGas(t []token, i, filled int) bool {
+	x := &t[i]
+	if !phLike(x.v) || x.sign != 0 || x.percent {
+		return false
+	}
+	return filled >= 2 && x.decimals == 2 || filled >= 3 && x.decimals == 1 && t[i-1].kind == tokNumber && gasStart(t, i)
 }
 
 // foreignUnit says that the number carries a unit of something else.

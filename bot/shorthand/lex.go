@@ -50,7 +50,7 @@ func (l *lexer) next() {
 	l.gap = false
 }
 
-func (l *lexer) digitAt(i int) bool { return i < len(l.s) && isDigit(l.s[i]) }
+func (l *lexer) digitAt(i int) bool { return i >= 0 && i < len(l.s) && isDigit(l.s[i]) }
 
 func (l *lexer) byteAt(i int) byte {
 	if i < 0 || i >= len(l.s) {

@@ -1,0 +1,119 @@
+package shorthand
+
+import (
+	"regexp"
+	"strings"
+)
+
+// commandWords are the words that are commands when a message starts with
+// them.
+var commandWords = map[string]Intent{
+	"now": IntentNow, "recheck": IntentNow, "aim": IntentAim, "suppose": IntentSuppose,
+	"check": IntentCheck, "second": IntentCheck, "doublecheck": IntentCheck, "dblcheck": IntentCheck,
+	"trend": IntentTrend, "course": IntentTrend, "series": IntentTrend,
+	"beds": IntentBeds, "huddle": IntentBeds, "board": IntentBeds, "record": IntentRecord, "chart": IntentRecord,
+	"house": IntentHouse, "units": IntentHouse, "order": IntentHouse, "teach": IntentHouse,
+	"why": IntentWhy, "workings": IntentWhy, "forget": IntentForget, "wipe": IntentForget, "erase": IntentForget,
+	"help": IntentHelp, "halp": IntentHelp,
+}
+
+// lead cuts the bot's own name and a greeting off the front of a message.
+var lead = regexp.MustCompile(`^[\s:,;>*_~"'(.!-]*(?:@?galeward\b|/gas\b|@[a-z][\w.-]*)?[\s:,;>*_~"'(.!-]*`)
+
+// houseForms are the sentences that set a rule of the channel. Each gives the
+// argument in one form, whatever was typed.
+var houseForms = []struct {
+	typed *regexp.Regexp
+	means string
+}{
+	{regexp.MustCompile(`^set\s+(?:the\s+|our\s+|channel\s+)?(.+)$`), "$1"},
+	{regexp.MustCompile(`^(?:our|the|my)\s+(?:value\s+)?order\s+(?:is|here is|will be)[:\s]+(.+)$`), "order $1"},
+	{regexp.MustCompile(`^we\s+(?:type|use|read|give|write|report)\s+((?:ph|pao2|po2|o2|paco2|pco2|co2)\b.+)$`), "order $1"},
+	{regexp.MustCompile(`^(?:our|the)\s+units?\s+(?:is|are)\s+(.+)$`), "units $1"},
+	{regexp.MustCompile(`^we\s+(?:use|work in|report in|are in|type in|read in)\s+(kpa|mmhg|mm hg|torr)\b.*$`), "units $1"},
+	{regexp.MustCompile(`^(?:we are|we're|were|we sit|this unit is|our hospital is|hospital is|this hospital is|i am|our unit is)\s+(?:at|up at)\s+(?:an altitude of |an elevation of |about )?([\d., ]+)\s*(m|metres|meters|ft|feet)\b.*$`), "altitude $1 $2"},
+	{regexp.MustCompile(`^(?:our|the)\s+(?:altitude|elevation)\s+(?:is|here is)\s+(.+)$`), "altitude $1"},
+	{regexp.MustCompile(`^(?:our|the)\s+(?:barometric pressure|pb|barometer)\s+(?:is|here is)\s+(.+)$`), "pressure $1"},
+	{regexp.MustCompile(`^when\s+(?:we|i|people here|they)\s+(?:say|type|write)\s+['"]?(.+?)['"]?,?\s+(?:we|i|it|they)\s+means?\s+['"]?(.+?)['"]?[.!]?$`), "word $1 = $2"},
+	{regexp.MustCompile(`^teach\s+(.+)$`), "word $1"},
+	{regexp.MustCompile(`^['"]?([a-z][a-z0-9 ]{0,20}?)['"]?\s+(?:means|stands for|is short for)\s+['"]?([a-z0-9 ]{2,30}?)['"]?(?:\s+here|\s+in this channel)?$`), "word $1 = $2"},
+	{regexp.MustCompile(`^(?:our|the)\s+(?:sat(?:uration)?|spo2|o2)?\s*targets?\s+(?:is|are)\s+(.+)$`), "target $1"},
+	{regexp.MustCompile(`^units\s+(.+)$`), "units $1"},
+	{regexp.MustCompile(`^order\s+((?:is\s+)?(?:ph|pao2|po2|o2|paco2|pco2|co2)\b.+)$`), "order $1"},
+}
+
+// houseRule gives the argument of a sentence that sets a rule of the channel.
+func houseRule(s string) (string, bool) {
+	s = strings.Join(strings.Fields(strings.TrimRight(s, " .!?")), " ")
+	if len(s) > 300 {
+		return "", false
+	}
+	for _, f := range houseForms {
+		if m := f.typed.FindStringSubmatchIndex(s); m != nil {
+			arg := string(f.typed.ExpandString(nil, f.means, s, m))
+			return clean(strings.Replace(arg, "order is ", "order ", 1)), true
+		}
+	}
+	return "", false
+}
+
+// clean keeps letters, digits and the signs that a rule needs, in lower case
+// and on one line. What it gives can be shown anywhere.
+func clean(s string) string {
+	const longest = 160
+	var b strings.Builder
+	for _, c := range []byte(strings.ToLower(s)) {
+		switch {
+		case isLetter(c), isDigit(c), strings.IndexByte(" .,:;/%+-='()", c) >= 0:
+			b.WriteByte(c)
+		default:
+			b.WriteByte(' ')
+		}
+		if b.Len() >= longest {
+			break
+		}
+	}
+	return strings.Trim(strings.Join(strings.Fields(b.String()), " "), " ,;:")
+}
+
+// command finds the command word at the head of a message, and what follows.
+func command(s string) (Intent, string) {
+	s = s[len(lead.FindString(s)):]
+	word, rest := s, ""
+	if i := strings.IndexFunc(s, func(r rune) bool { return !(r >= 'a' && r <= 'z') }); i >= 0 {
+		word, rest = s[:i], s[i:]
+	}
+	if word == "double" && strings.HasPrefix(strings.TrimLeft(rest, " -"), "check") {
+		return IntentCheck, strings.TrimPrefix(strings.TrimLeft(rest, " -"), "check")
+	}
+	if word == "" && strings.HasPrefix(rest, "?") && strings.Trim(rest, "? ") == "" {
+		return IntentHelp, ""
+	}
+	if strings.HasPrefix(rest, "'") || strings.HasPrefix(rest, "-") && word != "check" {
+		return IntentNone, s
+	}
+	if intent, ok := commandWords[word]; ok {
+		return intent, strings.TrimLeft(rest, " :,-?!.\t")
+	}
+	return IntentNone, s
+}
+
+// loose says that a command may be taken from a message that was not meant for
+// the bot in so many words: the bare command, or one with a bed label.
+func loose(intent Intent, rest string) bool {
+	rest = strings.Trim(rest, " ?.!\n")
+	if rest == "" {
+		return intent != IntentNow && intent != IntentCheck && intent != IntentHelp
+	}
+	switch intent {
+	case IntentTrend, IntentRecord, IntentForget:
+		return bedOnly.MatchString(rest)
+	case IntentBeds:
+		return rest == "list" || rest == "list please" || rest == "please"
+	case IntentHouse:
+		return rest == "rules"
+	}
+	return false
+}
+
+var bedOnly = regexp.MustCompile(`^(?:bed|b|room|rm|bay|case)?\s*#?\d{1,4}[a-z]?$`)

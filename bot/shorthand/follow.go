@@ -1,0 +1,58 @@
+package shorthand
+
+import (
+	"regexp"
+	"strings"
+
+	"galeward/physio"
+)
+
+var (
+	// correctionWords take the typed value back.
+	correctionWords = regexp.MustCompile(`\b(sorry|oops+|ooops|whoops|woops|correction|corrected value|typo|mistyped|mistype|misread|miskeyed|my bad|my mistake|i meant|meant|should be|should read|should have been|shouldve been|supposed to be|scratch that|fat finger\w*|not \d[\d.,]*|was actually|is actually|actually (was|is|it)|wrong (number|value|one|co2|ph|po2|fio2)|rather than|instead of \d)\b|^\s*\*`)
+	// wasBlood takes the kind of blood back.
+	wasBlood = regexp.MustCompile(`\b(it|that|this|gas|sample|one)('s| is| was| were|s) (actually |really |a |an )*(venous|vbg|arterial|abg|capillary|cap|cbg|mixed venous|central venous|central)\b`)
+	// laterWords make the line a later gas of the thread.
+	laterWords = regexp.MustCompile(`^\s*(now|recheck|repeat|repeated|rpt|later|after|following|post|same|still|update|latest|redo|f/u|followup|follow up|new gas|next gas|next|then)\b|\b(hr|hrs|hour|hours|min|mins|minutes|h) (later|post|after|since)\b|\bsame (settings?|vent settings|fio2|o2|oxygen|everything|device)\b|\b(down|up) (to|from)\b|\b(came|come|gone|went|dropped|fell|rose|climbed) (up|down|to)\b|\b(weaned|changed|increased|decreased|switched|moved|turned|bumped|titrated|dropped|stepped) (to|up|down|him|her|them|over)\b|\bextubated\b|\bnow\s*$|\bre-?(check|peat)\b|\bafter (peep|niv|bipap|change|neb|suction|prone|proning|increase|decrease|the|cpap|hfnc|extub\w*|intub\w*)\b`)
+)
+
+// follow says how a gas relates to the thread's last one.
+func (p *parser) follow(g *Gas, t []token) Follow {
+	s := &g.Sample
+	whole := s.Has(physio.PHq) && (s.Has(physio.PaCO2) || s.Has(physio.PaO2) || len(g.Questions) > 0)
+	head := p.rest
+	if len(head) > 400 {
+		head = head[:400]
+	}
+	switch {
+	case p.line.Intent == IntentNow:
+		return FollowNow
+	case p.line.Intent == IntentAim || p.line.Intent == IntentSuppose || p.line.Intent == IntentCheck && whole:
+		return FollowNone
+	case correctionWords.MatchString(head) && (!whole || p.h.Earlier != nil && !strings.Contains(head, "\n")):
+		return FollowCorrection
+	case !whole && wasBlood.MatchString(head):
+		return FollowCorrection
+	case laterWords.MatchString(head) && (!whole || !headIsIntubation(head)):
+		return FollowNow
+	case !whole && p.h.Earlier != nil && p.line.Intent == IntentNone && !measuredAnew(s):
+		return FollowAddition
+	case !whole && p.h.Earlier != nil && p.line.Intent == IntentNone && !s.Has(physio.PHq):
+		return FollowAddition
+	}
+	return FollowNone
+}
+
+// headIsIntubation says that "post" or "after" names an event before the first
+// gas and no earlier gas.
+func headIsIntubation(s string) bool {
+	return afterEvent.MatchString(s)
+}
+
+var afterEvent = regexp.MustCompile(`^\s*(post|after|following)[ -]*(intub\w*|op\w*|arrest|rosc|cardiac|code|extub\w*|cpr|vf|surgery|procedure|ictal)`)
+
+// measuredAnew says that the line holds new measurements rather than what was
+// left out before.
+func measuredAnew(s *physio.Sample) bool {
+	return s.Has(physio.PaCO2, physio.PaO2)
+}

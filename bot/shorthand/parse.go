@@ -1,0 +1,279 @@
+package shorthand
+
+import (
+	"strings"
+
+	"galeward/physio"
+)
+
+// Parse reads one typed message under the habits of its channel and thread. It
+// never panics, never holds a refusal and values together, and its work grows
+// with the length of the message only up to a fixed cut.
+func Parse(text string, h Habits) (line Line) {
+	defer func() {
+		if recover() != nil {
+			line = Line{Kind: quietKind(h)}
+		}
+	}()
+	if h.Units == "" {
+		h.Units = MmHg
+	}
+	folded := fold(text)
+	if r := identified(folded); r != RefusedNone {
+		return Line{Kind: Refusal, Refused: r}
+	}
+	p := &parser{h: h, typed: strings.ToLower(stripText(folded))}
+	return p.parse()
+}
+
+// quietKind is the kind of a message in which nothing was read.
+func quietKind(h Habits) Kind {
+	if h.Addressed {
+		return Unclear
+	}
+	return Silence
+}
+
+// parser reads one message.
+type parser struct {
+	h     Habits
+	typed string // folded, in lower case
+	rest  string // without the command word
+	line  Line
+	mixed bool
+}
+
+func (p *parser) parse() Line {
+	if c, ok := p.released(); ok {
+		return Line{Kind: Released, Picked: c}
+	}
+	if arg, ok := houseRule(p.typed[len(lead.FindString(p.typed)):]); ok && (p.h.Addressed || !strings.HasPrefix(arg, "word ")) {
+		return Line{Kind: Command, Intent: IntentHouse, Argument: arg}
+	}
+	p.line.Intent, p.rest = command(p.typed)
+	p.line.Declined = declined(p.typed)
+	p.read()
+	return p.verdict()
+}
+
+// read reads the values of the message.
+func (p *parser) read() {
+	s, mixed := commas(untable(expand(p.rest, p.h.Words)))
+	p.mixed = mixed
+	t := lex(s)
+	intent, clause, rest := p.clauses(t, s)
+	if intent != IntentNone {
+		p.line.Intent = intent
+		p.readClause(intent, clause)
+		t = rest
+	}
+	claims := p.line.Intent == IntentCheck
+	parts, list := split(t)
+	p.line.List = list
+	for i := range parts {
+		parts[i].mixed, parts[i].claims = p.mixed, claims
+		g := readGas(parts[i].t, p.h, parts[i])
+		p.line.Gases = append(p.line.Gases, g)
+	}
+	p.relate(parts, t)
+	if p.h.Addressed {
+		p.twoNumbers(t)
+	}
+}
+
+// relate says how the gases belong to each other and to the thread.
+func (p *parser) relate(parts []segment, t []token) {
+	gases := p.line.Gases
+	if len(gases) == 2 {
+		if pair, ok := venousPair(&gases[0], &gases[1]); ok {
+			p.line.Gases = []Gas{pair}
+			gases = p.line.Gases
+		}
+	}
+	for i := 1; i < len(gases); i++ {
+		if parts[i].later {
+			gases[i].Follow = FollowNow
+		}
+		if parts[i].plain && !p.line.List {
+			ask := Question{Code: AskTwoGases, Quantity: physio.PHq, Choices: []Choice{{Word: "same patient"}, {Word: "two patients"}}}
+			gases[i].Questions = append([]Question{ask}, gases[i].Questions...)
+		}
+	}
+	if len(gases) > 0 && !p.line.List {
+		gases[0].Follow = p.follow(&gases[0], t)
+	}
+}
+
+// verdict says what kind of message it was.
+func (p *parser) verdict() Line {
+	p.dropEmpty()
+	l := &p.line
+	switch {
+	case len(l.Gases) > 0:
+		l.Kind = Reading
+	case l.Intent != IntentNone && p.meant():
+		l.Kind = Command
+		if l.Intent == IntentHouse || l.Intent == IntentWhy || l.Intent == IntentHelp || l.Intent == IntentForget || l.Intent == IntentTrend || l.Intent == IntentRecord || l.Intent == IntentBeds {
+			l.Argument = clean(p.rest)
+		}
+	case len(l.Declined) > 0 && p.h.Addressed:
+		return Line{Kind: Refusal, Refused: l.Declined[0]}
+	default:
+		return Line{Kind: quietKind(p.h)}
+	}
+	if l.Intent != IntentNone && l.Argument == "" && l.Intent != IntentAim && l.Intent != IntentSuppose && l.Intent != IntentCheck && l.Intent != IntentNow && len(l.Gases) > 0 && l.Intent != IntentTrend && l.Intent != IntentBeds && l.Intent != IntentRecord {
+		l.Argument = clean(p.rest)
+	}
+	return *l
+}
+
+// meant says that a command without values was meant for the bot.
+func (p *parser) meant() bool {
+	if p.h.Addressed {
+		return p.line.Intent != IntentCheck || p.h.Earlier != nil || !p.line.Target.Empty() || len(strings.Fields(p.rest)) > 0
+	}
+	if p.line.Intent == IntentAim || p.line.Intent == IntentSuppose {
+		return p.h.Earlier != nil && (!p.line.Target.Empty() || !p.line.Change.Empty())
+	}
+	return loose(p.line.Intent, p.rest) || p.h.Earlier != nil && p.line.Intent == IntentWhy
+}
+
+// dropEmpty leaves out gases that hold nothing worth an answer.
+func (p *parser) dropEmpty() {
+	kept := p.line.Gases[:0]
+	for _, g := range p.line.Gases {
+		if p.worth(&g) {
+			kept = append(kept, g)
+		}
+	}
+	p.line.Gases = kept
+	if len(kept) == 0 {
+		p.line.Gases, p.line.List = nil, false
+	}
+}
+
+// worth says that a gas is answered: it is one, or its bedside values mean
+// something together, or the bot was meant and anything was read.
+func (p *parser) worth(g *Gas) bool {
+	s := &g.Sample
+	said := !s.Values.Empty() || len(g.Questions) > 0
+	switch {
+	case s.Has(physio.PHq), s.Has(physio.PaCO2, physio.PaO2):
+		return true
+	case p.command():
+		return false
+	case len(g.Questions) > 0 && coreDoubt(g.Questions):
+		return true
+	case p.h.Earlier != nil && p.h.Addressed:
+		return said || g.Follow != FollowNone && (s.Blood != "" || s.Device != "" || s.Population != "" || s.Circumstance != 0) || s.Blood != "" && s.Blood != physio.NoBlood || s.Device != "" || g.Target != nil
+	case p.h.Addressed:
+		return said || g.Follow == FollowCorrection && s.Blood != "" || s.Device == physio.Air
+	}
+	return together(s)
+}
+
+// command says that the message is a command whose numbers are no values.
+func (p *parser) command() bool {
+	switch p.line.Intent {
+	case IntentHouse, IntentForget, IntentHelp, IntentWhy, IntentBeds, IntentTrend, IntentRecord:
+		return true
+	case IntentAim, IntentSuppose:
+		return !p.line.Target.Empty() || !p.line.Change.Empty()
+	}
+	return false
+}
+
+// coreDoubt says that a question about the gas itself is open, so that there
+// was one.
+func coreDoubt(qs []Question) bool {
+	for _, q := range qs {
+		switch q.Code {
+		case AskPH, AskSwap, AskUnit, AskTwoNumbers, AskSecondGroup:
+			return true
+		}
+	}
+	return false
+}
+
+// together says that bedside values without a gas mean something together.
+func together(s *physio.Sample) bool {
+	oxygen := s.Has(physio.FiO2) || s.Has(physio.OxygenFlow) || s.Device != ""
+	count := 0
+	s.Each(func(q physio.Quantity, _ float64) {
+		if q != physio.Age && q != physio.Height && q != physio.Weight && q != physio.Gestation && q != physio.OxygenFlow && q != physio.FiO2 {
+			count++
+		}
+	})
+	switch {
+	case s.Has(physio.SpO2):
+		return oxygen || count >= 2
+	case s.Has(physio.EtCO2), s.Has(physio.TcCO2), s.Has(physio.PaCO2), s.Has(physio.PaO2):
+		return count >= 2 || oxygen
+	case s.Has(physio.VT):
+		return count >= 3 || count >= 2 && (s.Has(physio.RR) || s.Has(physio.RRSet) || s.Has(physio.Pplat))
+	}
+	return count >= 4
+}
+
+// twoNumbers asks about two bare numbers, when the bot was meant and nothing
+// else was read.
+func (p *parser) twoNumbers(t []token) {
+	if len(p.line.Gases) != 1 || !p.line.Gases[0].Sample.Values.Empty() || len(p.line.Gases[0].Questions) > 0 {
+		return
+	}
+	var nums []*token
+	for i := range t {
+		switch {
+		case t[i].kind == tokNumber:
+			nums = append(nums, &t[i])
+		case t[i].sep("/,-|\n") || t[i].is(senseOver):
+		default:
+			return
+		}
+	}
+	if len(nums) != 2 || !physio.PaCO2.Possible(nums[0].v) || !physio.PaO2.Possible(nums[1].v) {
+		return
+	}
+	yes := Choice{Word: "PaCO2/PaO2"}
+	yes.Set.Set(physio.PaCO2, nums[0].v)
+	yes.Set.Set(physio.PaO2, nums[1].v)
+	p.line.Gases[0].Questions = []Question{{Code: AskTwoNumbers, Quantity: physio.PaCO2, Typed: nums[0].s + "/" + nums[1].s, Choices: []Choice{yes, {Word: "no gas"}}}}
+}
+
+// venousPair joins an arterial and a venous gas of one moment: the venous side
+// goes into the arterial gas.
+func venousPair(a, b *Gas) (Gas, bool) {
+	if isVenous(a.Sample.Blood) && (b.Sample.Blood == physio.Arterial || b.Sample.Blood == "") && b.Sample.Has(physio.PHq) {
+		a, b = b, a
+	}
+	if !isVenous(b.Sample.Blood) || isVenous(a.Sample.Blood) || a.Sample.Blood == physio.Cord || a.Sample.Blood == physio.Capillary {
+		return Gas{}, false
+	}
+	out := *a
+	for from, to := range map[physio.Quantity]physio.Quantity{physio.PaCO2: physio.PvCO2, physio.PaO2: physio.PvO2, physio.SaO2: physio.SvO2} {
+		if v, ok := b.Sample.Get(from); ok && to.Possible(v) {
+			out.Sample.Set(to, v)
+		}
+	}
+	b.Sample.Each(func(q physio.Quantity, v float64) {
+		if !isCore(q) && !out.Sample.Has(q) {
+			out.Sample.Set(q, v)
+		}
+	})
+	if out.Sample.Device == "" {
+		out.Sample.Device = b.Sample.Device
+	}
+	out.Sample.Circumstance |= b.Sample.Circumstance
+	out.Sample.Blood = physio.Arterial
+	out.Notes = append(out.Notes, b.Notes...)
+	for _, q := range b.Questions {
+		if q.Code != AskTwoGases && q.Code != AskVenous {
+			out.Questions = append(out.Questions, q)
+		}
+	}
+	return out, true
+}
+
+func isVenous(b physio.Blood) bool {
+	return b == physio.Venous || b == physio.CentralVenous || b == physio.MixedVenous
+}

@@ -48,7 +48,7 @@ func (h House) next(clocks []string, after time.Time) (time.Time, bool) {
 	loc := h.location()
 	day := after.In(loc)
 	var found []time.Time
-	for offset := -1; offset <= 2; offset++ {
+	for offset := 0; offset <= 2; offset++ {
 		for _, clock := range clocks {
 			at, err := time.Parse("15:04", clock)
 			if err != nil {

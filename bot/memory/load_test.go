@@ -79,6 +79,24 @@ func TestTakeOverOfADeadProcess(t *testing.T) {
 	expect(t, "after the take-over answered", load(t, c, call("m1")).Claim, Duplicate)
 }
 
+// Two processes find the same dead claim; only one of them takes it over.
+func TestTwoFindADeadClaim(t *testing.T) {
+	r := newRig()
+	load(t, r.process(), call("m1"))
+	r.add(time.Minute)
+	b, c := r.process(), r.process()
+	var first Claim
+	r.tap.breakWith(func(ops []store.Op) (error, bool) {
+		if len(ops) == 1 { // b has seen the dead claim; c is quicker
+			r.tap.breakWith(nil)
+			first = load(t, c, call("m1")).Claim
+		}
+		return nil, false
+	})
+	expect(t, "the slower", load(t, b, call("m1")).Claim, Duplicate)
+	expect(t, "the quicker", first, TakenOver)
+}
+
 func TestOneOfManyTakesOver(t *testing.T) {
 	r := newRig()
 	load(t, r.process(), call("m1"))
@@ -213,6 +231,23 @@ func TestRecoveryWithoutARestart(t *testing.T) {
 	w := load(t, m, call("m3"))
 	expect(t, "degraded", w.Degraded, false)
 	expect(t, "gases, the one of the outage included", paco2s(w.Thread()), "50 60")
+}
+
+// A deletion that comes while the store is down is carried out when it is
+// back before the event ends.
+func TestDeletionWhileTheStoreIsDown(t *testing.T) {
+	r := newRig()
+	m := r.process()
+	reading(t, m, call("m1"), 50)
+	r.tap.breakWith(allFail(errCut))
+	c := call("m1")
+	c.Delivery = "m1 deleted"
+	v := load(t, m, c)
+	v.Remove("m1")
+	r.tap.breakWith(nil)
+	r.add(20 * time.Second)
+	save(t, m, v)
+	expect(t, "gases", paco2s(load(t, m, call("m2")).Thread()), "")
 }
 
 // A lost reply may have stored the claim: the event is answered, as in any

@@ -385,9 +385,22 @@ func TestOwnWriteFoundInAConflict(t *testing.T) {
 		return nil, false
 	})
 	_, rev, err := m.ChangeHouse(ctx, ward, "U1", setUnits(shorthand.KPa))
-	if err != nil || rev.N != 1 {
-		t.Errorf("%+v %v, want revision 1 stored", rev, err)
+	if err != nil || rev.N != 1 || len(rev.What) != 1 {
+		t.Errorf("%+v %v, want revision 1 stored by this change", rev, err)
 	}
+}
+
+func TestRulesAreTidiedBeforeTheyAreStored(t *testing.T) {
+	r := newRig()
+	m := r.process()
+	h, rev, err := m.ChangeHouse(ctx, ward, "U1", func(h House) (House, error) {
+		h.Zone, h.Times, h.Words, h.Order = "UTC", []string{"7:00"}, map[string]string{"BIP": "bilevel"}, []physio.Quantity{}
+		h.Critical = &physio.CriticalLimits{}
+		return h, nil
+	})
+	expect(t, "error", err, nil)
+	expect(t, "differences", fmt.Sprint(rev.What), "[{words.bip  bilevel} {zone  UTC} {times  07:00}]")
+	expect(t, "no limits are the default limits", h.Critical == nil, true)
 }
 
 func TestEndlessContentionEnds(t *testing.T) {

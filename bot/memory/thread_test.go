@@ -77,6 +77,58 @@ func TestEditedQuestionKeepsItsPlace(t *testing.T) {
 	expect(t, "answer after it was posted anew", v.ByMessage("m1")[0].Post, "elsewhere")
 }
 
+func TestEditKeepsTheQuestionAboutAnotherGas(t *testing.T) {
+	r := newRig()
+	v := load(t, r.process(), inThread("top", "m3"))
+	v.Put(gas("m1", 50))
+	v.Put(gas("m2", 60))
+	v.Ask(shorthand.Question{Code: "venous"}, "m2")
+	v.Put(gas("m1", 55))
+	q, of := v.Thread().Pending()
+	expect(t, "after an edit of the other gas", q != nil && of == "m2", true)
+	v.Put(gas("m2", 65))
+	q, _ = v.Thread().Pending()
+	expect(t, "after an edit of its gas", q == nil, true)
+}
+
+// What another process wrote is seen although this one remembers the thread.
+func TestRememberedThreadIsNotStale(t *testing.T) {
+	r := newRig()
+	a, b := r.process(), r.process()
+	reading(t, a, inThread("top", "m1"), 50)
+	r.add(time.Second)
+	reading(t, b, inThread("top", "m2"), 60)
+	r.add(time.Second)
+	expect(t, "gases", paco2s(reading(t, a, inThread("top", "m3"), 70).Thread()), "50 60 70")
+	where := ward
+	where.Thread = "top"
+	if err := b.ForgetThread(ctx, where, ""); err != nil {
+		t.Fatal(err)
+	}
+	expect(t, "after another process forgot it", paco2s(load(t, a, inThread("top", "m4")).Thread()), "")
+}
+
+// A later write does not lengthen the life of what stays.
+func TestLifeIsThatOfTheLastGas(t *testing.T) {
+	r := newRig()
+	m := r.process()
+	reading(t, m, inThread("top", "m1"), 50)
+	r.add(time.Hour)
+	reading(t, m, inThread("top", "m2"), 60)
+	r.add(time.Hour)
+	var life time.Duration
+	r.tap.breakWith(func(ops []store.Op) (error, bool) {
+		if ops[0].Tag != "" {
+			life = ops[0].TTL
+		}
+		return nil, false
+	})
+	v := load(t, m, inThread("top", "m3"))
+	v.Remove("m2")
+	save(t, m, v)
+	expect(t, "life of what stays", life, 22*time.Hour)
+}
+
 func TestTwoUsersOfAFlatChannelNeverMix(t *testing.T) {
 	r := newRig()
 	m := r.process()

@@ -19,6 +19,7 @@ import (
 	"fmt"
 	"runtime/debug"
 	"sync"
+	"sync/atomic"
 	"syscall"
 	"time"
 
@@ -37,6 +38,8 @@ var (
 	ErrNewer = errors.New("boltstore: the file was written by a newer version of this program")
 	// ErrClosed says that Close was called.
 	ErrClosed = errors.New("boltstore: closed")
+
+	errGaveUp = fmt.Errorf("%w: its pages don't fit together", ErrDamaged)
 )
 
 // Options are the settings of a store; the zero value is fit for use.
@@ -50,8 +53,9 @@ type Options struct {
 
 // Store is a store in one file. Make one with Open.
 type Store struct {
-	db  *bbolt.DB
-	now func() time.Time
+	db      *bbolt.DB
+	now     func() time.Time
+	damaged atomic.Bool
 
 	mu      sync.Mutex
 	waiting []*call
@@ -94,6 +98,9 @@ func (s *Store) Close() error {
 	s.closed = true
 	s.mu.Unlock()
 	s.drained.Wait()
+	if s.damaged.Load() {
+		return nil // the client may hold its own locks for ever: the end of the process lets go
+	}
 	if err := s.db.Close(); err != nil {
 		return fmt.Errorf("boltstore: closing: %w", err)
 	}
@@ -101,11 +108,23 @@ func (s *Store) Close() error {
 }
 
 func (s *Store) view(work func(*bbolt.Tx) error) error {
-	return plain(guard(func() error { return s.db.View(work) }))
+	return s.careful(func() error { return s.db.View(work) })
 }
 
 func (s *Store) update(work func(*bbolt.Tx) error) error {
-	return plain(guard(func() error { return s.db.Update(work) }))
+	return s.careful(func() error { return s.db.Update(work) })
+}
+
+// careful touches a file no more that once made the client give up half-way.
+func (s *Store) careful(work func() error) error {
+	if s.damaged.Load() {
+		return ErrDamaged
+	}
+	err := guard(work)
+	if errors.Is(err, errGaveUp) {
+		s.damaged.Store(true)
+	}
+	return plain(err)
 }
 
 // guard makes an error of what the client answers with a panic: pages that do
@@ -115,7 +134,7 @@ func guard(work func() error) (err error) {
 	defer debug.SetPanicOnFault(debug.SetPanicOnFault(true))
 	defer func() {
 		if r := recover(); r != nil {
-			err = fmt.Errorf("%w: %v", ErrDamaged, r)
+			err = fmt.Errorf("%w: %v", errGaveUp, r)
 		}
 	}()
 	return work()

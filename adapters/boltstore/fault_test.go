@@ -108,7 +108,7 @@ func oneSentence(t *testing.T, err error, words ...string) {
 	if err == nil {
 		t.Fatal("no error")
 	}
-	if strings.Contains(err.Error(), "\n") || len(err.Error()) > 250 {
+	if strings.Contains(err.Error(), "\n") || len(err.Error()) > 300 {
 		t.Errorf("not one sentence: %q", err)
 	}
 	for _, word := range words {
@@ -167,6 +167,7 @@ func TestDamagedFilesAreRefused(t *testing.T) {
 		"zeroes":          func(b []byte) []byte { return make([]byte, len(b)) },
 		"cut in the half": func(b []byte) []byte { return b[:len(b)/2/page*page] },
 		"cut to 3 pages":  func(b []byte) []byte { return b[:3*page] },
+		"cut to its head": func(b []byte) []byte { return b[:2*page] },
 		"all but the head overwritten": func(b []byte) []byte {
 			for i := 2 * page; i < len(b); i++ {
 				b[i] = 0xa5
@@ -185,6 +186,23 @@ func TestDamagedFilesAreRefused(t *testing.T) {
 				t.Errorf("not ErrDamaged: %v", err)
 			}
 		})
+	}
+}
+
+// TestFileCutWhileOpen: the answers go on without a memory, the bot does not
+// fall over.
+func TestFileCutWhileOpen(t *testing.T) {
+	path := newFile(t)
+	filled(t, path)
+	s := open(t, path, Options{})
+	if err := os.Truncate(path, int64(2*os.Getpagesize())); err != nil {
+		t.Fatal(err)
+	}
+	for _, op := range []store.Op{{Key: "k20"}, put("k20", "v", "u"), {Key: "k21"}} {
+		items, err := s.Do(context.Background(), room, op)
+		if !errors.Is(err, ErrDamaged) || items != nil {
+			t.Errorf("%d items, error %v", len(items), err)
+		}
 	}
 }
 

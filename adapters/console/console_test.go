@@ -61,8 +61,8 @@ func TestEachPipedLineIsAMessage(t *testing.T) {
 	}
 	seen := map[string]bool{}
 	for _, e := range h.events {
-		if e.Where != console.Place("s1") || e.Where.Thread != "s1" || e.Addressed || e.Kind != bot.Typed || e.At.IsZero() {
-			t.Errorf("event %+v: one session is one thread, and plain lines are not addressed", e)
+		if e.Where != console.Place("s1") || e.Where.Thread != "s1" || e.Addressed || !e.Listening || e.Kind != bot.Typed || e.At.IsZero() {
+			t.Errorf("event %+v: one session is one thread, and plain lines are listened to, not addressed", e)
 		}
 		if seen[e.Delivery] || e.Delivery == "" || e.Message != e.Delivery {
 			t.Errorf("delivery %q, message %q: each line has an id of its own", e.Delivery, e.Message)

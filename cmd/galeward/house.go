@@ -15,36 +15,29 @@ import (
 	"github.com/goccy/go-yaml"
 )
 
-// newAsking makes the bot of ask: a memory of its own that ends with the
-// process, and a channel that is listened to.
+// newAsking makes the bot of ask: a memory of its own that ends with the process.
 func newAsking(ctx context.Context, houseFile string) (*bot.Bot, error) {
 	b, m := newBot(openMemory(), slog.New(slog.DiscardHandler))
-	return b, listen(ctx, m, whereOf(askPlace()), houseFile)
+	return b, settle(ctx, m, whereOf(askPlace()), houseFile)
 }
 
 // newChatting makes the bot of chat on a store.
 func newChatting(ctx context.Context, s store.Store, log *slog.Logger, houseFile string) (*bot.Bot, error) {
 	b, m := newBot(s, log)
-	return b, listen(ctx, m, whereOf(console.Place("")), houseFile)
+	return b, settle(ctx, m, whereOf(console.Place("")), houseFile)
 }
 
-// listen sets the rules of a channel from a file, if there is one, and turns
-// listening on: here every line is meant for the bot, or may be.
-func listen(ctx context.Context, m *memory.Memory, where memory.Where, houseFile string) error {
-	var given *memory.House
-	if houseFile != "" {
-		h, err := readHouse(houseFile)
-		if err != nil {
-			return err
-		}
-		given = &h
+// settle makes the rules of a file the rules of a channel.
+func settle(ctx context.Context, m *memory.Memory, where memory.Where, houseFile string) error {
+	if houseFile == "" {
+		return nil
 	}
-	_, _, err := m.ChangeHouse(ctx, where, "galeward", func(h memory.House) (memory.House, error) {
-		if given != nil {
-			h = given.Clone()
-		}
-		h.Listen = true
-		return h, nil
+	given, err := readHouse(houseFile)
+	if err != nil {
+		return err
+	}
+	_, _, err = m.ChangeHouse(ctx, where, "galeward", func(memory.House) (memory.House, error) {
+		return given.Clone(), nil
 	})
 	return err
 }

@@ -123,7 +123,7 @@ func fileLines(file []byte) ([]fileLine, error) {
 	if _, err := d.Token(); err != nil {
 		return nil, syntax(file, d, err)
 	}
-	if _, err := d.Token(); err != io.EOF {
+	if _, err := d.Token(); !errors.Is(err, io.EOF) {
 		return nil, errors.New("house rules are one object: something stands behind its end")
 	}
 	return lines, nil

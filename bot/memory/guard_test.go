@@ -71,10 +71,10 @@ func TestOneProbeAtATime(t *testing.T) {
 	_, _ = g.Do(ctx, "p", read)
 	r.add(5 * time.Second)
 	probing, release := make(chan struct{}), make(chan struct{})
-	r.tap.breakWith(func([]store.Op) (error, bool) {
+	r.tap.breakWith(func([]store.Op) (bool, error) {
 		close(probing)
 		<-release
-		return nil, false
+		return false, nil
 	})
 	var wg sync.WaitGroup
 	wg.Go(func() {
@@ -103,10 +103,10 @@ func TestCallsUnderWayCountOnce(t *testing.T) {
 	g := newGuard(r, GuardOptions{})
 	var inside, wg sync.WaitGroup
 	inside.Add(8)
-	r.tap.breakWith(func([]store.Op) (error, bool) {
+	r.tap.breakWith(func([]store.Op) (bool, error) {
 		inside.Done()
 		inside.Wait()
-		return errCut, false
+		return false, errCut
 	})
 	for range 8 {
 		wg.Go(func() { _, _ = g.Do(ctx, "p", read) })

@@ -86,12 +86,12 @@ func TestTwoFindADeadClaim(t *testing.T) {
 	r.add(time.Minute)
 	b, c := r.process(), r.process()
 	var first Claim
-	r.tap.breakWith(func(ops []store.Op) (error, bool) {
+	r.tap.breakWith(func(ops []store.Op) (bool, error) {
 		if len(ops) == 1 { // b has seen the dead claim; c is quicker
 			r.tap.breakWith(nil)
 			first = load(t, c, call("m1")).Claim
 		}
-		return nil, false
+		return false, nil
 	})
 	expect(t, "the slower", load(t, b, call("m1")).Claim, Duplicate)
 	expect(t, "the quicker", first, TakenOver)
@@ -255,7 +255,7 @@ func TestDeletionWhileTheStoreIsDown(t *testing.T) {
 func TestLostReplyOfAClaim(t *testing.T) {
 	r := newRig()
 	m := r.process()
-	r.tap.breakWith(func([]store.Op) (error, bool) { return errCut, true })
+	r.tap.breakWith(func([]store.Op) (bool, error) { return true, errCut })
 	v := load(t, m, call("m1"))
 	expect(t, "degraded", v.Degraded, true)
 	expect(t, "claim", v.Claim, Mine)
@@ -272,13 +272,13 @@ func TestFullStoreStillReads(t *testing.T) {
 	}
 	reading(t, m, call("m1"), 50)
 	load(t, r.process(), call("dead"))
-	full := func(ops []store.Op) (error, bool) {
+	full := func(ops []store.Op) (bool, error) {
 		for _, op := range ops {
 			if op.Tag != "" {
-				return store.ErrFull, false
+				return false, store.ErrFull
 			}
 		}
-		return nil, false
+		return false, nil
 	}
 	r.tap.breakWith(full)
 	v := load(t, m, call("m2"))
@@ -304,11 +304,11 @@ func TestStoreLostDuringATakeOver(t *testing.T) {
 		r := newRig()
 		load(t, r.process(), call("m1"))
 		r.add(time.Minute)
-		r.tap.breakWith(func(ops []store.Op) (error, bool) {
+		r.tap.breakWith(func(ops []store.Op) (bool, error) {
 			if len(ops) == 1 {
-				return broken, false
+				return false, broken
 			}
-			return nil, false
+			return false, nil
 		})
 		v := load(t, r.process(), call("m1"))
 		expect(t, "claim", v.Claim, TakenOver)

@@ -46,7 +46,7 @@ type tap struct {
 	wrote map[string][]byte // by partition and key: the last value
 	// breaks decides about one call: an error instead of it, or after it when
 	// after is true.
-	breaks func(ops []store.Op) (err error, after bool)
+	breaks func(ops []store.Op) (after bool, err error)
 }
 
 var errCut = errors.New("connection reset")
@@ -58,7 +58,7 @@ func (s *tap) Do(ctx context.Context, partition string, ops ...store.Op) ([]stor
 	s.mu.Unlock()
 	var broken error
 	if breaks != nil {
-		err, after := breaks(ops)
+		after, err := breaks(ops)
 		if err != nil && !after {
 			return nil, err
 		}
@@ -68,7 +68,7 @@ func (s *tap) Do(ctx context.Context, partition string, ops ...store.Op) ([]stor
 	if err == nil {
 		s.note(partition, ops)
 	}
-	if broken == store.ErrNotReplicated && err == nil {
+	if errors.Is(broken, store.ErrNotReplicated) && err == nil {
 		return items, broken
 	}
 	if broken != nil {
@@ -90,7 +90,7 @@ func (s *tap) note(partition string, ops []store.Op) {
 	}
 }
 
-func (s *tap) breakWith(f func([]store.Op) (error, bool)) {
+func (s *tap) breakWith(f func([]store.Op) (bool, error)) {
 	s.mu.Lock()
 	defer s.mu.Unlock()
 	s.breaks = f
@@ -102,8 +102,8 @@ func (s *tap) count() int {
 	return s.calls
 }
 
-func allFail(err error) func([]store.Op) (error, bool) {
-	return func([]store.Op) (error, bool) { return err, false }
+func allFail(err error) func([]store.Op) (bool, error) {
+	return func([]store.Op) (bool, error) { return false, err }
 }
 
 // rig is one store with a clock and as many processes as a test wants.

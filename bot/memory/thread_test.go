@@ -108,27 +108,6 @@ func TestRememberedThreadIsNotStale(t *testing.T) {
 	expect(t, "after another process forgot it", paco2s(load(t, a, inThread("top", "m4")).Thread()), "")
 }
 
-// A later write does not lengthen the life of what stays.
-func TestLifeIsThatOfTheLastGas(t *testing.T) {
-	r := newRig()
-	m := r.process()
-	reading(t, m, inThread("top", "m1"), 50)
-	r.add(time.Hour)
-	reading(t, m, inThread("top", "m2"), 60)
-	r.add(time.Hour)
-	var life time.Duration
-	r.tap.breakWith(func(ops []store.Op) (error, bool) {
-		if ops[0].Tag != "" {
-			life = ops[0].TTL
-		}
-		return nil, false
-	})
-	v := load(t, m, inThread("top", "m3"))
-	v.Remove("m2")
-	save(t, m, v)
-	expect(t, "life of what stays", life, 22*time.Hour)
-}
-
 func TestTwoUsersOfAFlatChannelNeverMix(t *testing.T) {
 	r := newRig()
 	m := r.process()
@@ -332,79 +311,14 @@ func TestEndlessConflictEnds(t *testing.T) {
 	v := load(t, m, inThread("top", "m1"))
 	v.Put(gas("m1", 50))
 	n := 0
-	r.tap.breakWith(func(ops []store.Op) (error, bool) {
+	r.tap.breakWith(func(ops []store.Op) (bool, error) {
 		n++
 		raw, _ := encodeThread(&Thread{asked: []shorthand.QuestionCode{"venous"}})
 		if n%2 == 1 { // another process writes before each try
 			_, err := r.tap.Do(ctx, ward.partition(), store.Op{Key: threadKey("top"), Value: raw, Tag: newTag()})
-			return err, false
+			return false, err
 		}
-		return nil, false
+		return false, nil
 	})
 	expect(t, "error", m.Save(ctx, v), ErrBusy)
-}
-
-func TestGasesGoAfterADay(t *testing.T) {
-	r := newRig()
-	m := r.process()
-	reading(t, m, inThread("top", "m1"), 50)
-	r.add(20 * time.Hour)
-	reading(t, m, inThread("top", "m2"), 60) // does not lengthen the life of the first
-	r.add(3*time.Hour + 59*time.Minute)
-	expect(t, "before the day is over", paco2s(load(t, m, inThread("top", "m3")).Thread()), "50 60")
-	r.add(time.Minute)
-	for _, p := range []*Memory{m, r.process()} { // with and without the cache
-		expect(t, "after a day", paco2s(load(t, p, inThread("top", newTag())).Thread()), "60")
-	}
-	r.add(20 * time.Hour)
-	expect(t, "after both days", paco2s(load(t, m, inThread("top", "m5")).Thread()), "")
-	items, err := r.tap.Do(ctx, ward.partition(), store.Op{Key: threadKey("top")})
-	if err != nil || items[0].Tag != "" {
-		t.Errorf("the store still has the thread: %v %v", items, err)
-	}
-}
-
-func TestGasesGoAtTheEndOfTheShift(t *testing.T) {
-	r := newRig() // 06:00 in London
-	m := r.process()
-	if _, _, err := m.ChangeHouse(ctx, ward, "U1", func(h House) (House, error) {
-		h.Zone, h.ShiftEnds = "Europe/London", []string{"07:30", "19:30"}
-		return h, nil
-	}); err != nil {
-		t.Fatal(err)
-	}
-	reading(t, m, inThread("top", "m1"), 50)
-	r.add(89 * time.Minute)
-	expect(t, "in the shift", paco2s(load(t, m, inThread("top", "m2")).Thread()), "50")
-	r.add(time.Minute)
-	expect(t, "in the next shift", paco2s(load(t, m, inThread("top", "m3")).Thread()), "")
-	items, err := r.tap.Do(ctx, ward.partition(), store.Op{Key: threadKey("top")})
-	if err != nil || items[0].Tag != "" {
-		t.Errorf("the store still has the thread: %v %v", items, err)
-	}
-}
-
-// What is written but the rules always has a lifetime.
-func TestOnlyRulesAreKeptForEver(t *testing.T) {
-	r := newRig()
-	m := r.process()
-	kept := make(map[string]bool)
-	r.tap.breakWith(func(ops []store.Op) (error, bool) {
-		for _, op := range ops {
-			if op.Tag != "" && op.TTL == 0 {
-				kept[op.Key] = true
-			}
-		}
-		return nil, false
-	})
-	c := call("m1")
-	c.Opens = true
-	reading(t, m, c, 50)
-	v := load(t, m, inThread("m1", "m2"))
-	v.Ask(shorthand.Question{Code: "venous"}, "m2")
-	save(t, m, v)
-	if _, _, err := m.ChangeHouse(ctx, ward, "U1", setUnits(shorthand.KPa)); err != nil {
-		t.Fatal(err)
-	}
-	expect(t, "kept for ever", fmt.Sprint(kept), "map[house:true house/rev/000001:true]")
 }

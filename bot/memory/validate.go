@@ -284,15 +284,3 @@ func tidyTimes(times []string) []string {
 	slices.Sort(tidy)
 	return tidy
 }
-
-// merged gives the keys of both maps in order.
-func merged(a, b map[string]string) []string {
-	keys := slices.Collect(maps.Keys(a))
-	for key := range b {
-		if _, both := a[key]; !both {
-			keys = append(keys, key)
-		}
-	}
-	slices.Sort(keys)
-	return keys
-}

@@ -21,7 +21,7 @@ func (r *reader) ageSex(i int) bool {
 // population.
 func (r *reader) age(i int, u string, n int) {
 	word := r.t[i+n].s
-	if (word == "y" || word == "days" || word == "months" || word == "years" || word == "do") && r.durationWord(i, n) {
+	if (word == "y" || word == "days" || word == "months" || word == "years") && r.durationWord(i, n) {
 		r.t[i].taken = true
 		return
 	}

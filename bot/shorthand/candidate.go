@@ -15,6 +15,7 @@ type rawValue struct {
 	labelled bool
 	decimals int
 	typed    string
+	at       int // token of the number
 }
 
 // raws are the raw core values of one gas.

@@ -27,13 +27,32 @@ func gasStart(t []token, i int) bool {
 		return false
 	}
 	n, slashes := chainAhead(t, i)
+	if q, ok := labelDirectlyBefore(t, i); ok && !(slashes && n >= 3 && p.decimals == 2 && q != physio.PaCO2 && q != physio.PaO2) {
+		return false
+	}
 	if phLike(p.v) && p.decimals > 0 {
 		return n >= 2 && (slashes || n >= 3 || p.decimals == 2)
 	}
-	if !slashes || n < 3 {
+	tied := i > 1 && t[i-1].sep("/|\\,;-") && t[i-2].kind == tokNumber && t[i-1].line == p.line
+	if !slashes || n < 3 || tied || p.s == "7" && n < 4 {
 		return false
 	}
 	return oddPH(p) && pressuresFollow(t, i)
+}
+
+// labelDirectlyBefore finds the label of another quantity than pH that the
+// number at i belongs to.
+func labelDirectlyBefore(t []token, i int) (physio.Quantity, bool) {
+	for j := i - 1; j >= 0 && j >= i-3; j-- {
+		switch {
+		case t[j].is(senseLabel):
+			return t[j].e.q, t[j].e.q != physio.PHq
+		case t[j].sep(":=~") || t[j].is(senseFiller):
+		default:
+			return 0, false
+		}
+	}
+	return 0, false
 }
 
 // oddPH says that a number at the head of a chain of three or more may be a
@@ -75,6 +94,9 @@ func chainAhead(t []token, i int) (n int, slashes bool) {
 				return n, slashes
 			}
 			if !t[j-1].sep("/|\\,;-:.\n") && !t[j-1].is(senseOver) && x.sign == 0 && !t[j-1].is(senseUnit) {
+				if slashes && n >= 3 {
+					return n, true // what a blank sets off is no part of the chain
+				}
 				slashes = false
 			}
 			n++
@@ -118,6 +140,9 @@ func (r *reader) chain() {
 		return
 	}
 	r.first, r.last = start, start
+	if r.claims && slot == 0 {
+		r.dropClaims(start)
+	}
 	c := &chainReader{r: r, slot: slot, seps: 0}
 	if slot < 0 {
 		c.slot = c.after(physio.PHq)
@@ -127,6 +152,19 @@ func (r *reader) chain() {
 	}
 	c.read()
 	r.slashes = c.slashes > 0
+}
+
+// dropClaims leaves out what the claims in front of a whole gas repeat: the
+// gas counts.
+func (r *reader) dropClaims(start int) {
+	if n, _ := chainAhead(r.t, start); n < 3 {
+		return
+	}
+	for q, v := range r.raw {
+		if v.labelled && q != physio.PHq && v.at < start {
+			delete(r.raw, q)
+		}
+	}
 }
 
 // labelledPH finds the number of a labelled pH.
@@ -252,6 +290,13 @@ func (c *chainReader) place(t *token, spaced bool) bool {
 	if c.slot < len(order) {
 		q = order[c.slot]
 	}
+	if q != 255 && c.repeats(t, q) {
+		r.take(c.i, 0)
+		r.last = c.i
+		c.slot++
+		c.filled++
+		return true
+	}
 	for q != 255 && r.raw[q] != nil {
 		c.slot++
 		q = 255
@@ -294,6 +339,13 @@ func (c *chainReader) place(t *token, spaced bool) bool {
 	c.slot++
 	c.filled++
 	return true
+}
+
+// repeats says that the number stands in its place although its label said it
+// already: "co2 58, 7.28/58/62/27".
+func (c *chainReader) repeats(t *token, q physio.Quantity) bool {
+	have := c.r.raw[q]
+	return have != nil && have.labelled && have.v == t.v && have.at < c.r.first && q != physio.PHq
 }
 
 // dashes says that hyphens separate the values: an earlier one stood before

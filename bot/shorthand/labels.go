@@ -122,6 +122,9 @@ func (r *reader) label(i int) {
 	if !ok || r.t[i].e.weak && !r.weakFits(i, j) {
 		return
 	}
+	if r.gasStart(j) && r.t[i].e.q != physio.PHq {
+		return
+	}
 	if j+2 < len(r.t) && r.t[j+1].word("or") && r.t[j+2].kind == tokNumber {
 		r.t[j].taken, r.t[j+2].taken = true, true // "peep 5 or 8": no value
 		return
@@ -190,6 +193,9 @@ func (r *reader) labelledValue(i, j int, u string, n int) {
 		r.sayFiO2(j, formOf(q, t, u, r.adult()))
 		return
 	}
+	if q == physio.Height && u == uMetre {
+		r.metresOrSex(j, n)
+	}
 	if q == physio.OxygenFlow {
 		r.take(j, n)
 		r.oxygen = append(r.oxygen, saying{at: j, flow: t.v, hasFlow: true})
@@ -222,7 +228,7 @@ func (r *reader) keepRaw(q physio.Quantity, i, j int, u string, n int, deficit b
 			v = 0
 		}
 	}
-	raw := &rawValue{v: v, labelled: true, decimals: t.decimals, typed: t.typed()}
+	raw := &rawValue{v: v, labelled: true, decimals: t.decimals, typed: t.typed(), at: j}
 	if u == uKPa || u == uMmHg {
 		raw.unit = u
 	}

@@ -24,7 +24,7 @@ func (r *reader) unitAfter(i int) (string, int) {
 		return "", 0
 	}
 	t := &r.t[j]
-	if t.s == "m" && t.glued {
+	if t.s == "m" && (t.glued || r.t[i].decimals > 0 && r.t[i].v > 1 && r.t[i].v < 2.5) {
 		return uMetre, 1
 	}
 	if t.s == "f" && t.glued && r.t[i].v > 80 {

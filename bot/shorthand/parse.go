@@ -22,8 +22,15 @@ func Parse(text string, h Habits) (line Line) {
 	if r := identified(folded); r != RefusedNone {
 		return Line{Kind: Refusal, Refused: r}
 	}
-	p := &parser{h: h, typed: strings.ToLower(stripText(folded))}
+	p := &parser{h: h, typed: lower(folded)}
 	return p.parse()
+}
+
+// lower gives the text in lower case without what is no typist's text. One
+// spelling is told apart by its capitals: "tccO2" may be transcutaneous CO2 or
+// O2, "tcCO2" and "tcco2" are CO2.
+func lower(folded string) string {
+	return strings.ToLower(strings.ReplaceAll(stripText(folded), "tccO2", "tc "))
 }
 
 // quietKind is the kind of a message in which nothing was read.

@@ -210,6 +210,8 @@ func (r *reader) marks() {
 			}
 		case t.sep("#") && i+1 < len(r.t) && r.t[i+1].kind == tokNumber && r.t[i+1].glued:
 			r.t[i+1].taken = true
+		case t.word("hr") && (i == 0 || r.t[i-1].kind != tokNumber) && i+1 < len(r.t) && r.t[i+1].kind == tokNumber:
+			r.swallow(i) // a heart rate, not an hour
 		case t.word("not") && i+1 < len(r.t) && r.t[i+1].kind == tokNumber:
 			r.t[i+1].taken = true
 		case t.word("x") && i+1 < len(r.t) && r.t[i+1].kind == tokNumber && !r.timesPair(i):

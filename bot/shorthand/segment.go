@@ -95,20 +95,20 @@ func numberNear(t []token, i int) int {
 
 // advance steps over n joined numbers, but not into a second gas.
 func advance(t []token, i, n int) int {
-	seen := 0
+	seen, end := 0, i
 	for ; i < len(t) && seen < n; i++ {
 		if t[i].kind != tokNumber {
 			if t[i].kind == tokWord && !t[i].is(senseUnit) && !t[i].is(senseOver) {
-				return i
+				break
 			}
 			continue
 		}
 		if i > 0 && secondGas(t, i, seen) {
-			return i
+			break
 		}
-		seen++
+		seen, end = seen+1, i+1
 	}
-	return i
+	return end
 }
 
 // boundary finds where the next gas begins between the end of one chain and

@@ -42,7 +42,7 @@ var unitRows = []row{
 	{unit(uKPa), "kpa, kpas, kilopascal, kilopascals, k pa"},
 	{unit(uPercent), "percent, pct, per cent, prozent, procent, perc, pc o2"},
 	{unit(uLPM), "lpm, l/min, litres per minute, liters per minute, l per min, litres a minute, liters a minute, lmin, liters per min, litres per min, lt min, slpm, lpms, ltrs per min"},
-	{unit(uLitre), "l, liters, litres, liter, litre, ltr, ltrs, lt, lts, lit"},
+	{unit(uLitre), "l, liters, litres, liter, litre, ltr, ltrs, lt, lts"},
 	{unit(uML), "ml, mls, cc, ccs, milliliters, millilitres"},
 	{unit(uMLKg), "ml/kg, mlkg, cc/kg, ml per kg, mls/kg, ml kg, mls per kg"},
 	{unit(uKg), "kg, kgs, kilo, kilos, kilogram, kilograms"},
@@ -64,7 +64,7 @@ var unitRows = []row{
 	{unit(uWeek), "wk, wks, week, weeks, weeker, wkr, wker, weekers, w ga, wk ga, weeks ga, weeks gestation, wks gestation, week gestation, weeks gestational age"},
 	{unit(uYear), "yo, yr, yrs, year, years, y, year old, years old, yr old, yrs old, yom, yof, y o, years of age"},
 	{unit(uMonth), "mo, mth, months, month, mos, month old, months old, mo old"},
-	{unit(uDay), "do, days, day old, days old, dol, d old"},
+	{unit(uDay), "days, day old, days old, dol, d old"},
 	{unit(uPerMin), "/min, per min, per minute, breaths, breaths a minute, breaths per minute, breaths/min, a minute, min-1, times a minute"},
 	{unit(uTime), "min, mins, minute, minutes, h, hr, hrs, hour, hours, sec, secs, second, seconds, d, s, ms, hrs ago, min ago, mins ago, hr ago"},
 }

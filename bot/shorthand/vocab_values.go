@@ -27,7 +27,7 @@ var valueRows = []row{
 	{label(physio.SpO2Pre), "preductal, preductal sat, pre sat, preductal spo2, pre spo2, pre duct, preduct, preductal sats, pre ductal"},
 	{label(physio.SpO2Post), "postductal, postductal sat, post sat, postductal spo2, post spo2, post duct, postduct, postductal sats, post ductal"},
 	{label(physio.FiO2), "fio2, fi02, fi, fi o2, fio, fo2, f1o2, inspired o2, inspired oxygen, fdo2, fio2s, fi0"},
-	{label(physio.RR), "rr, resp rate, respiratory rate, resp, resps, respiratory, breathing, breathing at, rr total, total rr, total rate, spont rr, rr tot, rrtot, af, freq, patient rate, pt rate, rr spont, measured rr, rrt, spontaneous rate, spont rate, frequency, f tot, ftot, breathing rate, actual rate, actual rr, fr"},
+	{label(physio.RR), "rr, resp rate, respiratory rate, resp, resps, respiratory, breathing, breathing at, rr total, total rr, total rate, spont rr, rr tot, rrtot, af, freq, patient rate, pt rate, rr spont, measured rr, spontaneous rate, spont rate, frequency, f tot, ftot, breathing rate, actual rate, actual rr, fr"},
 	{label(physio.RRSet), "set rate, set rr, rr set, rate set, rrset, backup, backup rate, bur, back up rate, mandatory rate, vent rate, set f, fset, f set, bu rate, backup rr, ventilator rate, br"},
 	{entry{sense: senseLabel, q: physio.RR, weak: true}, "rate, f, r, bpm"},
 	{label(physio.VT), "vt, tv, tidal volume, tidal, vte, vti, exhaled vt, tidal vol, vtexp, vte exp, tidals, tvs, evt, vol, volume, ve tidal, exp vt, vt exp, vt set, set vt, vt e, exhaled tv, expired vt, insp vt, tve, spont vt, vtspont, set tv, tv set, vtset"},

@@ -1,0 +1,28 @@
+package shorthand
+
+import (
+	"strings"
+	"testing"
+)
+
+// Every spelling has one meaning: a second row would silently win or lose.
+func TestVocabularyHasNoSpellingTwice(t *testing.T) {
+	seen := map[string]bool{}
+	for _, rows := range [][]row{valueRows, unitRows, deviceRows, saidRows, wordRows} {
+		for _, r := range rows {
+			for _, s := range strings.Split(r.spellings, ",") {
+				s = strings.TrimSpace(s)
+				if s == "" || s != strings.ToLower(s) {
+					t.Errorf("spelling %q is empty or not in lower case", s)
+				}
+				if seen[s] {
+					t.Errorf("spelling %q stands twice", s)
+				}
+				seen[s] = true
+			}
+		}
+	}
+	if len(seen) < 800 {
+		t.Errorf("only %d spellings", len(seen))
+	}
+}

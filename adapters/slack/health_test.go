@@ -5,9 +5,11 @@ import (
 	"context"
 	"fmt"
 	"log/slog"
+	"net/http"
 	"regexp"
 	"strings"
 	"testing"
+	"time"
 
 	"galeward/adapters/adaptertest"
 	"galeward/adapters/slack/slackfake"
@@ -122,5 +124,44 @@ func TestLogLines(t *testing.T) {
 		if n := len(regexp.MustCompile(want).FindAllString(log.String(), -1)); n != 1 {
 			t.Errorf("%d lines like %s in\n%s", n, want, log.String())
 		}
+	}
+}
+
+// hanging is a network in which every call hangs until it is cancelled, and
+// takes a moment to end then.
+type hanging struct {
+	begun, ended chan struct{}
+	idleClosed   bool
+}
+
+func (h *hanging) RoundTrip(r *http.Request) (*http.Response, error) {
+	close(h.begun)
+	<-r.Context().Done()
+	time.Sleep(20 * time.Millisecond)
+	close(h.ended)
+	return nil, r.Context().Err()
+}
+
+func (h *hanging) CloseIdleConnections() { h.idleClosed = true }
+
+// TestShutdownWaitsForTheProof: after Shutdown no call is under way and no
+// connection is kept.
+func TestShutdownWaitsForTheProof(t *testing.T) {
+	n := &hanging{begun: make(chan struct{}), ended: make(chan struct{})}
+	a, err := New(Config{SigningSecret: "s", BotToken: "t", Network: n, Timeout: time.Minute}, &adaptertest.Handler{}, quiet())
+	if err != nil {
+		t.Fatal(err)
+	}
+	<-n.begun
+	if err := a.Shutdown(context.Background()); err != nil {
+		t.Fatal(err)
+	}
+	select {
+	case <-n.ended:
+	default:
+		t.Error("a call is under way after Shutdown")
+	}
+	if !n.idleClosed {
+		t.Error("connections were kept")
 	}
 }

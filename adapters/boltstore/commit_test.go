@@ -152,8 +152,12 @@ func TestCloseFinishesWhatWaits(t *testing.T) {
 	path := newFile(t)
 	s := open(t, path, Options{})
 	release := busy(t, s)
-	waiting := later(s, put("waiting", "v", "t"))
-	queued(t, s, 1)
+	const rush = 6 * batchCalls // more than one commit's worth
+	var waiting []<-chan error
+	for i := range rush {
+		waiting = append(waiting, later(s, put("k"+strconv.Itoa(i), "v", "t")))
+	}
+	queued(t, s, rush)
 	closed := make(chan error, 1)
 	go func() { closed <- s.Close() }()
 	until(t, func() bool {
@@ -165,14 +169,19 @@ func TestCloseFinishesWhatWaits(t *testing.T) {
 		t.Errorf("a call after Close: %v", err)
 	}
 	release()
-	if err := <-waiting; err != nil {
-		t.Errorf("the call that waited: %v", err)
+	for i, outcome := range waiting {
+		if err := <-outcome; err != nil {
+			t.Fatalf("call %d that waited: %v", i, err)
+		}
 	}
 	if err := <-closed; err != nil {
 		t.Error(err)
 	}
-	if items := do(t, open(t, path, Options{}), store.Op{Key: "waiting"}); items[0].Tag != "t" {
-		t.Error("the call that waited is lost")
+	s = open(t, path, Options{})
+	for i := range rush {
+		if items := do(t, s, store.Op{Key: "k" + strconv.Itoa(i)}); items[0].Tag != "t" {
+			t.Fatalf("call %d that waited is lost", i)
+		}
 	}
 }
 

@@ -77,26 +77,10 @@ func (s *Store) prepare(path string) error {
 			empty = true
 			return nil
 		}
-		if err := whole(tx, path); err != nil {
-			return err
-		}
 		return inspect(tx)
 	})
 	if err == nil && empty {
 		err = s.update(layOut)
 	}
 	return refusal(path, err)
-}
-
-// whole makes sure that a file is as long as it says it is: a copy that broke
-// off opens well and fails later.
-func whole(tx *bbolt.Tx, path string) error {
-	info, err := os.Stat(path)
-	if err != nil {
-		return err
-	}
-	if info.Size() < tx.Size() {
-		return fmt.Errorf("%w: it was cut short", ErrDamaged)
-	}
-	return nil
 }

@@ -1,11 +1,13 @@
 package storetest
 
 import (
+	"context"
 	"errors"
 	"fmt"
 	"strconv"
 	"sync"
 	"testing"
+	"time"
 
 	"galeward/bot/store"
 )
@@ -92,6 +94,28 @@ func noHalfWrites(t *testing.T, s store.Store) {
 			}
 		}
 	})
+}
+
+// rush is what a shift change looks like at its worst: a thousand readings at
+// once, two calls each, every one answered within the two seconds that a
+// message may take.
+func rush(t *testing.T, s store.Store) {
+	var all sync.WaitGroup
+	for i := range 1000 {
+		all.Go(func() {
+			ctx, cancel := context.WithTimeout(context.Background(), 2*time.Second)
+			defer cancel()
+			n, channel := strconv.Itoa(i), "slack/T1/C"+strconv.Itoa(i%20)
+			_, err := s.Do(ctx, channel, putIf(store.Absent(), "event/"+n, "", n), get("house"), get("thread"))
+			if err == nil {
+				_, err = s.Do(ctx, channel, put("thread", n, n), store.Op{Key: "event/" + n, If: store.Tagged(n)})
+			}
+			if err != nil {
+				t.Errorf("reading %d: %v", i, err)
+			}
+		})
+	}
+	all.Wait()
 }
 
 func together(work func(w int)) {

@@ -55,6 +55,7 @@ func Run(t *testing.T, open Open) {
 		{"ConcurrentCounter", concurrentCounter},
 		{"OneClaimWins", oneClaimWins},
 		{"NoHalfWrites", noHalfWrites},
+		{"Rush", rush},
 	} {
 		t.Run(part.name, func(t *testing.T) { part.test(t, open(t)) })
 	}

@@ -165,3 +165,25 @@ func TestBaseExcessWithHaemoglobin(t *testing.T) {
 		}
 	}
 }
+
+// Whole-blood forms away from their zero, by hand: pH 7.20, HCO3 15, Hb 15 is
+// 0.79 x (-9.8 - 5.83) (CLSI C46-A2); pH 7.20, PCO2 60, Hb 12 and saturation
+// 0.70 is 0.8284 x (22.963 - 24.26 - 5.812) - 0.72 (Lang and Zander 2002); BE
+// -10, Hb 15 and 90 % is 25 - 7.8 - 0.3 (NCCLS C12-A).
+func TestBloodFormsByHand(t *testing.T) {
+	be, err := BaseExcessCLSI(BloodForBE{PH: 7.20, HCO3: 15, Hb: 15})
+	if err != nil {
+		t.Fatal(err)
+	}
+	near(t, "CLSI", float64(be), -12.348, 0.001)
+	be, err = BaseExcessLangZander(BloodForBE{PH: 7.20, PaCO2: 60, Hb: 12, SO2: 0.70})
+	if err != nil {
+		t.Fatal(err)
+	}
+	near(t, "Lang and Zander", float64(be), -6.609, 0.001)
+	sbc, err := StandardBicarbonateCLSI(-10, 15, 0.90)
+	if err != nil {
+		t.Fatal(err)
+	}
+	near(t, "standard bicarbonate", float64(sbc), 16.9, 1e-9)
+}

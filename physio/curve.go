@@ -16,7 +16,6 @@ const (
 	bohrCO2    = 0.048 // shift of ln PO2 per ln PCO2 at constant pH
 	shiftMetHb = -0.7  // shift per fraction of methaemoglobin
 	shiftTemp  = 0.055 // shift of ln PO2 per degree
-	haldaneM   = 218.0 // affinity of CO relative to oxygen
 	kPaPerMmHg = 1 / mmHgPerKPa
 )
 

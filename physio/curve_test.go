@@ -186,3 +186,70 @@ func TestKelmanRefusesItsLowEnd(t *testing.T) {
 		t.Errorf("SaturationKelman(10 kPa) = %v, %v", got.Percent(), err)
 	}
 }
+
+// The shifts of each curve by hand: ln 2 x 0.048 for a doubled PaCO2 and 0.07
+// for 10 % methaemoglobin (Siggaard-Andersen 1990); 0.024 x -2, 0.40 x -0.2 and
+// 0.06 x -0.301 in log10 for 39 C, pH 7.20 and PaCO2 80 (Kelman 1966).
+func TestShiftsByHand(t *testing.T) {
+	near(t, "PaCO2 80", CurveShift{PaCO2: 80}.standard().shift(), 0.0333, 0.0001)
+	near(t, "MetHb 10 %", CurveShift{MetHb: 0.1}.standard().shift(), -0.07, 1e-9)
+	near(t, "pH 7.20", CurveShift{PH: 7.20}.standard().shift(), 0.176, 1e-9)
+	for name, c := range map[string]struct {
+		at   CurveShift
+		want float64
+	}{
+		"39 C":     {CurveShift{Temp: 39}, 35.81},
+		"pH 7.20":  {CurveShift{PH: 7.20}, 33.27},
+		"PaCO2 80": {CurveShift{PaCO2: 80}, 38.37},
+	} {
+		near(t, "virtual PO2 at "+name, virtualPO2(40, c.at.standard()), c.want, 0.01)
+	}
+}
+
+// At the inflexion of the 1984 curve the saturation is 86.7 % whatever moves it:
+// pH 7.20, BE -10, DPG 4 and 39 C put it at exp(1.946 + 0.208 - 0.05 - 0.07 +
+// 0.11) = 8.53 kPa (Siggaard-Andersen 1984).
+func TestSiggaardInflexionMoves(t *testing.T) {
+	got, err := Siggaard1984{PO2: KPa(8.5336), PH: 7.20, BE: -10, DPG: 4, Temp: 39}.Saturation()
+	if err != nil {
+		t.Fatal(err)
+	}
+	near(t, "saturation", got.Percent(), 86.70, 0.02)
+}
+
+func TestReferenceInverses(t *testing.T) {
+	for s := Fraction(0.02); s < 0.99; s += 0.03 {
+		p, err := PO2Ellis(s)
+		if err != nil {
+			t.Fatal(err)
+		}
+		back, err := SaturationSeveringhaus(p)
+		if err != nil {
+			t.Fatal(err)
+		}
+		near(t, "saturation through Ellis", float64(back), float64(s), 1e-9)
+	}
+	// Severinghaus 1979, table 1: 9.58 % at 10 mmHg.
+	deep, err := PO2Severinghaus(Percent(9.58))
+	if err != nil {
+		t.Fatal(err)
+	}
+	near(t, "eq 2 at its low end", deep.MmHg(), 10, 0.2)
+}
+
+// From pH 7.40 to 7.20 the PO2 of half saturation rises to 34.1 mmHg and that
+// of 90 % by 1.232 (Severinghaus 1979, eq 4 by hand).
+func TestEllisShiftByHand(t *testing.T) {
+	half, err := PO2EllisShifted(0.5, CurveShift{PH: 7.20})
+	if err != nil {
+		t.Fatal(err)
+	}
+	near(t, "half saturation", half.MmHg(), 34.13, 0.03)
+	standard, _ := PO2Ellis(0.9)
+	shifted, _ := PO2EllisShifted(0.9, CurveShift{PH: 7.20})
+	near(t, "ratio at 90 %", float64(shifted/standard), 1.232, 0.001)
+	warm, _ := PO2EllisShifted(0.9, CurveShift{Temp: 39})
+	if warm <= standard {
+		t.Errorf("39 C moves the curve to the left: %v after %v", warm, standard)
+	}
+}

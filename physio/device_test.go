@@ -175,3 +175,20 @@ func TestCylinderTime(t *testing.T) {
 		t.Error("a cylinder below its reserve gives minutes")
 	}
 }
+
+func TestBandsOfDevicesByHand(t *testing.T) {
+	for mark, want := range map[Fraction]Span{0.28: {0.261, 0.299}, 0.40: {0.381, 0.419}, 0.42: {0.32, 0.439}, 0.60: {0.50, 0.619}} {
+		fio2, _, err := InspiredOxygen(OxygenSupply{Device: Venturi, Stated: mark})
+		if err != nil {
+			t.Fatal(err)
+		}
+		near(t, "low", fio2.Low, want.Low, 1e-9)
+		near(t, "high", fio2.High, want.High, 1e-9)
+	}
+	// Minute volume 12 is an inspiratory flow of 36: (33 x 0.60 + 3 x 0.21)/36.
+	fast, _, _ := InspiredOxygen(OxygenSupply{Device: HighFlow, Stated: 0.6, Flow: 33, Minute: 12})
+	near(t, "high flow", fast.Low, 0.5675, 1e-9)
+	if _, _, err := InspiredOxygen(OxygenSupply{Device: Cannula, Flow: 6.5}); err == nil {
+		t.Error("6.5 L/min by cannula passes")
+	}
+}

@@ -126,6 +126,12 @@ func TestPredictedPaO2(t *testing.T) {
 	near(t, "lower limit of the old", at95.Low, 68.4, 1.5) // Cerveri 1995: 5th centile
 	old, _ := PredictedPaO2Seated(BuildAndPaCO2{Age: 80, BMI: 25, PaCO2: 38})
 	near(t, "seated at 80", old.MmHg(), 83.4, 0)
+	if _, err := PredictedPaO2Sitting(18); err != nil {
+		t.Errorf("18 years: %v", err)
+	}
+	if _, err := PredictedPaO2Sitting(17); err == nil {
+		t.Error("17 years pass on an adult's line")
+	}
 }
 
 // On 40 % oxygen with PaCO2 72 a healthy lung has about 150 mmHg (0.75 of the

@@ -91,6 +91,9 @@ func TestAnatomicalDeadSpaceByAge(t *testing.T) {
 	below, _ := AnatomicalDeadSpace(20, 5.999)
 	above, _ := AnatomicalDeadSpace(20, 6)
 	near(t, "at six years", float64(below), float64(above), 20*0.05)
+	if above != 44 {
+		t.Errorf("20 kg at six years: %v, want 2.2 mL/kg", above)
+	}
 }
 
 // The first minute of a closed airway raises PaCO2 by 12, each later one by 3.4

@@ -106,6 +106,9 @@ func (r *reader) speaksOfPregnancy() bool {
 
 // ofGestation takes the weeks-of-forty form: 26/40, 34+2.
 func (r *reader) ofGestation(i int) {
+	if r.weeksAndDays(i) {
+		return
+	}
 	if i+2 >= len(r.t) || r.t[i].decimals > 0 || r.t[i].v < 22 || r.t[i].v > 42 || r.joined(i) {
 		return
 	}
@@ -117,6 +120,23 @@ func (r *reader) ofGestation(i int) {
 		b.used = true
 		r.weeks(i, 0)
 	}
+}
+
+// weeksAndDays takes 26+3 wk.
+func (r *reader) weeksAndDays(i int) bool {
+	if i+2 >= len(r.t) || r.t[i+1].sign != '+' || r.t[i+1].v > 6 || !r.t[i+1].glued || r.t[i].v < 20 || r.t[i].v > 44 {
+		return false
+	}
+	week := r.t[i+2].is(senseUnit) && r.t[i+2].e.unit == uWeek
+	if !week && !r.newborn() && !r.speaksOfPregnancy() {
+		return false
+	}
+	r.t[i+1].used = true
+	if week {
+		r.t[i+2].used = true
+	}
+	r.weeks(i, 0)
+	return true
 }
 
 // trimesterWords takes "third trimester", "2nd trimester", "T3".

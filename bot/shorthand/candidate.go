@@ -130,10 +130,18 @@ func (r raws) build(order [3]physio.Quantity, co2KPa, o2KPa bool, units Units, s
 	if c.unitsDiffer {
 		c.cost++
 	}
-	if c.mixed {
+	if c.mixed && r.oneUnitSaid() {
+		c.cost += 0.4
+	} else if c.mixed {
 		c.cost += 2
 	}
 	return c
+}
+
+// oneUnitSaid says that one pressure carries its unit and the other none.
+func (r raws) oneUnitSaid() bool {
+	a, b := r[physio.PaCO2], r[physio.PaO2]
+	return a != nil && b != nil && (a.unit == "") != (b.unit == "")
 }
 
 // cheapest gives the candidate of least cost among those that keep f.

@@ -1,6 +1,8 @@
 package shorthand
 
 import (
+	"math"
+
 	"galeward/physio"
 )
 
@@ -31,6 +33,9 @@ func gasStart(t []token, i int) bool {
 		return false
 	}
 	if phLike(p.v) && p.decimals > 0 {
+		if n <= 3 && clockTimes(t, i) || n == 2 && p.decimals == 1 && !secondAtLeast(t, i, 15) {
+			return false
+		}
 		return n >= 2 && (slashes || n >= 3 || p.decimals == 2)
 	}
 	tied := i > 1 && t[i-1].sep("/|\\,;-") && t[i-2].kind == tokNumber && t[i-1].line == p.line
@@ -38,6 +43,35 @@ func gasStart(t []token, i int) bool {
 		return false
 	}
 	return oddPH(p) && pressuresFollow(t, i)
+}
+
+// clockTimes says that all numbers joined from i on look like clock times with
+// points: "7.30-19.00".
+func clockTimes(t []token, i int) bool {
+	for j, n := i, 0; j < len(t) && n < 3; j++ {
+		switch x := &t[j]; {
+		case x.kind == tokNumber:
+			minutes := math.Mod(math.Round(x.v*100), 100)
+			if x.decimals != 2 || x.v >= 24 || math.Mod(minutes, 15) != 0 || minutes >= 60 {
+				return false
+			}
+			n++
+		case x.sep("/-,"):
+		default:
+			return n >= 2
+		}
+	}
+	return true
+}
+
+// secondAtLeast says that the next number is at least low.
+func secondAtLeast(t []token, i int, low float64) bool {
+	for j := i + 1; j < len(t); j++ {
+		if t[j].kind == tokNumber {
+			return t[j].v >= low
+		}
+	}
+	return false
 }
 
 // labelDirectlyBefore finds the label of another quantity than pH that the
@@ -306,7 +340,7 @@ func (c *chainReader) place(t *token, spaced bool) bool {
 	}
 	switch {
 	case t.percent && q != physio.SaO2:
-		return c.percent(t, q)
+		return c.percent(t, q, spaced)
 	case t.percent && spaced:
 		return false // its role is weighed with the oxygen
 	case t.sign != 0 && c.filled >= 3 && q != physio.BE && q != physio.HCO3:
@@ -361,13 +395,13 @@ func (c *chainReader) dashes() bool {
 
 // percent takes a percentage that stands in another place than the
 // saturation's: in the place of PaO2 it is a saturation, and said.
-func (c *chainReader) percent(t *token, q physio.Quantity) bool {
+func (c *chainReader) percent(t *token, q physio.Quantity, spaced bool) bool {
 	r := c.r
 	if q != physio.PaO2 && q != physio.PaCO2 || c.filled < 2 && q == physio.PaO2 && r.raw[physio.PaCO2] == nil || t.v < 40 {
 		return false
 	}
 	if q == physio.PaO2 && r.raw[physio.SaO2] == nil {
-		if c.seps == 0 && c.slashes == 0 {
+		if spaced && (c.i+1 >= len(r.t) || r.t[c.i+1].kind != tokNumber || r.t[c.i+1].percent) {
 			return false
 		}
 		r.keepSat(c.i, NoteSatForPaO2)
@@ -410,6 +444,8 @@ func (c *chainReader) baseExcess(t *token) bool {
 func (c *chainReader) saturation(t *token, spaced bool) bool {
 	r := c.r
 	switch {
+	case c.bicarbonateAfterBE(t):
+		return true
 	case t.percent && t.v < 50 && !r.satFits(t.v/100) && t.v >= 21:
 		return false // FiO2, by its sign
 	case t.v >= 50 && t.v <= 100 && (r.satFits(t.v/100) || t.v >= 86 && !spaced) || t.v > 20 && r.satFits(t.v/100):
@@ -437,6 +473,28 @@ func (c *chainReader) saturation(t *token, spaced bool) bool {
 		return false
 	}
 	return false
+}
+
+// bicarbonateAfterBE takes a bicarbonate that follows a base excess in the
+// bicarbonate place: some laboratories print them in that order.
+func (c *chainReader) bicarbonateAfterBE(t *token) bool {
+	r := c.r
+	be, implied := r.raw[physio.HCO3], 0.0
+	if be == nil || be.labelled || r.raw[physio.BE] != nil || t.percent || math.Abs(be.v) > 20 || !r.fitsBE(be.v) {
+		return false
+	}
+	implied, ok := impliedHCO3(r.likelyValues())
+	if !ok || math.Abs(implied-t.v) > loud || math.Abs(implied-be.v) < loud {
+		return false
+	}
+	r.raw[physio.BE] = be
+	r.raw[physio.HCO3] = &rawValue{v: t.v, decimals: t.decimals, typed: t.typed()}
+	r.note(NoteBEPlace, physio.BE, be.typed, be.v)
+	r.smallPlace = false
+	r.take(c.i, 0)
+	r.last = c.i
+	c.filled++
+	return true
 }
 
 // typicalFiO2 says that v is a setting that people type as FiO2.

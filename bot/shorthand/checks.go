@@ -105,7 +105,7 @@ func (d *decider) checkBaseExcess(v *physio.Values, implied float64) {
 	if math.Abs(float64(sbe)+be) <= 4 {
 		ask.Choices = append(ask.Choices, choose(physio.BE, -be))
 	}
-	ask.Choices = append(ask.Choices, choose(physio.BE, be))
+	ask.Choices = append(ask.Choices, choose(physio.BE, math.Round(float64(sbe))), choose(physio.BE, be))
 	d.ask(ask)
 }
 

@@ -33,6 +33,7 @@ var houseForms = []struct {
 	{regexp.MustCompile(`^we\s+(?:use|work in|report in|are in|type in|read in)\s+(kpa|mmhg|mm hg|torr)\b.*$`), "units $1"},
 	{regexp.MustCompile(`^(?:we are|we're|were|we sit|this unit is|our hospital is|hospital is|this hospital is|i am|our unit is)\s+(?:at|up at)\s+(?:an altitude of |an elevation of |about )?([\d., ]+)\s*(m|metres|meters|ft|feet)\b.*$`), "altitude $1 $2"},
 	{regexp.MustCompile(`^(?:our|the)\s+(?:altitude|elevation)\s+(?:is|here is)\s+(.+)$`), "altitude $1"},
+	{regexp.MustCompile(`^(?:altitude|elevation)\s+([\d., ]+\s*(?:m|metres|meters|ft|feet)?)$`), "altitude $1"},
 	{regexp.MustCompile(`^(?:our|the)\s+(?:barometric pressure|pb|barometer)\s+(?:is|here is)\s+(.+)$`), "pressure $1"},
 	{regexp.MustCompile(`^when\s+(?:we|i|people here|they)\s+(?:say|type|write)\s+['"]?(.+?)['"]?,?\s+(?:we|i|it|they)\s+means?\s+['"]?(.+?)['"]?[.!]?$`), "word $1 = $2"},
 	{regexp.MustCompile(`^teach\s+(.+)$`), "word $1"},

@@ -116,6 +116,9 @@ func askFiO2(v float64, typed string) *Question {
 	if v >= 1 && v <= 20 {
 		ask.Choices = append(ask.Choices, choose(physio.OxygenFlow, v))
 	}
+	if v < 0.2 {
+		v *= 100
+	}
 	for _, p := range []float64{v, v * 10, v / 10, v * 100} {
 		if p >= 21 && p <= 100 {
 			ask.Value = p / 100

@@ -13,14 +13,14 @@ var (
 	strongID = regexp.MustCompile(`(?i)\b(mrn|urn|m\.r\.n\.?|u\.r\.n\.?|nhi|chi no|nhs( ?(no|number|num))?|ssn|social security( number| no)?|social|hosp(ital)?\.? ?(no|num|number|id)|hosp ?#|medical record( number| no)?|med ?rec( ?(no|num|number))?|record ?(no|num|number)|unit ?(no|number)|patient ?(id|no|num|number)|pat ?(id|nr|no)|pt ?(id|no|num|number|#)|patienten ?(nr|nummer|id)|fallnummer|fall ?nr|dob|d\.o\.b\.?|date of birth|birth ?date|geb\.?|geboren|medicare( ?(no|number))?|medicaid( ?(no|number))?|cpf|dni|nir|bsn|passport( ?(no|number))?|ohip|phn|hcn|health ?card( ?(no|number))?|ihi|insurance ?(no|id|number))[\s.:#=]*(is|was|no\.?|number|num)?[\s.:#=]*[a-z]{0,4}[-\s]?\d`)
 	// weakID are words that also stand in ordinary lines: four digits are
 	// asked for, or a number sign.
-	weakID     = regexp.MustCompile(`(?i)\b(acct|account|acc|accession|fin|csn|enc|encounter|visit|policy|member(ship)?|subscriber|plan|licen[cs]e|plate|serial|sn|device ?id|claim|id|i\.d\.|ident|case ?(no|number)|order ?(no|number)|req(uisition)?|specimen|sample ?(id|no|number)|lab ?(no|number|id)|barcode|wristband|label|ref(erence)?|admission ?(no|number)|episode|chart|file|hsp|har|cid|uhid|hn|ip ?no|cr ?no)\b[\s.:=]*(no\.?|num|number|nr|#|is)?[\s.:#=]*([a-z]{1,4}[-\s]?)?\d[\d-]{3,}`)
+	weakID     = regexp.MustCompile(`(?i)\b(acct|account|acc|accession|fin|csn|enc|encounter|visit|policy|member(ship)?|subscriber|plan|licen[cs]e|plate|serial|sn|device ?id|claim|id|i\.d\.|ident|case ?(no|number)|order ?(no|number)|req(uisition)?|specimen|sample ?(id|no|number)|lab ?(no|number|id)|barcode|wristband|label|ref(erence)?|admission ?(no|number)|episode|chart|file|hsp|har|cid|uhid|hn|ip ?no|cr ?no)\b[\s.:=]*(no\.?|num|number|nr|#|is)?[\s.:#=]*([a-z]{1,4}[-\s]?)?\d[\d-]{4,}|(?i)\b(id|acct|account|fin|csn)\b[\s.:#=]*\d{4}\b`)
 	numberSign = regexp.MustCompile(`(?i)\b(acct|account|accession|fin|csn|encounter|visit|policy|member|licen[cs]e|plate|serial|id|chart|case|episode|hsp|har) ?(#|no\.? ?|number:? ?)\s*[a-z]{0,3}-?\d{3,}`)
 	email      = regexp.MustCompile(`(?i)[a-z0-9._%+-]+\s?@\s?[a-z0-9-]+(\.[a-z0-9-]+)*\.[a-z]{2,}\b`)
 	longDigits = regexp.MustCompile(`\d{6,}`)
-	phone      = regexp.MustCompile(`(^|[^\d./])(\+\d{1,3}[ .-]?)?(\(\d{2,4}\)[ .-]?|\d{3,4}[ -])\d{3,4}[ -]\d{3,4}([^\d./%]|$)|\(\d{3}\) ?\d{3}-?\d{4}|\+\d[\d -]{7,}\d|\b\d{3}\.\d{3}\.\d{4}\b|\b0\d{2,4}[ -]\d{5,}|\b\d{5}[ -]\d{5,6}\b`)
+	phone      = regexp.MustCompile(`(^|[^\d./])(\+\d{1,3}[ .-]?)?(\(\d{2,4}\)[ .-]?\d{3,4}[ -]\d{3,4}|\d{3,4}-\d{3,4}-\d{3,4})([^\d./%]|$)|\(\d{3}\) ?\d{3}-?\d{4}|\+\d[\d -]{7,}\d|\b\d{3}\.\d{3}\.\d{4}\b|\b0\d{2,4}[ -]\d{5,}|\b\d{5}[ -]\d{5,6}\b`)
 	phoneWord  = regexp.MustCompile(`(?i)\b(phone|tel|telephone|mobile|cell|fax|pager|beeper|callback|call back|ring|handy)\b[\s.:#]*(no\.?|number|is|at|on)?[\s.:#]*\+?\(?\d{3,}[\d -]*`)
 	socialNo   = regexp.MustCompile(`\b\d{3}-\d{2}-\d{4}\b`)
-	ninePair   = regexp.MustCompile(`\b\d{3}[ -]\d{3}[ -]\d{3,4}\b`)
+	ninePair   = regexp.MustCompile(`\b\d{3}[ -]\d{3}[ -]\d{4}\b|\b\d{3}-\d{3}-\d{3}\b`)
 	yearDate   = regexp.MustCompile(`\b\d{1,2}[./-]\d{1,2}[./-](19|20)\d\d\b|\b(19|20)\d\d[./-]\d{1,2}[./-]\d{1,2}\b`)
 	monthDate  = regexp.MustCompile(`(?i)\b\d{1,2}(st|nd|rd|th)?[ -]?(of )?` + months + `\.?[ ,-]*(19|20)\d\d\b|\b` + months + `\.? ?\d{1,2}(st|nd|rd|th)?[ ,]+(19|20)\d\d\b`)
 	bornWord   = regexp.MustCompile(`(?i)\b(born|birthday|bday|b-day)( (on|in))?[\s:]+(\d|` + months + `)|\b(dob|d\.o\.b|geb)\b`)

@@ -2,6 +2,7 @@ package shorthand
 
 import (
 	"math"
+	"strings"
 
 	"galeward/physio"
 )
@@ -181,9 +182,7 @@ func (r *reader) labelledValue(i, j int, u string, n int) {
 	if q == physio.TotalCO2 && r.t[i].s == "tco2" && r.isTranscutaneous() {
 		q = physio.TcO2 // tcCO2 stands beside it: tcO2 with its usual spelling
 	}
-	if q == physio.RR && r.controlled {
-		q = physio.RRSet
-	}
+	r.measured = r.measured || q == physio.RR && saysMeasured(r.t[i].s)
 	if isCore(q) && q != physio.SaO2 {
 		r.keepRaw(q, i, j, u, n, e.number < 0)
 		return
@@ -202,6 +201,16 @@ func (r *reader) labelledValue(i, j int, u string, n int) {
 		return
 	}
 	r.store(q, j, u, n)
+}
+
+// saysMeasured says that the spelling of a rate names the patient's own.
+func saysMeasured(word string) bool {
+	for _, w := range []string{"tot", "spont", "measured", "patient", "pt ", "actual", "breathing"} {
+		if strings.Contains(word, w) {
+			return true
+		}
+	}
+	return false
 }
 
 // keepRaw keeps a labelled core value until the whole gas is weighed.

@@ -78,6 +78,9 @@ func (l *lexer) sign(c byte) {
 	case c == '-' && starts && l.signPlace(at):
 		l.i++
 		l.number('-', 0)
+	case c == '+' && l.byteAt(at+1) == ' ' && l.digitAt(at+2):
+		l.i += 2
+		l.number('+', 0)
 	case c == '+' && starts:
 		l.i++
 		l.number('+', 0)

@@ -24,7 +24,7 @@ func (r *reader) unitAfter(i int) (string, int) {
 		return "", 0
 	}
 	t := &r.t[j]
-	if t.s == "m" && (t.glued || r.t[i].decimals > 0 && r.t[i].v > 1 && r.t[i].v < 2.5) {
+	if t.s == "m" && (t.glued || r.t[i].v >= 300 && r.t[i].decimals == 0 && r.altitudeBefore(i) || r.t[i].decimals > 0 && r.t[i].v > 1 && r.t[i].v < 2.5) {
 		return uMetre, 1
 	}
 	if t.s == "f" && t.glued && r.t[i].v > 80 {
@@ -37,6 +37,12 @@ func (r *reader) unitAfter(i int) (string, int) {
 		return "", 0
 	}
 	return t.e.unit, 1
+}
+
+// altitudeBefore says that the number stands behind the word altitude.
+func (r *reader) altitudeBefore(i int) bool {
+	q, ok := labelDirectlyBefore(r.t, i)
+	return ok && q == physio.Altitude
 }
 
 // take marks the number at i and its unit as used.
@@ -156,7 +162,7 @@ func (r *reader) put(f form, q physio.Quantity, typed string) {
 func (r *reader) twice(q physio.Quantity, a, b float64, typed string) {
 	switch q {
 	case physio.RR: // set and measured rates are often typed one after another
-		if a != b && !r.sample().Has(physio.RRSet) && r.controlled {
+		if !r.sample().Has(physio.RRSet) && r.controlled {
 			r.sample().Set(physio.RRSet, a)
 			r.sample().Set(physio.RR, b)
 			return
@@ -256,6 +262,9 @@ func (r *reader) letterSex() {
 		}
 		if t.s == "m" && i > 0 && r.t[i-1].kind == tokNumber && r.t[i-1].decimals > 0 && r.t[i-1].v < 2.6 {
 			continue // metres
+		}
+		if t.s == "m" && i > 0 && r.t[i-1].kind == tokNumber && r.t[i-1].v >= 250 && r.altitudeBefore(i-1) {
+			continue
 		}
 		t.used = true
 		r.sample().Sex = physio.Sex(t.s)

@@ -79,6 +79,7 @@ func (p *parser) read() {
 	p.line.List = list
 	for i := range parts {
 		parts[i].mixed, parts[i].claims = p.mixed, claims
+		parts[i].corrects = p.h.Addressed && correctionWords.MatchString(head(p.rest))
 		g := readGas(parts[i].t, p.h, parts[i])
 		p.line.Gases = append(p.line.Gases, g)
 	}

@@ -20,8 +20,10 @@ type reader struct {
 	oxygen      []saying
 	// mixed says that the commas of the chain had two meanings.
 	mixed bool
-	// hint is the mode word of the segment, for set and measured rates.
+	// controlled says that a mode with a set rate is named, measured that a
+	// rate was said to be the patient's own.
 	controlled bool
+	measured   bool
 	smallPlace bool // a small positive number stands in the HCO3 place
 	claims     bool // the text makes claims, whose numbers are no values
 	// missed is set for an empty place of the chain.
@@ -45,15 +47,20 @@ func readGas(t []token, h Habits, o segment) Gas {
 	r.marks()
 	r.said()
 	r.measures()
+	r.modes()
 	r.headings()
 	r.labels()
 	r.settings()
 	r.chain()
+	r.onTheOxygen()
 	r.labelsBehind()
 	r.signedPEEP()
 	r.readOxygen()
 	r.settle()
 	r.leftovers()
+	if o.corrects {
+		r.lonePH()
+	}
 	r.finish()
 	return r.g
 }

@@ -88,6 +88,8 @@ func pressureDoubt(v *physio.Values, s surroundings) float64 {
 	d += steps(o2, 20, 3) + steps(o2, 26, 2)
 	if top, ok := ceiling(v, s); ok && o2 > top {
 		d += 6
+	} else if !ok && o2 > 250 {
+		d += 1.5 // rare without a word on the oxygen
 	}
 	return d
 }

@@ -12,6 +12,8 @@ type segment struct {
 	bed   string
 	time  string
 	mixed bool
+	// corrects says that the words take something typed back.
+	corrects bool
 	// claims says that the text around the gas makes claims.
 	claims bool
 	// plain says that nothing but the second gas itself parts it from the one
@@ -119,7 +121,7 @@ func boundary(t []token, from, to int, next *segment) int {
 	for i := from; i < to; i++ {
 		w, at := 0, i
 		switch x := &t[i]; {
-		case x.is(senseBed) && i+1 < len(t) && lineStart(t, i), x.kind == tokWord && x.e == bedHead:
+		case x.is(senseBed) && i+1 < len(t) && (lineStart(t, i) || t[i+1].kind == tokNumber && t[i+1].decimals == 0), x.kind == tokWord && x.e == bedHead:
 			w = 6
 		case x.sep("\n"):
 			w, at = 5, i+1

@@ -6,8 +6,18 @@ import (
 	"galeward/physio"
 )
 
+// modes finds out whether a mode with a set rate is named.
+func (r *reader) modes() {
+	for i := range r.t {
+		if t := &r.t[i]; t.is(senseDevice) && controls(t.e.mode) && !r.negated(i) {
+			r.controlled = true
+		}
+	}
+}
+
 // settings reads devices and modes with the numbers behind them.
 func (r *reader) settings() {
+	defer r.setRate()
 	for i := range r.t {
 		if t := &r.t[i]; t.is(senseDevice) && !t.used {
 			r.deviceAt(i)
@@ -23,13 +33,17 @@ func (r *reader) deviceAt(i int) {
 		return
 	}
 	nums := r.numbersBehind(i)
+	if len(nums) == 0 || r.t[nums[0]].percent {
+		if before := r.pairBefore(i); before != nil {
+			nums = before
+		}
+	}
 	if e.mode == physio.VolumeCtrl && r.vitalCapacity(nums) {
 		return
 	}
 	if e.mode != "" && (s.Mode == "" || s.Mode == physio.PressSupport) {
 		s.Mode = e.mode
 	}
-	r.controlled = r.controlled || controls(e.mode)
 	r.oxygen = append(r.oxygen, saying{at: i, device: e.device})
 	switch {
 	case e.mode == physio.PressSupport:
@@ -52,6 +66,17 @@ func (r *reader) deviceAt(i int) {
 	default:
 		r.flowOrFiO2(i, e.device, nums)
 	}
+}
+
+// pairBefore finds a pair of pressures in front of the device: "14/6 bipap".
+func (r *reader) pairBefore(i int) []int {
+	if i < 3 || !r.t[i-1].free() || !r.t[i-2].sep("/") && !r.t[i-2].is(senseOver) || !r.t[i-3].free() {
+		return nil
+	}
+	if r.joined(i-3) || r.t[i-1].percent || r.t[i-3].v > 50 || r.t[i-1].v >= r.t[i-3].v {
+		return nil
+	}
+	return []int{i - 3, i - 1}
 }
 
 // controls says that a labelled rate beside the mode is the set one.
@@ -161,6 +186,14 @@ func (r *reader) third(j int) {
 		r.take(j, 0)
 		r.sample().Set(physio.RRSet, t.v)
 		r.note(NoteVentOrder, physio.RRSet, t.typed(), t.v)
+	}
+}
+
+// setRate takes a labelled rate as the set one when the mode sets a rate and
+// nothing says that it was measured.
+func (r *reader) setRate() {
+	if r.controlled && !r.measured {
+		r.labelledSetRate()
 	}
 }
 

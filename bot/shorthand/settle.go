@@ -156,7 +156,6 @@ func (r *reader) ceilingAllows(fio2 float64) bool {
 
 // leftovers reads or asks about numbers that nothing has taken.
 func (r *reader) leftovers() {
-	r.onTheOxygen()
 	r.secondGroup()
 	if r.first < 0 {
 		return
@@ -222,13 +221,13 @@ func (r *reader) askBare(t *token) {
 func (r *reader) onTheOxygen() {
 	for i := range r.t {
 		t := &r.t[i]
-		if !t.free() || t.sign != 0 || t.percent || !r.oxygenWordBehind(i) {
+		if !t.free() || t.sign != 0 || t.percent || !r.oxygenWordBehind(i) || i >= r.first && i <= r.last && r.first >= 0 {
 			continue
 		}
 		r.take(i, 0)
 		switch v := t.v; {
 		case v > mostHighFlow && v <= 100, v >= 0.21 && v < 1:
-			r.sample().Set(physio.FiO2, formOf(physio.FiO2, t, "", true).v)
+			r.sayFiO2(i, formOf(physio.FiO2, t, "", true))
 		case v >= 21 && v <= mostHighFlow:
 			r.ask(Question{Code: AskFlowOrFiO2, Quantity: physio.FiO2, Typed: t.typed(), Choices: []Choice{
 				choose(physio.FiO2, v/100), choose(physio.OxygenFlow, v)}})
@@ -242,17 +241,43 @@ func (r *reader) oxygenWordBehind(i int) bool {
 	for j := i + 1; j < len(r.t) && j <= i+3; j++ {
 		t := &r.t[j]
 		if t.word("o2") || t.word("oxygen") {
-			_, ahead := 0, false
-			if t.is(senseLabel) {
-				_, ahead = r.numberAfter(j)
-			}
-			return !ahead
+			_, ahead := labelNumber(r, j)
+			return !ahead && (j > i+1 || i > 0 && r.near(i, 1, "on", "to", "at", "up to", "down to"))
 		}
 		if !t.is(senseFiller) && !t.word("on the") && !t.word("of") {
 			return false
 		}
 	}
 	return false
+}
+
+// labelNumber finds the number of a token that may be a label.
+func labelNumber(r *reader, j int) (int, bool) {
+	if !r.t[j].is(senseLabel) {
+		return 0, false
+	}
+	return r.numberAfter(j)
+}
+
+// lonePH takes the one number of a correction that can only be a pH.
+func (r *reader) lonePH() {
+	found := -1
+	for i := range r.t {
+		if !r.t[i].free() {
+			continue
+		}
+		if found >= 0 {
+			return
+		}
+		found = i
+	}
+	if found < 0 || r.sample().Has(physio.PHq) || r.first >= 0 {
+		return
+	}
+	if t := &r.t[found]; phLike(t.v) && t.decimals == 2 && t.sign == 0 {
+		r.take(found, 0)
+		r.sample().Set(physio.PHq, t.v)
+	}
 }
 
 // secondGroup asks about three or more joined numbers without a pH.

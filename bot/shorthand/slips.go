@@ -30,7 +30,8 @@ func (d *decider) settlePH() {
 		return
 	}
 	fit, fits := d.fittingPH()
-	if physio.PHq.Possible(p.v) && p.v < 7.8 {
+	whole := p.decimals == 0 && p.v == 7 && fits && math.Abs(fit-7) > 0.03 // "7": digits were lost
+	if physio.PHq.Possible(p.v) && p.v < 7.8 && !whole {
 		return
 	}
 	slips, silent := phSlips(p.v, p.typed)
@@ -59,7 +60,7 @@ func (d *decider) askPH(p *rawValue, slips []float64, fit float64, fits bool) {
 		ask.Value = math.Round(fit*100) / 100
 		ask.Choices = []Choice{choose(physio.PHq, ask.Value)}
 	}
-	if physio.PHq.Possible(p.v) {
+	if physio.PHq.Possible(p.v) && p.decimals > 0 {
 		ask.Choices = append(ask.Choices, choose(physio.PHq, p.v))
 	}
 	d.ask(ask)

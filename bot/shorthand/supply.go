@@ -50,6 +50,8 @@ func (r *reader) settleOxygen() {
 		r.useSupply(before)
 		if before.fio2 > 0 {
 			r.note(NoteFiO2AtDraw, physio.FiO2, "", before.fio2)
+		} else if before.hasFlow {
+			r.note(NoteFiO2AtDraw, physio.OxygenFlow, "", before.flow)
 		}
 	case split && differ(before, after):
 		r.askWhich(before, after)

@@ -15,7 +15,7 @@ var saidRows = []row{
 	{blood(physio.Arterial), "abg, art, arterial, art line, a line, aline, art gas, arterial gas, artline, radial, femoral art, art stick, arterial line, abgs, arterial blood gas, stick, art. gas, art line gas, a gas, arteriell, arterielle bga, ial, art sample, aline gas, art line sample, arterial sample, gasometria arterial, pal"},
 	{blood(physio.Venous), "vbg, venous, ven, venous gas, peripheral venous, vbgs, venous blood gas, pvbg, iv draw, ven gas, venos, venoes, venous sample, peripheral vbg, venosa, mixed up venous, v gas, venous stick"},
 	{blood(physio.CentralVenous), "cvc, cvc gas, central venous, central venous gas, central line gas, central vbg, central gas, cvbg, central line, picc gas, picc, cvl gas, central venous sample, cvg, cvl, central vein"},
-	{blood(physio.MixedVenous), "mixed venous, mvbg, mvg, mixed venous gas, pa gas, pac gas, swan gas, pa catheter gas, pulmonary artery gas, mvo2 gas, mixed ven, pa cath gas, pa line"},
+	{blood(physio.MixedVenous), "mixed venous, mvbg, mvg, mixed venous gas, pa gas, pac gas, swan gas, pa catheter gas, pulmonary artery gas, mvo2 gas, mixed ven, pa cath gas, pa cath, pa line"},
 	{blood(physio.Capillary), "cbg, cap gas, capillary, capillary gas, cap, capgas, cbgs, cap blood gas, capillary blood gas, arterialised capillary, arterialized capillary, capillary sample, kapillar, cap sample, bga kapillar"},
 	{sampled(physio.Capillary, physio.Heel), "heel stick, heelstick, heel prick, heel, heel gas, heel cap, heelprick, heel stick gas, heel cbg"},
 	{sampled(physio.Capillary, physio.Earlobe), "earlobe, ear lobe, earlobe gas, elbg, ear gas, ear lobe gas, elg, ohrlappchen, ohrlaeppchen, earlobe sample, clbg, ear"},
@@ -30,7 +30,7 @@ var saidRows = []row{
 	{people(physio.Adult), "adult, grown up, adults"},
 	{people(physio.Pregnant), "pregnant, gravid, pregnancy, obstetric, antenatal, preg, gravida, g1p0, parturient, prego, iup, labor, labour, laboring, labouring, expecting, antepartum, intrapartum"},
 	{people(physio.Child), "child, peds, paeds, picu, pediatric, paediatric, toddler, kid, infant, ped, paed, pedi, infants, children, schoolchild, teen"},
-	{people(physio.Newborn), "neonate, newborn, nicu, neonatal, term, neo, baby, term baby, newborns, term newborn, term infant, nb, scbu, full term, babe, bub, neonat, neonates"},
+	{people(physio.Newborn), "dol, day of life, neonate, newborn, nicu, neonatal, term, neo, baby, term baby, newborns, term newborn, term infant, nb, scbu, full term, babe, bub, neonat, neonates"},
 	{people(physio.Preterm), "preterm, premie, preemie, prem, premature, elbw, vlbw, preemy, premmie, preterm baby, preterm infant, premature baby, micropreemie, micro preemie, ex prem, premies, preemies, 24 weeker, late preterm"},
 
 	{entry{sense: senseSaid, sex: physio.Male}, "male, man, gentleman, boy, boys, he, gent, guy, males, his"},

@@ -64,7 +64,7 @@ var unitRows = []row{
 	{unit(uWeek), "wk, wks, week, weeks, weeker, wkr, wker, weekers, w ga, wk ga, weeks ga, weeks gestation, wks gestation, week gestation, weeks gestational age"},
 	{unit(uYear), "yo, yr, yrs, year, years, y, year old, years old, yr old, yrs old, yom, yof, y o, years of age"},
 	{unit(uMonth), "mo, mth, months, month, mos, month old, months old, mo old"},
-	{unit(uDay), "days, day old, days old, dol, d old"},
+	{unit(uDay), "days, day old, days old, d old"},
 	{unit(uPerMin), "/min, per min, per minute, breaths, breaths a minute, breaths per minute, breaths/min, a minute, min-1, times a minute"},
 	{unit(uTime), "min, mins, minute, minutes, h, hr, hrs, hour, hours, sec, secs, second, seconds, d, s, ms, hrs ago, min ago, mins ago, hr ago"},
 }

@@ -29,7 +29,7 @@ func Open(path string, o Options) (*Store, error) {
 		s.now = time.Now
 	}
 	if err := s.prepare(path); err != nil {
-		s.Close()
+		_ = s.Close() // the refusal is the news
 		return nil, err
 	}
 	return s, nil

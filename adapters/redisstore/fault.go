@@ -6,6 +6,7 @@ import (
 	"fmt"
 	"net"
 	"regexp"
+	"strings"
 
 	"github.com/redis/go-redis/v9"
 
@@ -57,7 +58,7 @@ func fault(ctx context.Context, err error) error {
 }
 
 // codeInside is where old servers put the code of an error within a script.
-var codeInside = regexp.MustCompile(`(?:^|-)([A-Z]{3,})(?: |$)`)
+var codeInside = regexp.MustCompile(`-([A-Z]{3,}) `)
 
 // serverCode is the code of an error that the server answered, and "" when the
 // error is not an answer.
@@ -66,11 +67,14 @@ func serverCode(err error) string {
 	if err == nil || !errors.As(err, &answer) {
 		return ""
 	}
-	code := "ERR"
-	for _, found := range codeInside.FindAllStringSubmatch(answer.Error(), -1) {
-		if code = found[1]; code != "ERR" {
-			break
+	code, rest, _ := strings.Cut(answer.Error(), " ")
+	if code == "ERR" && strings.HasPrefix(rest, "Error running script") {
+		if inside := codeInside.FindStringSubmatch(rest); inside != nil {
+			return inside[1]
 		}
+	}
+	if code == "" || code != strings.ToUpper(code) {
+		return "ERR"
 	}
 	return code
 }

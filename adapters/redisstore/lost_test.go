@@ -146,11 +146,11 @@ func TestDurableWriteLosesItsReply(t *testing.T) {
 }
 
 func TestSlowServerKeepsTheDeadline(t *testing.T) {
-	s, p, plain := behind(t)
-	p.delay.Store(int64(400 * time.Millisecond))
+	s, p, plain := behind(t, func(o *Options) { o.Timeout = 3 * time.Second })
+	p.delay.Store(int64(time.Second))
 	ctx, cancel := context.WithTimeout(context.Background(), 150*time.Millisecond)
 	defer cancel()
-	within(t, 300*time.Millisecond, func() {
+	within(t, 500*time.Millisecond, func() {
 		if _, err := s.Do(ctx, room, claim("event/1", "mine")); !errors.Is(err, ErrNoAnswer) {
 			t.Errorf("error %v", err)
 		}

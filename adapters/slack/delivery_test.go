@@ -2,7 +2,6 @@ package slack
 
 import (
 	"context"
-	"errors"
 	"fmt"
 	"strings"
 	"sync"
@@ -11,7 +10,6 @@ import (
 
 	"galeward/adapters/adaptertest"
 	"galeward/adapters/slack/slackfake"
-	"galeward/adapters/transport"
 	"galeward/bot"
 	"galeward/bot/reply"
 )
@@ -143,143 +141,6 @@ func TestForeignAddress(t *testing.T) {
 	c := Config{APIURL: "https://slack.com/api/"}
 	if !c.mayAnswerTo("https://hooks.slack.com/commands/T1/2/3") || c.mayAnswerTo("https://slack.com/x") {
 		t.Error("the real address")
-	}
-}
-
-// TestFaultsOnTheWay: each fault once, then Slack works again. One message
-// arrives in each case, and not a second one.
-func TestFaultsOnTheWay(t *testing.T) {
-	type F = slackfake.Fault
-	faults := map[string]F{
-		"told to wait":                   {Status: 429, RetryAfter: "1"},
-		"told to wait, no time":          {Status: 429},
-		"told to wait, half a second":    {Status: 429, RetryAfter: "0.5"},
-		"server error":                   {Status: 503},
-		"server error, after all posted": {Status: 500, Accept: true},
-		"connection cut":                 {Cut: true},
-		"connection cut, after posting":  {Cut: true, Accept: true},
-		"silence":                        {Hang: true},
-		"silence, after posting":         {Hang: true, Accept: true},
-		"slow":                           {Delay: 50 * time.Millisecond},
-		"internal error":                 {Error: "internal_error"},
-		"held back":                      {Error: "ratelimited"},
-	}
-	quick := func(c *Config) { c.Timeout = 300 * time.Millisecond }
-	for name, fault := range faults {
-		t.Run(name, func(t *testing.T) {
-			t.Parallel()
-			f := play(t, false, quick, mention, func(ctx context.Context, f *slackfake.Fake, e bot.Event, way bot.Way) {
-				f.Fault("chat.postMessage", fault)
-				made, err := way.Deliver(ctx, told(e, "answer"))
-				if err != nil {
-					t.Error(err)
-				}
-				if posts := f.Posts(); len(posts) != 1 || made != ref(slackfake.Channel, posts[0].TS) {
-					t.Errorf("made %q, posts %+v", made, posts)
-				}
-			})
-			if fault.RetryAfter == "1" && f.Calls("chat.postMessage") != 2 {
-				t.Errorf("%d calls", f.Calls("chat.postMessage"))
-			}
-		})
-		t.Run("private, "+name, func(t *testing.T) {
-			t.Parallel()
-			play(t, true, quick, mention, func(ctx context.Context, f *slackfake.Fake, e bot.Event, way bot.Way) {
-				f.Fault("chat.postEphemeral", fault)
-				post := told(e, "answer")
-				post.For = e.User
-				if _, err := way.Deliver(ctx, post); err != nil || len(f.Posts()) < 1 {
-					t.Errorf("%v, posts %+v", err, f.Posts())
-				}
-			})
-		})
-		if fault.Error == "" {
-			t.Run("by address, "+name, func(t *testing.T) {
-				t.Parallel()
-				play(t, true, quick, command, func(ctx context.Context, f *slackfake.Fake, e bot.Event, way bot.Way) {
-					f.Fault("response_url", fault)
-					if _, err := way.Deliver(ctx, told(e, "answer")); err != nil || len(f.Posts()) < 1 {
-						t.Errorf("%v, posts %+v", err, f.Posts())
-					}
-				})
-			})
-		}
-	}
-}
-
-// TestWaitsAsLongAsAsked: Retry-After is a promise about the time before which
-// another call is pointless, on every way.
-func TestWaitsAsLongAsAsked(t *testing.T) {
-	for route, send := range map[string]func(*slackfake.Fake){"chat.postMessage": mention, "chat.postEphemeral": mention, "response_url": command} {
-		t.Run(route, func(t *testing.T) {
-			t.Parallel()
-			play(t, false, nil, send, func(ctx context.Context, f *slackfake.Fake, e bot.Event, way bot.Way) {
-				f.Fault(route, slackfake.Fault{Status: 429, RetryAfter: "1"})
-				post := told(e, "answer")
-				if route == "chat.postEphemeral" {
-					post.For = e.User
-				}
-				start := time.Now()
-				_, err := way.Deliver(ctx, post)
-				if took := time.Since(start); err != nil || took < time.Second || took > 5*time.Second {
-					t.Errorf("%v after %s", err, took)
-				}
-			})
-		})
-	}
-}
-
-// TestOutage: calls stay few, and the error names no address, token or text.
-func TestOutage(t *testing.T) {
-	f := play(t, false, nil, mention, func(ctx context.Context, f *slackfake.Fake, e bot.Event, way bot.Way) {
-		for range 100 {
-			f.Fault("chat.postMessage", slackfake.Fault{Status: 503})
-		}
-		_, err := way.Deliver(ctx, told(e, "bed-seven"))
-		if err == nil || err.Error() != "slack chat.postMessage: status 503" {
-			t.Errorf("error: %v", err)
-		}
-		for range 5 {
-			f.Fault("chat.postEphemeral", slackfake.Fault{Cut: true})
-		}
-		post := told(e, "bed-seven")
-		post.For = e.User
-		_, err = way.Deliver(ctx, post)
-		host := strings.TrimSuffix(f.APIURL(), "api/")
-		if want := "slack chat.postEphemeral: call to " + host + "...: connection lost"; err == nil || err.Error() != want {
-			t.Errorf("error: %v, want %s", err, want)
-		}
-	})
-	if n := f.Calls("chat.postMessage"); n != 4 {
-		t.Errorf("%d calls, the settings say 4", n)
-	}
-}
-
-// TestNobodyWaits: a scheduled post is rather missed than doubled.
-func TestNobodyWaits(t *testing.T) {
-	place := bot.Place{Platform: platform, Workspace: slackfake.Team, Channel: slackfake.Channel}
-	post := bot.Post{Key: "slot 07:00", To: place, Reply: adaptertest.Echo("beds")}
-	ctx := context.Background()
-
-	f, a := connect(t, &adaptertest.Handler{}, quiet(), nil)
-	f.Fault("chat.postMessage", slackfake.Fault{Cut: true, Accept: true})
-	f.Fault("conversations.history", slackfake.Fault{Error: "missing_scope"})
-	if _, err := a.Way().Deliver(ctx, post); !errors.Is(err, errUnsure) {
-		t.Errorf("error: %v", err)
-	}
-	if n := len(f.Posts()); n != 1 {
-		t.Errorf("%d posts", n)
-	}
-	made, found, err := a.Way().(bot.Finder).Find(ctx, place, post.Key)
-	if err != nil || !found || made != ref(place.Channel, f.Posts()[0].TS) {
-		t.Errorf("Find: %q %v %v", made, found, err)
-	}
-	if _, found, err := a.Way().(bot.Finder).Find(ctx, place, "slot 19:00"); found || err != nil {
-		t.Errorf("Find of another: %v %v", found, err)
-	}
-	f.Fault("conversations.history", slackfake.Fault{Error: "missing_scope"})
-	if _, _, err := a.Way().(bot.Finder).Find(ctx, place, post.Key); err == nil {
-		t.Error("a look-up that was refused says that there is nothing")
 	}
 }
 
@@ -419,112 +280,6 @@ func (a *adaptive) handled() int {
 	a.mu.Lock()
 	defer a.mu.Unlock()
 	return a.n
-}
-
-// TestRefusedMessagesAreSplit: Slack's own count of a message is not documented
-// to the letter; when it refuses one, nothing is cut.
-func TestRefusedMessagesAreSplit(t *testing.T) {
-	r := critical()
-	for i := range 40 {
-		r.Add(reply.Major, fmt.Sprintf("Caution %d: %s", i, strings.Repeat("w ", 100)))
-	}
-	for name, refusals := range map[string][]slackfake.Fault{
-		"once":      {{Error: "msg_blocks_too_long"}},
-		"twice":     {{Error: "msg_blocks_too_long"}, {Error: "invalid_blocks"}},
-		"seemingly": {{Error: "msg_too_long"}, {Error: "msg_too_long"}, {Error: "msg_too_long"}, {Error: "msg_too_long"}},
-	} {
-		f := play(t, false, nil, mention, func(ctx context.Context, f *slackfake.Fake, e bot.Event, way bot.Way) {
-			f.Fault("chat.postMessage", refusals...)
-			post := told(e, "")
-			post.Reply = r
-			if _, err := way.Deliver(ctx, post); err != nil {
-				t.Errorf("%s: %v", name, err)
-			}
-		})
-		var all strings.Builder
-		for _, p := range f.Posts() {
-			all.WriteString(p.Text + "\n")
-		}
-		if strings.TrimSpace(all.String()) != escape(strings.TrimSpace(r.Text())) {
-			t.Errorf("%s: %d messages show %q", name, len(f.Posts()), all.String())
-		}
-		if len(f.Posts()) < 2 {
-			t.Errorf("%s: %d messages", name, len(f.Posts()))
-		}
-	}
-}
-
-// TestBareTextAtLast: when Slack takes no blocks at all, the text still goes.
-func TestBareTextAtLast(t *testing.T) {
-	f := play(t, false, nil, mention, func(ctx context.Context, f *slackfake.Fake, e bot.Event, way bot.Way) {
-		f.Fault("chat.postMessage", slackfake.Fault{Error: "invalid_blocks"})
-		post := told(e, "")
-		post.Reply = everyday()
-		if _, err := way.Deliver(ctx, post); err != nil {
-			t.Error(err)
-		}
-	})
-	posts := f.Posts()
-	if len(posts) != 1 || posts[0].Text != escape(everyday().Text()) || len(posts[0].Blocks) > 0 || posts[0].Markdown != "false" {
-		t.Errorf("%+v", posts)
-	}
-}
-
-func TestPacing(t *testing.T) {
-	const pace = 60 * time.Millisecond
-	h := &adaptertest.Handler{}
-	f, _ := connect(t, h, quiet(), func(c *Config) { c.Pace = pace })
-	start := time.Now()
-	for i := range 6 {
-		f.Mention(slackfake.Message{Text: fmt.Sprint("question ", i)})
-	}
-	posts := f.Wait(6)
-	if took := time.Since(start); took < 5*pace {
-		t.Errorf("six messages to one channel in %s", took)
-	}
-	for i, p := range posts {
-		if p.Shown != fmt.Sprint("question ", i) {
-			t.Errorf("answer %d is %q", i, p.Shown)
-		}
-	}
-}
-
-// TestFull: whose question could not be taken is told, or Slack asks again.
-func TestFull(t *testing.T) {
-	s := &slow{release: make(chan struct{})}
-	f, _ := connect(t, s, quiet(), func(c *Config) { c.ChannelQueue = 2 })
-	for range 2 {
-		f.Command(slackfake.Command{Text: "x"})
-	}
-	f.Command(slackfake.Command{Text: "one too many"})
-	p := f.Wait(1)[0]
-	if p.Route != "ack" || p.For != slackfake.User || p.Text != DefaultBusy {
-		t.Errorf("%+v", p)
-	}
-	ts := f.NewTS()
-	if ack := f.Mention(slackfake.Message{Text: "x", TS: ts}); ack.Status != 503 || ack.Header.Get("X-Slack-No-Retry") != "" {
-		t.Errorf("%+v", ack)
-	}
-	close(s.release)
-	f.Until("room", func() bool {
-		return f.Mention(slackfake.Message{Text: "x", TS: ts, Wire: slackfake.Wire{Retry: 1}}).Status == 200
-	})
-	f.Until("the question that had no room", func() bool { return s.heard.Load() == 3 })
-}
-
-// TestPaceQueueFull: an answer that may not wait any longer is announced to the
-// asker, who sees it alone.
-func TestPaceQueueFull(t *testing.T) {
-	f := play(t, false, nil, mention, func(ctx context.Context, f *slackfake.Fake, e bot.Event, w bot.Way) {
-		w.(*way).a.pace = transport.NewPacer(time.Hour, 1, 0)
-		_, err := w.Deliver(ctx, told(e, "answer"))
-		if !errors.Is(err, transport.ErrBusy) {
-			t.Errorf("error: %v", err)
-		}
-	})
-	if posts := f.Posts(); len(posts) != 1 || posts[0].For != slackfake.User || posts[0].Text != DefaultBusy {
-		t.Errorf("%+v", posts)
-	}
 }
 
 func TestNothingToSay(t *testing.T) {

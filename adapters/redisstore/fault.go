@@ -26,7 +26,6 @@ var (
 	ErrNoAnswer = errors.New("redisstore: no answer from the server")
 
 	errSecret  = errors.New("redisstore: a password can't be read")
-	errPaused  = fmt.Errorf("%w a moment ago, so it was not asked", ErrNoAnswer)
 	errForeign = errors.New("redisstore: a key holds what another program wrote")
 	errReply   = errors.New("redisstore: the server gave a reply that the script does not give")
 )

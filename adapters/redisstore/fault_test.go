@@ -51,7 +51,6 @@ func TestDownAtTheStart(t *testing.T) {
 func TestHangingServer(t *testing.T) {
 	server := storetest.Redis(t)
 	o := on(server)
-	o.Pause = -1
 	s := open(t, o)
 	o.Timeout = 3 * time.Second
 	patient := open(t, o)
@@ -73,48 +72,6 @@ func TestHangingServer(t *testing.T) {
 	server.Cont()
 	recovers(t, s)
 	recovers(t, patient)
-}
-
-// TestPauseAfterAHang: the first message pays for the hanging server, the
-// next ones do not, and the pause ends with it.
-func TestPauseAfterAHang(t *testing.T) {
-	server := storetest.Redis(t)
-	o := on(server)
-	o.Pause = 400 * time.Millisecond
-	s := open(t, o)
-	must(t, s, put("house", "rules", "t1"))
-	server.Stop()
-	if _, err := s.Do(context.Background(), room, store.Op{Key: "house"}); !errors.Is(err, ErrNoAnswer) {
-		t.Fatal(err)
-	}
-	within(t, 100*time.Millisecond, func() {
-		for range 1000 {
-			if _, err := s.Do(context.Background(), room, store.Op{Key: "house"}); !errors.Is(err, ErrNoAnswer) {
-				t.Fatal(err)
-			}
-		}
-	})
-	server.Cont()
-	recovers(t, s)
-	holds(t, s, "house", "rules", "t1")
-}
-
-func TestPauseIsForSilenceOnly(t *testing.T) {
-	server := storetest.Redis(t)
-	s := open(t, on(server))
-	must(t, s, put("house", "rules", "t1"))
-	for range 3 {
-		_, err := s.Do(context.Background(), room, claim("house", "t2"))
-		if !errors.Is(err, store.ErrConflict) {
-			t.Fatalf("a conflict: %v", err)
-		}
-		ctx, cancel := context.WithTimeout(context.Background(), time.Nanosecond)
-		if _, err = s.Do(ctx, room, store.Op{Key: "house"}); !errors.Is(err, context.DeadlineExceeded) {
-			t.Fatalf("a caller in a hurry: %v", err)
-		}
-		cancel()
-		holds(t, s, "house", "rules", "t1")
-	}
 }
 
 // secretive holds an error to what a log may have: no password, no value.

@@ -53,9 +53,6 @@ type Options struct {
 	// Timeout is for dialling, for writing and for reading each; 0 means
 	// 300 ms.
 	Timeout time.Duration
-	// Pause is how long calls fail at once after one got no answer, so that
-	// not each message waits for a dead server; 0 means 250 ms, below 0 never.
-	Pause time.Duration
 	// PoolSize is how many connections there are to a server at most; 0 means
 	// 10 per core.
 	PoolSize int
@@ -99,9 +96,6 @@ func (o *Options) setDefaults() {
 		o.WaitTimeout = 100 * time.Millisecond
 	}
 	o.WaitTimeout = max(min(o.WaitTimeout, o.Timeout/2), time.Millisecond) // the reply to it is read within Timeout
-	if o.Pause == 0 {
-		o.Pause = 250 * time.Millisecond
-	}
 	if o.Warm <= 0 {
 		o.Warm = 2
 	}

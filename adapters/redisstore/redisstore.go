@@ -34,7 +34,6 @@ func init() { logging.Disable() }
 type Store struct {
 	client redis.UniversalClient
 	o      Options
-	pause  pause
 }
 
 var _ store.Store = (*Store)(nil)
@@ -46,7 +45,7 @@ func Open(o Options) (*Store, error) {
 		return nil, err
 	}
 	universal := o.universal()
-	s := &Store{o: o, pause: newPause(o.Pause)}
+	s := &Store{o: o}
 	switch {
 	case o.Cluster: // said outright: with one address the client would guess a single server
 		s.client = redis.NewClusterClient(universal.Cluster())
@@ -71,7 +70,8 @@ func (s *Store) Close() error {
 //
 // Where the reply is lost, Do asks once more: the script then first looks for
 // the tags of this call. A call that only deletes has no tag, and is not asked
-// again.
+// again. Do does not remember that the server gave no answer: package memory
+// spares the messages that follow.
 func (s *Store) Do(ctx context.Context, partition string, ops ...store.Op) ([]store.Item, error) {
 	if err := store.Check(partition, ops); err != nil {
 		return nil, err
@@ -82,13 +82,8 @@ func (s *Store) Do(ctx context.Context, partition string, ops ...store.Op) ([]st
 	if len(ops) == 0 {
 		return []store.Item{}, nil
 	}
-	if s.pause.holds() {
-		return nil, errPaused
-	}
 	c := newCall(s.o.Prefix, partition, ops)
-	began := s.pause.now()
 	r, err := s.ask(ctx, c)
-	s.pause.note(err, s.pause.now()-began >= s.o.Timeout/2)
 	if err != nil {
 		return nil, fault(ctx, err)
 	}

@@ -14,6 +14,20 @@ type commandLine struct {
 	Version  versionCommand  `cmd:"" help:"Print the version."`
 }
 
+// askLine is the part of the grammar that ask needs. Building the whole one
+// takes longer than an answer, and ask is started once for each question.
+type askLine struct {
+	Ask askCommand `cmd:"" help:"Answer one message, or one message a line of standard input."`
+}
+
+// grammar gives what is needed to parse the arguments.
+func grammar(args []string) any {
+	if len(args) > 0 && args[0] == "ask" {
+		return new(askLine)
+	}
+	return new(commandLine)
+}
+
 type versionCommand struct{}
 
 // Run prints the version and the commit that the binary was built from.

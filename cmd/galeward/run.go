@@ -60,8 +60,7 @@ func run(ctx context.Context, p process) (code int) {
 }
 
 func parseAndRun(ctx context.Context, p process) error {
-	var cli commandLine
-	parser, err := kong.New(&cli,
+	parser, err := kong.New(grammar(p.args),
 		kong.Name("galeward"),
 		kong.Description("Reads blood-gas values from a typed line and says how ventilation and oxygenation stand."),
 		kong.Writers(p.out, p.errs),

@@ -215,5 +215,4 @@ func TestCasesIndices(t *testing.T) {
 }
 
 // sourceOff are printed numbers that do not follow from the printed gas.
-var sourceOff = map[string]string{
-}
+var sourceOff = map[string]string{}

@@ -94,7 +94,7 @@ func (c *composer) criticalFirst() bool {
 const headlineWidth = 40
 
 // headline carries both verdicts, ventilation first, in at most 40 characters:
-// the longest pair of phrasings that fits.
+// the efficiency of oxygenation is kept before the time course of ventilation.
 func (c *composer) headline() string {
 	if len(c.a.Critical) > 1 {
 		return c.criticalHeadline()
@@ -103,8 +103,8 @@ func (c *composer) headline() string {
 	if len(c.a.Critical) == 1 {
 		critical = c.criticalValue(c.a.Critical[0]) + " critical"
 	}
-	for _, v := range c.ventilationShort() {
-		for _, o := range c.oxygenationShort() {
+	for _, o := range c.oxygenationShort() {
+		for _, v := range c.ventilationShort() {
 			if h := joinHeads(critical, v, o); len([]rune(h)) <= headlineWidth {
 				return h
 			}
@@ -151,7 +151,7 @@ func (c *composer) ventilationShort() []string {
 	short, _, _ := strings.Cut(level, ",")
 	out := []string{level, short}
 	if c.a.Ventilation.Efficiency == physio.Poor {
-		out = append([]string{level + ", efficiency poor", level + ", costly"}, out...)
+		out = append([]string{level + ", efficiency poor", short + ", efficiency poor", level + ", costly", short + ", costly"}, out...)
 	}
 	if len(c.a.Critical) == 1 && c.a.Critical[0] == physio.PaCO2 {
 		return []string{""} // the critical value names the axis
@@ -170,9 +170,6 @@ func (c *composer) ventilationHead() string {
 	answers := ab.Need == physio.Matches
 	switch v.Level {
 	case physio.LevelAdequate:
-		if v.Borderline {
-			return "CO2 borderline"
-		}
 		return "CO2 in range"
 	case physio.LevelShortForNeed:
 		return "CO2 above need"
@@ -255,9 +252,10 @@ func (c *composer) levelWord() string {
 			return "critically low"
 		case pao2 < 60:
 			return "low"
-		case o.Scale == physio.DegreeMild && o.OnOxygen:
-			return "borderline"
 		}
+	}
+	if o.Scale == physio.DegreeMild && o.OnOxygen {
+		return "borderline"
 	}
 	switch o.Scale {
 	case physio.DegreeAdequate:

@@ -1,6 +1,7 @@
 package bot
 
 import (
+	"slices"
 	"strings"
 
 	"galeward/bot/shorthand"
@@ -14,8 +15,8 @@ func (c *composer) echo() string {
 	b.WriteString(wordRead)
 	b.WriteString(strings.Join(c.echoed(), ", "))
 	b.WriteString(".")
-	for _, n := range c.gas.Notes {
-		add(&b, c.noteText(n))
+	for _, text := range c.noteTexts() {
+		add(&b, text)
 	}
 	if c.inherited != "" {
 		add(&b, c.inherited)
@@ -24,6 +25,17 @@ func (c *composer) echo() string {
 		add(&b, assumed)
 	}
 	return b.String()
+}
+
+// noteTexts are the readings that were not plain, each said once.
+func (c *composer) noteTexts() []string {
+	var out []string
+	for _, n := range c.gas.Notes {
+		if text := c.noteText(n); text != "" && !slices.Contains(out, text) {
+			out = append(out, text)
+		}
+	}
+	return out
 }
 
 func add(b *strings.Builder, sentence string) {
@@ -36,7 +48,6 @@ func add(b *strings.Builder, sentence string) {
 
 // echoed lists bed, time, sample, values and devices in echo order.
 func (c *composer) echoed() []string {
-	s := &c.gas.Sample
 	var out []string
 	if c.gas.Bed != "" {
 		out = append(out, "bed "+c.gas.Bed)
@@ -44,6 +55,13 @@ func (c *composer) echoed() []string {
 	if c.gas.Time != "" {
 		out = append(out, c.gas.Time)
 	}
+	return append(out, c.echoedValues()...)
+}
+
+// echoedValues is the echo behind bed and time.
+func (c *composer) echoedValues() []string {
+	s := &c.gas.Sample
+	var out []string
 	if w := bloodWord[s.Blood]; w != "" {
 		if site := siteWord[s.Site]; site != "" {
 			w = site
@@ -71,6 +89,9 @@ func (c *composer) echoValue(q physio.Quantity, v float64) string {
 	case physio.PaO2:
 		return c.bloodSymbol(q) + " " + c.n.value(q, v)
 	case physio.FiO2:
+		if s.Device == physio.Air {
+			return "" // "on air" says it
+		}
 		return symbol + " " + percent(v) + " %"
 	case physio.HCO3:
 		return symbol + " " + c.n.value(q, v) + c.fitWord()
@@ -130,6 +151,9 @@ func (c *composer) echoWords() []string {
 	}
 	if s.Mode != physio.ModeUnstated {
 		out = append(out, "mode "+string(s.Mode))
+	}
+	if s.Population != physio.PopulationUnstated && s.Population != physio.Adult {
+		out = append(out, populationWord[s.Population])
 	}
 	switch s.Sex {
 	case physio.Female:

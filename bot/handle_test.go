@@ -85,7 +85,7 @@ type room struct {
 }
 
 func newRoom() *room {
-	r := &room{hall: &hall{}, store: &counted{Store: memstore.New()}, now: noon}
+	r := &room{hall: &hall{}, store: &counted{Store: memstore.New(nil)}, now: noon}
 	r.bot = r.another()
 	return r
 }

@@ -54,19 +54,36 @@ func (t *turn) setHouse(words []string) {
 		t.houseHint(words[0])
 		return
 	}
+	raw, err := rule.parse(value)
+	if err != nil {
+		t.houseSays(upperFirst(err.Error()))
+		return
+	}
+	if t.line.Sentence {
+		t.readBack(rule.names[0] + " " + value)
+		return
+	}
 	if !t.v.House.MayChange(t.e.User, t.e.Manager) {
 		t.houseSays("These rules may be changed by named users only; nothing was changed.")
 		return
 	}
-	raw, err := rule.parse(value)
-	if err != nil {
-		t.houseSays(err.Error())
-		return
-	}
 	_, rev, err := t.b.memory.ChangeHouse(t.ctx, whereOf(t.e.Where), t.e.User, func(h memory.House) (memory.House, error) {
+		if rule.merge != nil {
+			return withField(h, rule.key, rule.merge(h, raw))
+		}
 		return withField(h, rule.key, raw)
 	})
 	t.houseResult(rev, err)
+}
+
+// readBack asks for a rule that was said in a sentence to be set in so many
+// words: nothing changes by the way.
+func (t *turn) readBack(rule string) {
+	text := "Set for this channel: " + rule + "? Then type: house " + rule
+	var r reply.Reply
+	r.Add(reply.Question, text)
+	t.finish("house", r)
+	t.answer.Machine.Question = &MachineQuestion{ID: "house_rule", Text: text}
 }
 
 // withField gives the rules with one field of the file form replaced; a nil

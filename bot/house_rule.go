@@ -17,68 +17,98 @@ type houseRule struct {
 	key   string
 	names []string
 	parse func(value string) (any, error)
+	// merge, when set, puts what was parsed into what stands there.
+	merge func(h memory.House, parsed any) any
 	show  func(memory.House) string
 }
 
 // houseRules is the one table of rules that can be set by plain words.
 var houseRules = []houseRule{
-	{"units", []string{"units", "unit"}, parseText, func(h memory.House) string {
+	{"units", []string{"units", "unit"}, parseText, nil, func(h memory.House) string {
 		return "Pressures are typed and shown in " + numbers{h.Units}.unit() + "."
 	}},
-	{"order", []string{"order"}, parseOrder, func(h memory.House) string {
+	{"order", []string{"order"}, parseOrder, nil, func(h memory.House) string {
 		return "Order of unlabelled values: " + orderWords(h.Order) + "."
 	}},
-	{"altitude_m", []string{"altitude", "height above sea"}, parseNumber, func(h memory.House) string {
+	{"altitude_m", []string{"altitude", "height above sea"}, parseNumber, nil, func(h memory.House) string {
 		return ifSet(h.Altitude, "Altitude: "+plain(h.Altitude, 0)+" m.")
 	}},
-	{"pressure_mmhg", []string{"pressure", "barometer", "pb"}, parseNumber, func(h memory.House) string {
+	{"pressure_mmhg", []string{"pressure", "barometer", "pb"}, parseNumber, nil, func(h memory.House) string {
 		return ifSet(h.PB, "Barometric pressure: "+plain(h.PB, 0)+" mmHg.")
 	}},
-	{"population", []string{"population", "patients"}, parseText, func(h memory.House) string {
+	{"population", []string{"population", "patients"}, parseText, nil, func(h memory.House) string {
 		if h.Population == physio.PopulationUnstated {
 			return ""
 		}
 		return "Population: " + populationWord[h.Population] + "."
 	}},
-	{"target_spo2", []string{"target", "saturation target", "spo2 target"}, parseSpan, func(h memory.House) string {
+	{"target_spo2", []string{"target", "saturation target", "spo2 target"}, parseSpan, nil, func(h memory.House) string {
 		if h.Target == nil {
 			return "No saturation target is set."
 		}
 		return "Saturation target: " + wholePercent(h.Target.Low) + "-" + wholePercent(h.Target.High) + " %."
 	}},
-	{"target_paco2_mmhg", []string{"co2 target", "paco2 target"}, parseSpan, func(h memory.House) string {
+	{"target_paco2_mmhg", []string{"co2 target", "paco2 target"}, parseSpan, nil, func(h memory.House) string {
 		if h.TargetPaCO2 == nil {
 			return ""
 		}
 		return fmt.Sprintf("PaCO2 wanted: %s-%s mmHg.", plain(h.TargetPaCO2.Low, 0), plain(h.TargetPaCO2.High, 0))
 	}},
-	{"critical", []string{"critical", "critical limits"}, parseCritical, func(h memory.House) string {
+	{"critical", []string{"critical", "critical limits"}, parseCritical, nil, func(h memory.House) string {
 		if h.Critical == nil {
 			return "Critical limits: the default ones (pH below 7.20 or above 7.60, PaCO2 above 70, PaO2 below 45 mmHg)."
 		}
 		return "Critical limits: " + criticalWords(*h.Critical) + "."
 	}},
-	{"private", []string{"private"}, parseSwitch, func(h memory.House) string {
+	{"private", []string{"private"}, parseSwitch, nil, func(h memory.House) string {
 		if h.Private {
 			return "Answers are private to the asker."
 		}
 		return "Answers are seen by the channel."
 	}},
-	{"listen", []string{"listen", "listening"}, parseSwitch, func(h memory.House) string {
+	{"listen", []string{"listen", "listening"}, parseSwitch, nil, func(h memory.House) string {
 		if h.Listen {
 			return "Bare gases in the channel are read."
 		}
 		return ""
 	}},
-	{"zone", []string{"zone", "time zone"}, parseZone, func(h memory.House) string {
+	{"zone", []string{"zone", "time zone"}, parseZone, nil, func(h memory.House) string {
 		return ifText(h.Zone, "Time zone: "+h.Zone+".")
 	}},
-	{"shift_ends", []string{"shift ends", "shift"}, parseText, func(h memory.House) string {
+	{"shift_ends", []string{"shift ends", "shift"}, parseText, nil, func(h memory.House) string {
 		return ifText(strings.Join(h.ShiftEnds, ", "), "Shifts end at "+strings.Join(h.ShiftEnds, ", ")+".")
 	}},
-	{"words", []string{"words"}, func(string) (any, error) {
-		return nil, fmt.Errorf("words are taken over from a file: galeward ask --house FILE shows the form")
-	}, showWords},
+	{"words", []string{"word", "words"}, parseWord, mergeWord, showWords},
+}
+
+// parseWord reads "ngt means nasal cannula 2 l", or a word with off behind it.
+func parseWord(value string) (any, error) {
+	for _, sign := range []string{" means ", " = ", "=", " is "} {
+		if word, meaning, ok := strings.Cut(value, sign); ok {
+			word, meaning = strings.Trim(word, ` '"`), strings.Trim(meaning, ` '"`)
+			if off(meaning) {
+				meaning = ""
+			}
+			return [2]string{word, meaning}, nil
+		}
+	}
+	return nil, fmt.Errorf("a word and its meaning are expected. Example: house word npo2 means nasal cannula 2 L")
+}
+
+// mergeWord adds one word to the house's words, or takes it away.
+func mergeWord(h memory.House, parsed any) any {
+	pair := parsed.([2]string)
+	words := make(map[string]string, len(h.Words)+1)
+	for w, meaning := range h.Words {
+		words[w] = meaning
+	}
+	if words[pair[0]] = pair[1]; pair[1] == "" {
+		delete(words, pair[0])
+	}
+	if len(words) == 0 {
+		return nil
+	}
+	return words
 }
 
 func ifSet(v float64, text string) string {
@@ -239,14 +269,16 @@ func parseCritical(value string) (any, error) {
 	if off(value) {
 		return nil, nil
 	}
-	out := map[string]float64{}
+	// What is not said keeps its default: a house that names one limit does not
+	// switch the others off.
+	out := map[string]float64{"ph_low": 7.20, "ph_high": 7.60, "paco2_high_mmhg": 70, "pao2_low_mmhg": 45}
 	fields := strings.FieldsFunc(value, func(r rune) bool { return r == ' ' || r == ',' || r == ';' })
 	for i := 0; i+1 < len(fields); i += 2 {
 		if err := criticalPair(out, fields[i], fields[i+1]); err != nil {
 			return nil, err
 		}
 	}
-	if len(out) == 0 || len(fields)%2 != 0 {
+	if len(fields) == 0 || len(fields)%2 != 0 {
 		return nil, fmt.Errorf("limits are expected in pairs. Example: house critical ph 7.2-7.6 paco2 70 pao2 45")
 	}
 	return out, nil
@@ -265,9 +297,9 @@ func criticalPair(out map[string]float64, name, value string) error {
 	}
 	switch q {
 	case physio.PHq:
-		out["ph_low"], out["ph_high"] = a, b
-		if !isRange {
-			delete(out, "ph_high")
+		out["ph_low"] = a
+		if isRange {
+			out["ph_high"] = b
 		}
 	case physio.PaCO2:
 		out["paco2_high_mmhg"] = b

@@ -3,6 +3,7 @@ package bot
 import (
 	"sort"
 	"strconv"
+	"strings"
 
 	"galeward/bot/memory"
 	"galeward/bot/reply"
@@ -15,7 +16,7 @@ func (t *turn) several() {
 	cs := make([]*composer, len(t.line.Gases))
 	for i := range t.line.Gases {
 		g := t.line.Gases[i]
-		a := physio.Assess(g.Sample, t.settingFor(&g))
+		a := physio.Assess(settled(&g), t.settingFor(&g))
 		cs[i] = &composer{gas: &g, a: &a, n: numbers{t.v.House.Units}}
 	}
 	kind := "trend"
@@ -32,8 +33,12 @@ func (t *turn) several() {
 	for _, c := range shown {
 		r.Add(reply.Item, c.itemLine())
 	}
-	t.askOnce(cs, &r)
+	question := askOnce(cs)
+	if question != nil {
+		r.Add(reply.Question, question.Text)
+	}
 	t.finish(kind, r)
+	t.answer.Machine.Question = question
 	for _, c := range cs {
 		t.answer.Machine.Gases = append(t.answer.Machine.Gases, c.machine(c.compose()))
 	}
@@ -49,17 +54,20 @@ func (t *turn) keepSeveral(cs []*composer) {
 	t.keeps = true
 }
 
-// askOnce puts the first open question of the list behind it.
-func (t *turn) askOnce(cs []*composer, r *reply.Reply) {
-	for i, c := range cs {
-		c.question = c.chooseQuestion()
-		if q := c.question; q != nil {
-			text := c.label(i) + ": " + q.text
-			r.Add(reply.Question, text)
-			t.answer.Machine.Question = &MachineQuestion{ID: q.id, Text: text, Choices: q.choices}
-			return
+// askOnce is the one question of a list: a doubt about what was typed first,
+// then the first other one.
+func askOnce(cs []*composer) *MachineQuestion {
+	for _, typed := range []bool{true, false} {
+		for i, c := range cs {
+			if typed && len(c.gas.Questions) == 0 {
+				continue
+			}
+			if q := c.chooseQuestion(); q != nil {
+				return &MachineQuestion{ID: q.id, Text: c.label(i) + ": " + q.text, Choices: q.choices}
+			}
 		}
 	}
+	return nil
 }
 
 func (c *composer) label(i int) string {
@@ -80,7 +88,11 @@ func (c *composer) itemLine() string {
 	if c.gas.Bed != "" || c.gas.Time != "" {
 		label = c.label(0) + ": "
 	}
-	line := label + c.headline() + ". " + c.echo()
+	values := strings.TrimPrefix(strings.Join(c.echoedValues(), ", "), " ")
+	line := label + c.headline() + ". " + values + "."
+	for _, text := range c.noteTexts() {
+		line += " " + text
+	}
 	for _, caution := range c.a.Cautions {
 		if caution.Severity == physio.Major {
 			line += " Caution: " + c.cautionSentence(caution.Code)
@@ -110,7 +122,7 @@ func countWords(cs []*composer) string {
 	for _, c := range cs {
 		counts[c.a.Problem]++
 	}
-	text := strconv.Itoa(len(cs)) + " gases"
+	text := strconv.Itoa(len(cs)) + " gases:"
 	for _, p := range []struct {
 		problem physio.Problem
 		word    string
@@ -119,7 +131,10 @@ func countWords(cs []*composer) string {
 		{physio.ProblemOxygenation, "O2"}, {physio.ProblemNone, "neither"}, {physio.ProblemUndetermined, "open"},
 	} {
 		if n := counts[p.problem]; n > 0 {
-			text += ", " + strconv.Itoa(n) + " " + p.word
+			if !strings.HasSuffix(text, ":") {
+				text += ","
+			}
+			text += " " + strconv.Itoa(n) + " " + p.word
 		}
 	}
 	return text

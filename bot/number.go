@@ -124,6 +124,9 @@ func (n numbers) index(ix physio.Index, v float64) string {
 		if ix.Key == "expected_ph_acute" || ix.Key == "expected_ph_chronic" {
 			return aboutPH(v)
 		}
+		if ix.Key == "vent_ratio" {
+			return plain(v, 1)
+		}
 		if ix.Key == "sao2_calc" {
 			return wholePercent(v) + " %"
 		}

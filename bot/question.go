@@ -30,7 +30,26 @@ func (c *composer) typedQuestion(q *shorthand.Question) *asked {
 		choices[i] = choice.Word
 	}
 	text := c.filled(questionTemplates[q.Code], q.Quantity, q.Typed, q.Value)
+	if q.Code == shorthand.AskSwap {
+		text = c.swapText(q)
+	}
 	return &asked{id: string(q.Code), text: withChoices(text, choices), choices: choices, from: q}
+}
+
+// swapText spells both readings of two pressures out.
+func (c *composer) swapText(q *shorthand.Question) string {
+	readings := make([]string, 0, len(q.Choices))
+	for _, choice := range q.Choices {
+		pco2, ok1 := choice.Set.Get(physio.PaCO2)
+		pao2, ok2 := choice.Set.Get(physio.PaO2)
+		if ok1 && ok2 {
+			readings = append(readings, "PaCO2 "+c.n.pressure(pco2)+" and PaO2 "+c.n.pressure(pao2)+" ("+choice.Word+")")
+		}
+	}
+	if len(readings) < 2 {
+		return c.filled(questionTemplates[q.Code], q.Quantity, q.Typed, q.Value)
+	}
+	return "HCO3 fits only one way round: " + strings.Join(readings, ", or ") + "?"
 }
 
 // withChoices spells the choices out where the sentence does not.

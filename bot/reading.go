@@ -22,6 +22,9 @@ func (t *turn) reading() {
 	last, hasLast := t.last()
 	switch {
 	case gas.Follow == shorthand.FollowNone:
+	case !hasLast && gas.Sample.Values.Empty():
+		t.parentless()
+		return
 	case !hasLast:
 		c.question = &asked{id: askParent, text: askParentText}
 	case gas.Follow == shorthand.FollowNow:
@@ -34,7 +37,7 @@ func (t *turn) reading() {
 
 // deliverReading assesses, composes and remembers.
 func (t *turn) deliverReading(c *composer) {
-	a := physio.Assess(c.gas.Sample, t.settingFor(c.gas))
+	a := physio.Assess(settled(c.gas), t.settingFor(c.gas))
 	c.a = &a
 	if c.gas.Follow == shorthand.FollowNow && c.change != "" {
 		c.change = c.changeSentence(c.change, t)
@@ -46,6 +49,22 @@ func (t *turn) deliverReading(c *composer) {
 	}
 	t.answer.Reply = r
 	t.keep(c)
+}
+
+// settled is the half of a reading that a doubt leaves standing: where the
+// pressures may stand the other way round, bicarbonate must not be used to
+// work out a PaCO2 behind the question's back.
+func settled(g *shorthand.Gas) physio.Sample {
+	s := g.Sample
+	for _, q := range g.Questions {
+		switch q.Code {
+		case shorthand.AskSwap, shorthand.AskPaCO2, shorthand.AskOverRange, shorthand.AskUnit:
+			if !s.Has(physio.PaCO2) {
+				s.Drop(physio.HCO3, physio.BE)
+			}
+		}
+	}
+	return s
 }
 
 // keep remembers the gas and the question that it left open.
@@ -235,14 +254,12 @@ func dropAnswered(qs []shorthand.Question) []shorthand.Question {
 	return append([]shorthand.Question(nil), qs[1:]...)
 }
 
-// readAgain shows the last gas once more, with a notice before it.
-func (t *turn) readAgain(last memory.Entry, notice string) {
+// readAgain shows the last gas once more, with the notices before it.
+func (t *turn) readAgain(last memory.Entry) {
 	g := last.Gas
 	a := physio.Assess(g.Sample, t.settingFor(&g))
 	c := &composer{gas: &g, a: &a, n: numbers{t.v.House.Units}}
-	if notice != "" {
-		c.notices = []string{notice}
-	}
+	c.notices = t.notices()
 	r := c.compose()
 	t.answer.Reply, t.answer.Machine = r, c.machine(r)
 }

@@ -19,6 +19,9 @@ func (c *composer) ventilation() string {
 	if e := c.ventilationEfficiency(); e != "" {
 		parts = append(parts, e)
 	}
+	if m := c.mechanics(); m != "" {
+		parts = append(parts, m)
+	}
 	return "Ventilation: " + strings.Join(parts, " ")
 }
 
@@ -60,7 +63,7 @@ func (c *composer) borderlineNeed() string {
 func (c *composer) adequateCO2() string {
 	level := "level adequate"
 	if c.a.Ventilation.Borderline {
-		level = "level borderline (" + c.rangeWords() + ")"
+		level = "level adequate, borderline (" + c.rangeWords() + ")"
 	}
 	if c.a.AcidBase.Need == physio.Matches && c.a.AcidBase.Primary == physio.MetabolicAcidosis {
 		return level + fmt.Sprintf(", and PaCO2 fits the metabolic side (%s %s).", c.needSpan(), c.n.unit())
@@ -154,7 +157,7 @@ func (c *composer) unknownCO2() string {
 func (c *composer) courseSentence() string {
 	ab := c.a.AcidBase
 	respiratory := ab.Primary == physio.RespiratoryAcidosis || ab.Primary == physio.RespiratoryAlkalosis
-	if !respiratory || c.a.Ventilation.Level == physio.LevelUnknown || c.a.Ventilation.Borderline && c.a.Problem == physio.ProblemNone {
+	if !respiratory || c.a.Fit.Grade == physio.FitReject || c.a.Ventilation.Level == physio.LevelUnknown || c.a.Ventilation.Borderline && c.a.Problem == physio.ProblemNone {
 		return ""
 	}
 	acute, ok := c.a.Index("expected_ph_acute")
@@ -198,6 +201,24 @@ func (c *composer) ventilationEfficiency() string {
 	ix, _ := c.a.Index(v.Basis)
 	return "Efficiency: " + c.indexPhrase(ix) + ": " + efficiencyWord[v.Efficiency] + "."
 }
+
+// mechanics gives what the ventilator's numbers tell of the breath.
+func (c *composer) mechanics() string {
+	var parts []string
+	for _, key := range []string{"vt_per_pbw", "vt_per_weight", "driving_pressure", "rsbi"} {
+		if ix, ok := c.a.Index(key); ok {
+			parts = append(parts, c.indexPhrase(ix)+mechanicsTail[key])
+		}
+	}
+	if len(parts) == 0 {
+		return ""
+	}
+	return upperFirst(strings.Join(parts, ", ")) + "."
+}
+
+// mechanicsTail completes the unit of an index where the weight is the
+// predicted one.
+var mechanicsTail = map[string]string{"vt_per_pbw": " predicted weight"}
 
 // lacking names the one value that would settle the efficiency: the minute
 // volume, or its missing half.
@@ -244,6 +265,9 @@ func (c *composer) indexRange(ix physio.Index) string {
 	low, high := c.n.index(ix, ix.Low), c.n.index(ix, ix.High)
 	if i := strings.LastIndexByte(low, ' '); i > 0 {
 		low = low[:i]
+	}
+	if strings.HasPrefix(low, "-") {
+		return low + " to " + high
 	}
 	return low + "-" + high
 }

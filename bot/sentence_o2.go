@@ -40,6 +40,9 @@ func (c *composer) unknownO2() string {
 	case physio.Intraosseous, physio.BloodUncertain:
 		return "can't say from this sample; SpO2 would tell."
 	}
+	if c.a.Raised(physio.CautionAboveAlveolar) {
+		return "can't say: the PaO2 is above what this oxygen allows."
+	}
 	if c.gas.Sample.Has(physio.PaO2) {
 		return "can't say here."
 	}
@@ -70,14 +73,17 @@ func (c *composer) oxygenWords() string {
 		return string(o.AgainstTarget) + " the target " + target + c.borderlineO2()
 	}
 	if o.ExpectedHere {
-		return "low, expected here (" + c.expectedWhy() + ")"
+		return "low, expected here by " + c.expectedWhy()
 	}
 	word := c.levelWord()
 	if word == "adequate" {
 		return "level adequate" + c.borderlineO2()
 	}
 	if word == "borderline" {
-		return "PaO2 60-79 on oxygen: borderline, no target set"
+		if o.SaturationSource == physio.SpO2 {
+			return "90-94 % on oxygen: borderline, no target set"
+		}
+		return "PaO2 " + c.n.between(60, 79) + " on oxygen: borderline, no target set"
 	}
 	if !o.OnOxygen && c.a.Ranges.PaO2 && (o.Scale == physio.DegreeMild || o.Scale == physio.DegreeModerate) {
 		scale := " on the scale for air at sea level"

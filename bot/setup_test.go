@@ -34,7 +34,7 @@ func newDesk(t testing.TB) *desk {
 	t.Helper()
 	d := &desk{t: t, now: noon, place: bot.Place{Platform: "test", Workspace: "w", Channel: "c", Thread: "t"}}
 	clock := func() time.Time { return d.now }
-	d.bot = bot.New(bot.Options{Memory: memory.New(memstore.New(), memory.Options{Now: clock}), Now: clock})
+	d.bot = bot.New(bot.Options{Memory: memory.New(memstore.New(clock), memory.Options{Now: clock}), Now: clock})
 	return d
 }
 

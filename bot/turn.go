@@ -72,7 +72,7 @@ func (t *turn) typed() {
 	if !t.meant() {
 		return
 	}
-	t.line = shorthand.Parse(t.e.Text, t.habits())
+	t.line = t.parse()
 	t.answer.Private = t.answer.Private || t.e.Private || t.v.House.Private
 	switch t.line.Kind {
 	case shorthand.Refusal:
@@ -99,6 +99,28 @@ func (t *turn) meant() bool {
 	}
 	t.answer.Machine = Machine{V: MachineVersion, Kind: "silence"}
 	return false
+}
+
+// parse reads the line. One that was not addressed in so many words is read a
+// second time as if it were: in a thread of ours for what completes or corrects
+// its last gas, in a console for commands. Chatter stays chatter.
+func (t *turn) parse() shorthand.Line {
+	h := t.habits()
+	line := shorthand.Parse(t.e.Text, h)
+	if line.Kind != shorthand.Silence || h.Addressed || !t.e.Listening && h.Earlier == nil {
+		return line
+	}
+	h.Addressed = true
+	again := shorthand.Parse(t.e.Text, h)
+	follows := len(again.Gases) == 1 && again.Gases[0].Follow != shorthand.FollowNone &&
+		(h.Earlier != nil || again.Gases[0].Follow != shorthand.FollowAddition)
+	switch {
+	case again.Kind == shorthand.Command, again.Kind == shorthand.Released, again.Kind == shorthand.Refusal:
+		return again
+	case again.Kind == shorthand.Reading && follows:
+		return again
+	}
+	return line
 }
 
 func (t *turn) habits() shorthand.Habits {
@@ -153,15 +175,30 @@ func (t *turn) command() {
 // parentless answers a command that needs a gas and has none.
 func (t *turn) parentless() {
 	last, ok := t.last()
+	if list := laterLists[t.line.Intent]; list != "" {
+		var r reply.Reply
+		r.Add(reply.Notice, list)
+		t.finish(string(t.line.Intent), r)
+		return
+	}
 	if !ok {
 		var r reply.Reply
+		for _, n := range t.notices() {
+			r.Add(reply.Notice, n)
+		}
 		r.Add(reply.Question, askParentText)
 		t.finish("question", r)
 		t.answer.Machine.Question = &MachineQuestion{ID: askParent, Text: askParentText}
 		return
 	}
-	t.line.Gases = []shorthand.Gas{last.Gas}
-	t.readAgain(last, laterWork[t.line.Intent])
+	t.readAgain(last)
+}
+
+// laterLists answers commands about beds, which this version does not keep.
+var laterLists = map[shorthand.Intent]string{
+	shorthand.IntentBeds:   "Beds are not kept by this version: pasted gases, one bed a line, are read worst first.",
+	shorthand.IntentTrend:  "Beds are not kept by this version: pasted gases of one bed, one time a line, are read in their order.",
+	shorthand.IntentRecord: "A chart line is not written by this version.",
 }
 
 // laterWork says, where a line asks for something that the gas alone does not

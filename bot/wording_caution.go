@@ -2,6 +2,7 @@ package bot
 
 import (
 	"galeward/bot/reply"
+	"galeward/bot/shorthand"
 	"galeward/physio"
 )
 
@@ -15,10 +16,10 @@ var cautionText = map[physio.CautionCode]string{
 	physio.CautionIntraosseous:   "sample from bone: no lung verdict.",
 	physio.CautionCPR:            "drawn during resuscitation: arterial gases then hide the state of the tissues; no lung verdict.",
 	physio.CautionSampleDoubt:    "arterial or venous is in doubt: treated as venous until known.",
-	physio.CautionVenousLikely:   "the sample's saturation is far below SpO2: this looks venous; the oxygenation verdict holds only if it is arterial.",
+	physio.CautionVenousLikely:   "the sample's saturation is far below SpO2: this looks venous; until that is known oxygenation is read from SpO2.",
 	physio.CautionVenousPossible: "PO2 %s also fits venous blood; the pH keeps its meaning.",
 	physio.CautionECMO:           "on ECMO the gas reflects the circuit too: no lung efficiency is given.",
-	physio.CautionHFOV:           "on oscillation rate and VT do not give minute volume; the mean airway pressure carries the oxygenation.",
+	physio.CautionHFOV:           "on oscillation minute volume is not rate times VT; the mean airway pressure carries the oxygenation.",
 	physio.CautionHeliox:         "heliox changes flows and ventilator readings; FiO2 holds only when measured.",
 	physio.CautionHyperbaric:     "under pressure the indices hold only with the chamber's pressure and FiO2.",
 	physio.CautionCyanotic:       "cyanotic heart disease: the usual oxygenation cut-offs do not apply; the patient's own target does.",
@@ -45,6 +46,8 @@ var cautionText = map[physio.CautionCode]string{
 	physio.CautionConserving:     "with this oxygen source FiO2 can't be estimated: no index with it is given.",
 	physio.CautionLowPaCO2:       "PaCO2 is calculated from pH and HCO3: the measured one is wanted.",
 	physio.CautionPlateau:        "plateau pressure above 30 cmH2O.",
+	physio.CautionShort:          "PaCO2 is above what the metabolic acidosis needs: ventilation does not match the need.",
+	physio.CautionDriving:        "driving pressure above 15 cmH2O.",
 	physio.CautionVT:             "VT above 8 mL/kg predicted weight.",
 	physio.CautionAltitudeUnset:  "sea level was taken: at altitude a lower PaO2 is expected (house altitude ...).",
 }
@@ -135,6 +138,9 @@ const (
 func (c *composer) addCautions(r *reply.Reply) {
 	major, minor := 0, 0
 	for _, caution := range c.a.Cautions {
+		if c.asks(caution.Code) {
+			continue // the question says the same
+		}
 		text := "Caution: " + c.cautionSentence(caution.Code)
 		switch {
 		case caution.Severity == physio.Major && major < majorShown:
@@ -147,9 +153,27 @@ func (c *composer) addCautions(r *reply.Reply) {
 	}
 }
 
+// asks says that the question of this answer is about what a caution says.
+func (c *composer) asks(code physio.CautionCode) bool {
+	if c.question == nil {
+		return false
+	}
+	switch shorthand.QuestionCode(c.question.id) {
+	case shorthand.AskHCO3Fit, shorthand.AskBEFit:
+		return code == physio.CautionFit
+	case shorthand.AskCeiling:
+		return code == physio.CautionAboveAlveolar
+	case shorthand.AskSatFit:
+		return code == physio.CautionSaturation
+	}
+	return false
+}
+
 // worthSaying drops what the body of the answer already says.
 func (c *composer) worthSaying(code physio.CautionCode) bool {
 	switch code {
+	case physio.CautionShort:
+		return false
 	case physio.CautionEstimated:
 		return c.a.Oxygenation.Efficiency != physio.EfficiencyUnknown
 	case physio.CautionAltitudeUnset:

@@ -97,7 +97,7 @@ func (sc *scene) critical() {
 		add(PaCO2, limits.PaCO2High > 0 && p > limits.PaCO2High)
 	}
 	if p, ok := sc.v.Get(PaO2); ok && a.Blood == Arterial {
-		add(PaO2, p < limits.PaO2Low && !a.Oxygenation.ExpectedHere)
+		add(PaO2, p < limits.PaO2Low && !a.Oxygenation.ExpectedHere && !sc.venousLooking)
 	}
 }
 

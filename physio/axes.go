@@ -178,7 +178,25 @@ func (sc *scene) scale() {
 		}
 		o.Scale, o.Borderline = degree(o.Saturation.Value, cuts), crossesAny(o.Saturation, cuts)
 	}
+	// Where haemoglobin carries something else, or the sample does not follow
+	// the curve, a PaO2 on its scale is no comfort: the measured saturation is.
+	if s, ok := sc.v.Get(SaO2); ok && sc.lungO2 && !newborn && sc.saturationMismatch() {
+		o.Scale = worse(o.Scale, degree(s, [3]float64{satAdequate, satMild, satModerate}))
+	}
+	if sc.aboveAlveolar() {
+		o.Scale, o.Borderline = DegreeUnknown, false
+	}
 	o.Level = o.Scale
+}
+
+// worse gives the worse of two degrees.
+func worse(a, b Degree) Degree {
+	for _, d := range []Degree{DegreeSevere, DegreeModerate, DegreeMild} {
+		if a == d || b == d {
+			return d
+		}
+	}
+	return a
 }
 
 func degree(v float64, cuts [3]float64) Degree {
@@ -207,7 +225,7 @@ func crossesAny(iv Interval, cuts [3]float64) bool {
 func (sc *scene) againstTarget() {
 	o := &sc.a.Oxygenation
 	o.Target = sc.set.Target
-	if o.Target == nil || o.Saturation.Value == 0 {
+	if o.Target == nil || o.Saturation.Value == 0 || o.Scale == DegreeUnknown {
 		return
 	}
 	s := whole(o.Saturation.Value)

@@ -58,6 +58,8 @@ const (
 	CautionLowPaCO2       CautionCode = "paco2_calculated"
 	CautionPlateau        CautionCode = "plateau_above_30"
 	CautionVT             CautionCode = "vt_above_8"
+	CautionShort          CautionCode = "short_for_need"
+	CautionDriving        CautionCode = "driving_pressure_above_15"
 	CautionAltitudeUnset  CautionCode = "altitude_not_set"
 )
 
@@ -79,7 +81,7 @@ var triggers = []trigger{
 	{CautionSampleDoubt, Major, func(sc *scene) bool { return sc.a.Blood == BloodUncertain }, nil},
 	{CautionFit, Major, func(sc *scene) bool { return sc.a.Fit.Grade == FitReject }, nil},
 	{CautionAboveAlveolar, Major, (*scene).aboveAlveolar, nil},
-	{CautionVenousLikely, Major, (*scene).venousLikely, nil},
+	{CautionVenousLikely, Major, func(sc *scene) bool { return sc.venousLooking }, nil},
 	{CautionVenousPossible, Major, (*scene).venousPossible, []CautionCode{CautionVenousLikely}},
 	{CautionDyshaem, Major, (*scene).dyshaemoglobinLikely, nil},
 	{CautionSaturation, Major, (*scene).saturationMismatch, []CautionCode{CautionDyshaem, CautionVenousLikely}},
@@ -95,6 +97,7 @@ var triggers = []trigger{
 	{CautionCapillary, Major, func(sc *scene) bool { return sc.a.Blood == Capillary && sc.s.Site != Earlobe }, nil},
 	{CautionHeliox, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(Heliox) }, nil},
 	{CautionNotSteady, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(JustChanged) }, nil},
+	{CautionShort, Minor, func(sc *scene) bool { return sc.a.Ventilation.Level == LevelShortForNeed }, nil},
 	{CautionEarlobe, Minor, func(sc *scene) bool { return sc.a.Blood == Capillary && sc.s.Site == Earlobe }, nil},
 	{CautionHFOV, Minor, func(sc *scene) bool { return sc.s.Mode == HFOV || sc.s.Mode == HFJV }, nil},
 	{CautionFloor, Minor, func(sc *scene) bool { return sc.a.Ventilation.Floor }, nil},
@@ -105,6 +108,7 @@ var triggers = []trigger{
 	{CautionRetainer, Minor, (*scene).retainerUnset, []CautionCode{CautionAboveRetainer}},
 	{CautionTemperature, Minor, (*scene).temperatureOff, nil},
 	{CautionPlateau, Minor, func(sc *scene) bool { return sc.v.Val(Pplat) > plateauLimit }, nil},
+	{CautionDriving, Minor, (*scene).drivingHigh, []CautionCode{CautionPlateau}},
 	{CautionVT, Minor, (*scene).largeVT, nil},
 	{CautionConserving, Minor, func(sc *scene) bool {
 		return sc.s.Device == ReservoirCannula || sc.s.Device == PulseDose || sc.s.Circumstance.Has(BledInOxygen)
@@ -165,23 +169,6 @@ func (sc *scene) aboveAlveolar() bool {
 		return aa.High < aaImpossible
 	}
 	return aa.Value < aaImpossible
-}
-
-// venousLikely: the sample's saturation is far below the oximeter's.
-func (sc *scene) venousLikely() bool {
-	oximeter, ok := sc.v.Get(SpO2)
-	if !ok || !sc.a.BloodAssumed || sc.a.Blood != Arterial || sc.dyshaemoglobin() {
-		return false
-	}
-	s, ok := sc.v.Get(SaO2)
-	if !ok {
-		ix, known := sc.a.Index("sao2_calc")
-		if !known {
-			return false
-		}
-		s = ix.Value
-	}
-	return oximeter-s >= venousSatGap && sc.v.Has(PaO2) && sc.v.Val(PaO2) <= venousPaO2+5
 }
 
 // venousPossible: a PO2 that venous blood also has, with nothing to settle it.
@@ -279,7 +266,8 @@ func (sc *scene) aboveRetainer() bool {
 }
 
 func (sc *scene) retainerUnset() bool {
-	return sc.set.Target == nil && sc.retainer() && sc.a.Oxygenation.Saturation.Value > 0
+	acuteOnVentilator := sc.s.Device == Ventilator && sc.a.Triple.HCO3 <= raisedHCO3 && !sc.s.Circumstance.Has(COPD)
+	return sc.set.Target == nil && sc.a.Fit.Grade != FitReject && sc.retainer() && !acuteOnVentilator && sc.a.Oxygenation.Saturation.Value > 0
 }
 
 // hidden: a good saturation on added oxygen beside a high CO2 that oxygen does
@@ -304,6 +292,11 @@ func (sc *scene) oximeterNearTarget() bool {
 func (sc *scene) temperatureOff() bool {
 	t, ok := sc.v.Get(Temp)
 	return ok && abs(t-bodyTemp) >= temperatureSaid && sc.a.Blood != NoBlood
+}
+
+func (sc *scene) drivingHigh() bool {
+	ix, ok := sc.a.Index("driving_pressure")
+	return ok && ix.Value > drivingLimit
 }
 
 func (sc *scene) largeVT() bool {

@@ -15,7 +15,7 @@ var rules = map[string]Rule{
 	"hco3_calc":              {"HCO3 = 0.0306 x PaCO2 x 10^(pH - 6.10)", "within 6 % of the printed one", "Henderson-Hasselbalch; constants as in Baillie 2008"},
 	"sbe":                    {"SBE = 0.9287 x (HCO3 - 24.4 + 14.83 x (pH - 7.40))", "-2 to 2 mmol/L", "Van Slyke equation, Siggaard-Andersen 1977"},
 	"pao2_alveolar":          {"PAO2 = FiO2 x (PB - 47) - PaCO2 x (FiO2 + (1 - FiO2)/0.8)", "", "Fenn, Rahn and Otis 1946"},
-	"aa":                     {"A-a = PAO2 - PaO2", "expected on air: 2.5 + 0.21 x age to age/4 + 4", "Mellemgaard 1966; the second line is common practice"},
+	"aa":                     {"A-a = PAO2 - PaO2", "on air 2.5 + 0.21 x age to age/4 + 4; no band holds on oxygen", "Mellemgaard 1966; the second line is common practice"},
 	"a_over_a":               {"a/A = PaO2 / PAO2", "0.75 or more efficient; on oxygen below 0.35 poor, on air below 0.5 poor (our bands)", "Gilbert and Keighley 1974"},
 	"resp_index":             {"(PAO2 - PaO2) / PaO2", "0.33 is a/A 0.75", "Goldfarb 1975, from memory"},
 	"pf":                     {"P/F = PaO2 / FiO2", "300 or below reduced, 200 or below poor, on oxygen with PaCO2 up to 50", "Berlin definition 2012"},

@@ -10,6 +10,9 @@ type scene struct {
 	// lung is true when the sample may speak of the lung: arterial blood, or
 	// capillary blood for CO2, and no circuit that exchanges gas for it.
 	lungCO2, lungO2 bool
+	// venousLooking is true when the sample's saturation is so far below the
+	// oximeter's that an oxygenation verdict must wait.
+	venousLooking bool
 }
 
 func newScene(s Sample, set Setting) *scene {
@@ -21,6 +24,9 @@ func newScene(s Sample, set Setting) *scene {
 	sc.oxygen()
 	sc.volumes()
 	sc.triple()
+	if sc.venousLooking = sc.looksVenous(); sc.venousLooking {
+		sc.lungO2 = false
+	}
 	return sc
 }
 
@@ -30,6 +36,9 @@ func (sc *scene) population() {
 		p = sc.set.Population
 	}
 	age, known := sc.v.Get(Age)
+	if p == PopulationUnstated && !known && sc.newbornSample() {
+		p = Newborn
+	}
 	if p == PopulationUnstated || p == Adult {
 		p = Adult
 		if known && age < childBelow {
@@ -44,6 +53,15 @@ func (sc *scene) population() {
 		}
 	}
 	sc.a.Population = p
+}
+
+// newbornSample says that only newborns are sampled there.
+func (sc *scene) newbornSample() bool {
+	switch sc.s.Site {
+	case Heel, UmbilicalArt, UmbilicalVein, CordArterySite, CordVeinSite:
+		return true
+	}
+	return sc.s.Blood == Cord
 }
 
 func (sc *scene) blood() {
@@ -128,6 +146,20 @@ func (sc *scene) volumes() {
 
 func (sc *scene) adultSized() bool {
 	return (sc.a.Population == Adult || sc.a.Population == Pregnant) && sc.v.Val(Height) >= pbwFromHeight
+}
+
+// looksVenous: a sample of unstated blood with a low PO2, whose saturation,
+// measured or by the curve, is far below the oximeter's.
+func (sc *scene) looksVenous() bool {
+	v := &sc.v
+	if !sc.a.BloodAssumed || !v.Has(SpO2, PaO2) || v.Val(PaO2) > venousPaO2+5 || sc.dyshaemoglobin() {
+		return false
+	}
+	s, ok := v.Get(SaO2)
+	if !ok {
+		s = sc.saturationOfPaO2().Value
+	}
+	return v.Val(SpO2)-s >= venousSatGap
 }
 
 // triple completes pH, PaCO2 and HCO3 from each other and checks their fit.

@@ -25,37 +25,40 @@ var lead = regexp.MustCompile(`^[\s:,;>*_~"'(.!-]*(?:@?galeward\b|/gas\b|@[a-z][
 var houseForms = []struct {
 	typed *regexp.Regexp
 	means string
+	// plain forms are commands of their own; the others are sentences, which
+	// are read back before anything changes.
+	plain bool
 }{
-	{regexp.MustCompile(`^set\s+(?:the\s+|our\s+|channel\s+)?(.+)$`), "$1"},
-	{regexp.MustCompile(`^(?:our|the|my)\s+(?:value\s+)?order\s+(?:is|here is|will be)[:\s]+(.+)$`), "order $1"},
-	{regexp.MustCompile(`^we\s+(?:type|use|read|give|write|report)\s+((?:ph|pao2|po2|o2|paco2|pco2|co2)\b.+)$`), "order $1"},
-	{regexp.MustCompile(`^(?:our|the)\s+units?\s+(?:is|are)\s+(.+)$`), "units $1"},
-	{regexp.MustCompile(`^we\s+(?:use|work in|report in|are in|type in|read in)\s+(kpa|mmhg|mm hg|torr)\b.*$`), "units $1"},
-	{regexp.MustCompile(`^(?:we are|we're|were|we sit|this unit is|our hospital is|hospital is|this hospital is|i am|our unit is)\s+(?:at|up at)\s+(?:an altitude of |an elevation of |about )?([\d., ]+)\s*(m|metres|meters|ft|feet)\b.*$`), "altitude $1 $2"},
-	{regexp.MustCompile(`^(?:our|the)\s+(?:altitude|elevation)\s+(?:is|here is)\s+(.+)$`), "altitude $1"},
-	{regexp.MustCompile(`^(?:altitude|elevation)\s+([\d., ]+\s*(?:m|metres|meters|ft|feet)?)$`), "altitude $1"},
-	{regexp.MustCompile(`^(?:our|the)\s+(?:barometric pressure|pb|barometer)\s+(?:is|here is)\s+(.+)$`), "pressure $1"},
-	{regexp.MustCompile(`^when\s+(?:we|i|people here|they)\s+(?:say|type|write)\s+['"]?(.+?)['"]?,?\s+(?:we|i|it|they)\s+means?\s+['"]?(.+?)['"]?[.!]?$`), "word $1 = $2"},
-	{regexp.MustCompile(`^teach\s+(.+)$`), "word $1"},
-	{regexp.MustCompile(`^['"]?([a-z][a-z0-9 ]{0,20}?)['"]?\s+(?:means|stands for|is short for)\s+['"]?([a-z0-9 ]{2,30}?)['"]?(?:\s+here|\s+in this channel)?$`), "word $1 = $2"},
-	{regexp.MustCompile(`^(?:our|the)\s+(?:sat(?:uration)?|spo2|o2)?\s*targets?\s+(?:is|are)\s+(.+)$`), "target $1"},
-	{regexp.MustCompile(`^units\s+(.+)$`), "units $1"},
-	{regexp.MustCompile(`^order\s+((?:is\s+)?(?:ph|pao2|po2|o2|paco2|pco2|co2)\b.+)$`), "order $1"},
+	{regexp.MustCompile(`^set\s+(?:the\s+|our\s+|channel\s+)?(.+)$`), "$1", true},
+	{regexp.MustCompile(`^(?:our|the|my)\s+(?:value\s+)?order\s+(?:is|here is|will be)[:\s]+(.+)$`), "order $1", false},
+	{regexp.MustCompile(`^we\s+(?:type|use|read|give|write|report)\s+((?:ph|pao2|po2|o2|paco2|pco2|co2)\b.+)$`), "order $1", false},
+	{regexp.MustCompile(`^(?:our|the)\s+units?\s+(?:is|are)\s+(.+)$`), "units $1", false},
+	{regexp.MustCompile(`^we\s+(?:use|work in|report in|are in|type in|read in)\s+(kpa|mmhg|mm hg|torr)\b.*$`), "units $1", false},
+	{regexp.MustCompile(`^(?:we are|we're|were|we sit|this unit is|our hospital is|hospital is|this hospital is|i am|our unit is)\s+(?:at|up at)\s+(?:an altitude of |an elevation of |about )?([\d., ]+)\s*(m|metres|meters|ft|feet)\b.*$`), "altitude $1 $2", false},
+	{regexp.MustCompile(`^(?:our|the)\s+(?:altitude|elevation)\s+(?:is|here is)\s+(.+)$`), "altitude $1", false},
+	{regexp.MustCompile(`^(?:altitude|elevation)\s+([\d., ]+\s*(?:m|metres|meters|ft|feet)?)$`), "altitude $1", false},
+	{regexp.MustCompile(`^(?:our|the)\s+(?:barometric pressure|pb|barometer)\s+(?:is|here is)\s+(.+)$`), "pressure $1", false},
+	{regexp.MustCompile(`^when\s+(?:we|i|people here|they)\s+(?:say|type|write)\s+['"]?(.+?)['"]?,?\s+(?:we|i|it|they)\s+means?\s+['"]?(.+?)['"]?[.!]?$`), "word $1 = $2", false},
+	{regexp.MustCompile(`^teach\s+(.+)$`), "word $1", true},
+	{regexp.MustCompile(`^['"]?([a-z][a-z0-9 ]{0,20}?)['"]?\s+(?:means|stands for|is short for)\s+['"]?([a-z0-9 ]{2,30}?)['"]?(?:\s+here|\s+in this channel)?$`), "word $1 = $2", false},
+	{regexp.MustCompile(`^(?:our|the)\s+(?:sat(?:uration)?|spo2|o2)?\s*targets?\s+(?:is|are)\s+(.+)$`), "target $1", false},
+	{regexp.MustCompile(`^units\s+(.+)$`), "units $1", true},
+	{regexp.MustCompile(`^order\s+((?:is\s+)?(?:ph|pao2|po2|o2|paco2|pco2|co2)\b.+)$`), "order $1", true},
 }
 
 // houseRule gives the argument of a sentence that sets a rule of the channel.
-func houseRule(s string) (string, bool) {
+func houseRule(s string) (argument string, sentence, ok bool) {
 	s = strings.Join(strings.Fields(strings.TrimRight(s, " .!?")), " ")
 	if len(s) > 300 {
-		return "", false
+		return "", false, false
 	}
 	for _, f := range houseForms {
 		if m := f.typed.FindStringSubmatchIndex(s); m != nil {
 			arg := string(f.typed.ExpandString(nil, f.means, s, m))
-			return clean(strings.Replace(arg, "order is ", "order ", 1)), true
+			return clean(strings.Replace(arg, "order is ", "order ", 1)), !f.plain, true
 		}
 	}
-	return "", false
+	return "", false, false
 }
 
 // clean keeps letters, digits and the signs that a rule needs, in lower case

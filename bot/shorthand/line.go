@@ -103,6 +103,9 @@ type Line struct {
 	// Argument holds the words behind a command (house, why, help, forget),
 	// in lower case, cleaned of control and markup characters.
 	Argument string
+	// Sentence is true when a house rule was said in a sentence, not set with
+	// the command's own words: it is read back before anything changes.
+	Sentence bool
 	// Gases holds one entry for a usual line, several for a series or a list.
 	Gases []Gas
 	// List is true when the gases are of several beds, false for a series.

@@ -54,8 +54,8 @@ func (p *parser) parse() Line {
 	if c, ok := p.released(); ok {
 		return Line{Kind: Released, Picked: c}
 	}
-	if arg, ok := houseRule(p.typed[len(lead.FindString(p.typed)):]); ok && (p.h.Addressed || !strings.HasPrefix(arg, "word ")) {
-		return Line{Kind: Command, Intent: IntentHouse, Argument: arg}
+	if arg, sentence, ok := houseRule(p.typed[len(lead.FindString(p.typed)):]); ok && (p.h.Addressed || !strings.HasPrefix(arg, "word ")) {
+		return Line{Kind: Command, Intent: IntentHouse, Argument: arg, Sentence: sentence}
 	}
 	p.line.Intent, p.rest = command(p.typed)
 	p.line.Declined = declined(p.typed)

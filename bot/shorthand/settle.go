@@ -326,9 +326,38 @@ func (r *reader) finish() {
 		r.ask(Question{Code: AskTempCorr, Quantity: physio.Temp, Value: v, Choices: []Choice{
 			{Word: "37 C"}, {Word: "corrected", Circumstance: physio.TempCorrected}}})
 	}
+	r.guard()
 	sort.SliceStable(r.g.Questions, func(a, b int) bool {
 		return askRank[r.g.Questions[a].Code] < askRank[r.g.Questions[b].Code]
 	})
+}
+
+// guard is the last wall: whatever way a number came, an impossible value is
+// asked about and not kept, and no choice offers one.
+func (r *reader) guard() {
+	s := r.sample()
+	copied := s.Values
+	copied.Each(func(q physio.Quantity, v float64) {
+		if !q.Possible(v) {
+			s.Drop(q)
+			r.ask(*askImpossible(q, v, number(v)))
+		}
+	})
+	for i := range r.g.Questions {
+		r.g.Questions[i].Choices = possibleChoices(r.g.Questions[i].Choices)
+	}
+}
+
+func possibleChoices(all []Choice) []Choice {
+	kept := all[:0:0]
+	for _, c := range all {
+		good := true
+		c.Set.Each(func(q physio.Quantity, v float64) { good = good && q.Possible(v) })
+		if good {
+			kept = append(kept, c)
+		}
+	}
+	return kept
 }
 
 // venousDoubt asks arterial or venous: when the words leave it open, when the

@@ -3,7 +3,6 @@ package main
 import (
 	"os"
 	"path/filepath"
-	"strings"
 	"testing"
 
 	"github.com/rogpeppe/go-internal/testscript"
@@ -12,11 +11,6 @@ import (
 // TestMain lets the scripts run the real main by starting the test binary
 // under the name galeward.
 func TestMain(m *testing.M) {
-	for _, v := range os.Environ() { // a setting of the tester's own must not count
-		if name, _, _ := strings.Cut(v, "="); strings.HasPrefix(name, "GALEWARD_") {
-			os.Unsetenv(name)
-		}
-	}
 	testscript.Main(tidy{m}, map[string]func(){"galeward": main})
 }
 

@@ -47,20 +47,20 @@ func twoNodes(t *testing.T) (a, b *storetest.Server) {
 	return nil, nil
 }
 
-// TestSlotMovesWhileInUse takes the channel's slot from one node to the other
-// by hand, as resharding does, and keeps calling in each state of it.
-func TestSlotMovesWhileInUse(t *testing.T) {
-	t.Parallel() // a cluster takes seconds to form
-	a, b := twoNodes(t)
-	slot := strings.TrimPrefix(a.Raw("CLUSTER KEYSLOT {"+room+"}"), ":")
-	aID, bID := a.Ask("CLUSTER MYID"), b.Ask("CLUSTER MYID")
-	o := on(a)
-	o.Cluster = true
-	plain := open(t, o)
-	o.Replicas = 1 // there is none: a durable write is stored and said to be on one node
-	strict := open(t, o)
+// ok gives a command that has to succeed.
+func ok(t *testing.T, s *storetest.Server, command string) {
+	t.Helper()
+	if r := s.Raw(command); r != "+OK" {
+		t.Fatalf("%s: %s", command, r)
+	}
+}
+
+// inUse writes and reads the house by two stores: one plain, and one that asks
+// for a replica, of which there is none: its writes are stored and said to be
+// on one node only.
+func inUse(t *testing.T, plain, strict *Store) func(state string) {
 	step := 0
-	use := func(state string) {
+	return func(state string) {
 		t.Helper()
 		step++
 		tag := strconv.Itoa(step)
@@ -72,26 +72,35 @@ func TestSlotMovesWhileInUse(t *testing.T) {
 		}
 		holds(t, strict, "house", state, "d"+tag)
 	}
-	ok := func(s *storetest.Server, command string) {
-		t.Helper()
-		if r := s.Raw(command); r != "+OK" {
-			t.Fatalf("%s: %s", command, r)
-		}
-	}
+}
+
+// TestSlotMovesWhileInUse takes the channel's slot from one node to the other
+// by hand, as resharding does, and keeps calling in each state of it.
+func TestSlotMovesWhileInUse(t *testing.T) {
+	t.Parallel() // a cluster takes seconds to form
+	a, b := twoNodes(t)
+	slot := strings.TrimPrefix(a.Raw("CLUSTER KEYSLOT {"+room+"}"), ":")
+	aID, bID := a.Ask("CLUSTER MYID"), b.Ask("CLUSTER MYID")
+	o := on(a)
+	o.Cluster = true
+	plain := open(t, o)
+	o.Replicas = 1
+	use := inUse(t, plain, open(t, o))
 	key := newCall("galeward:", room, []store.Op{{Key: "house"}}).keys[0]
+
 	use("at home")
-	ok(b, "CLUSTER SETSLOT "+slot+" IMPORTING "+aID)
-	ok(a, "CLUSTER SETSLOT "+slot+" MIGRATING "+bID)
+	ok(t, b, "CLUSTER SETSLOT "+slot+" IMPORTING "+aID)
+	ok(t, a, "CLUSTER SETSLOT "+slot+" MIGRATING "+bID)
 	use("about to go")
-	ok(a, "MIGRATE 127.0.0.1 "+b.Port()+" "+key+" 0 1000")
+	ok(t, a, "MIGRATE 127.0.0.1 "+b.Port()+" "+key+" 0 1000")
 	use("on the way")
 	var settle sync.WaitGroup
 	settle.Go(func() {
-		time.Sleep(50 * time.Millisecond)
+		time.Sleep(40 * time.Millisecond)
 		b.Raw("CLUSTER SETSLOT " + slot + " NODE " + bID)
 		a.Raw("CLUSTER SETSLOT " + slot + " NODE " + bID)
 	})
-	must(t, plain, claim("event/1", "mine"), store.Op{Key: "house"}) // two keys, turned away until the slot has settled
+	must(t, plain, claim("event/1", "mine"), store.Op{Key: "house"}) // two keys: turned away until the slot has settled
 	settle.Wait()
 	use("settled")
 	if r := b.Raw("EXISTS " + key); r != ":1" {

@@ -8,12 +8,21 @@ set -euo pipefail
 cd "$(dirname "$0")/.."
 fuzz_seconds="${1:-5}"
 scratch="$(mktemp -d)"
-trap 'rm -rf "$scratch"' EXIT
+current=start
+finish() {
+	code=$?
+	rm -rf "$scratch"
+	[ "$code" = 0 ] || printf '\nFAILED at: %s\n' "$current" >&2
+}
+trap finish EXIT
 export GOFLAGS="${GOFLAGS:-} -mod=readonly"
 
-step() { printf '\n== %s (%s s)\n' "$1" "$SECONDS"; }
+step() {
+	current="$1"
+	printf '\n== %s (%s s)\n' "$1" "$SECONDS"
+}
 fail() {
-	printf '\nFAILED: %s\n' "$1" >&2
+	printf '%s\n' "$1" >&2
 	exit 1
 }
 

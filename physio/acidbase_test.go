@@ -187,3 +187,48 @@ func TestBloodFormsByHand(t *testing.T) {
 	}
 	near(t, "standard bicarbonate", float64(sbc), 16.9, 1e-9)
 }
+
+// The bands of the rules: Winters +-2 (Albert, Dell and Winters 1967), 40 + SBE
+// +-3 (Schlichtig 1998), 0.7 x HCO3 + 20 +-5 and acute HCO3 +-2 (common
+// practice).
+func TestBandsOfTheRules(t *testing.T) {
+	bySBE, winters, err := AcidosisPaCO2(Metabolic{HCO3: 10, SBE: -15})
+	if err != nil || bySBE != (Interval{25, 22, 28}) || winters != (Interval{23, 21, 25}) {
+		t.Errorf("acidosis: %v, %v, %v", bySBE, winters, err)
+	}
+	byHCO3, bySBE, err := AlkalosisPaCO2(Metabolic{HCO3: 40, SBE: 15})
+	if err != nil || bySBE != (Interval{49, 46, 52}) {
+		t.Errorf("alkalosis: %v, %v", bySBE, err)
+	}
+	near(t, "alkalosis by HCO3", byHCO3.Value, 48, 1e-9)
+	near(t, "its band", byHCO3.High-byHCO3.Value, 5, 1e-9)
+	acute, err := AcuteBicarbonate(60, Anchor{})
+	if err != nil || acute != (Interval{26, 24, 28}) {
+		t.Errorf("acute: %v, %v", acute, err)
+	}
+	for l, want := range map[Line]float64{LinePlusFifteen: 25, LineAlkalosis: 27, LineWinters: 23} {
+		got, err := l.At(10)
+		if err != nil {
+			t.Fatal(err)
+		}
+		near(t, "line", got, want, 1e-9)
+	}
+}
+
+// pH 7.20 at 33 C: 7.20 + 4 x (0.0147 - 0.0013) (CLSI C46-A2).
+func TestAcidBloodIsCorrectedLess(t *testing.T) {
+	got, err := PHAtTemp(7.20, 33)
+	if err != nil {
+		t.Fatal(err)
+	}
+	near(t, "pH", float64(got), 7.2536, 1e-9)
+}
+
+// 46 mg/dL of ethanol are 10 mmol/L by its molar mass of 46 g/mol.
+func TestEthanolByMolarMass(t *testing.T) {
+	near(t, "ethanol", float64(EthanolMgDL(46)), 10, 1e-9)
+	with, err := Osmolality(Solutes{Na: 140, Glucose: 5, Urea: 5, Ethanol: EthanolMgDL(46)})
+	if err != nil || with != 300 {
+		t.Errorf("Osmolality = %v, %v", with, err)
+	}
+}

@@ -192,3 +192,29 @@ func TestBandsOfDevicesByHand(t *testing.T) {
 		t.Error("6.5 L/min by cannula passes")
 	}
 }
+
+// At 4 L/min the rules in use give 36, 37 and 33 % (common practice; Frat 2015).
+func TestCannulaRulesPart(t *testing.T) {
+	for rule, want := range map[CannulaRule]float64{CannulaUsual: 0.36, CannulaAir: 0.37, CannulaGlobal: 0.33} {
+		got, err := rule.FiO2(4)
+		if err != nil {
+			t.Fatal(err)
+		}
+		near(t, "rule", float64(got), want, 1e-9)
+	}
+	fio2, _, _ := InspiredOxygen(OxygenSupply{Device: Cannula, Flow: 4})
+	near(t, "spread", fio2.High-fio2.Value, 0.08, 1e-9)
+}
+
+// Full American cylinders at 2200 psi hold 350, 625, 5300, 6900 and 3450 litres
+// (dealers' tables, common practice).
+func TestFullCylinders(t *testing.T) {
+	for letter, want := range map[string]float64{"D": 350, "E": 625, "G": 5300, "H": 6900, "K": 6900, "M": 3450} {
+		factor, ok := CylinderFactorUS(letter)
+		litres, err := Cylinder{LitresPerPSI: factor, PSI: 2200}.Litres()
+		if !ok || err != nil {
+			t.Fatal(letter, ok, err)
+		}
+		near(t, letter, litres, want, 0.02*want)
+	}
+}

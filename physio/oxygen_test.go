@@ -69,7 +69,8 @@ func TestPressureChoice(t *testing.T) {
 		{PressureKnown{House: 650, Altitude: 1500}, 650, PressureHouse},
 		{PressureKnown{Altitude: 1500}, 641, PressureAltitude}, // West 1996
 		{PressureKnown{Altitude: -400}, 795, PressureAltitude}, // Dead Sea, about 800 in common practice
-		{PressureKnown{Altitude: 20}, 760, PressureAssumed},
+		{PressureKnown{Altitude: 49}, 760, PressureAssumed},
+		{PressureKnown{Altitude: 51}, 755, PressureAltitude},
 		{PressureKnown{}, 760, PressureAssumed},
 	} {
 		got, source, err := BarometricPressure(c.known)
@@ -142,12 +143,15 @@ func TestHealthyPaO2(t *testing.T) {
 		t.Fatal(err)
 	}
 	near(t, "on 40 %", on40.Value, 151.8, 0.1)
+	near(t, "at best", on40.High, 0.82*202.4, 0.1)
 	air, _ := HealthyPaO2(AlveolarGas{FiO2: 0.21, PB: 760, PaCO2: 40}, 60)
 	near(t, "on air", air.Low, 101.83-19, 0.001)
 	unknown, _ := HealthyPaO2(AlveolarGas{FiO2: 0.21, PB: 760, PaCO2: 40}, 0)
 	if unknown.Low >= air.Low || unknown.High <= air.High {
 		t.Errorf("unknown age %v does not contain 60 years %v", unknown, air)
 	}
+	near(t, "unknown age, as at 70", unknown.Low, 101.83-21.5, 0.001)
+	near(t, "unknown age, as at 20", unknown.High, 101.83-6.7, 0.001)
 }
 
 // S/F above SpO2 97 % and the saturation index are not defined; ROX is.

@@ -100,6 +100,17 @@ func TestAssumedDifferenceMovesTheShunt(t *testing.T) {
 	if err != nil || icu <= healthy {
 		t.Errorf("shunt %v at 3.5, %v at 5, %v", icu, healthy, err)
 	}
+	// 3.5 with contents of 18.088 and 15.936 is 38 % (college respiratory-care
+	// problem); 100 mmHg on pure oxygen are 5 % by the rule of thumb.
+	s, err := EstimatedShunt(Contents{Capillary: 18.088, Arterial: 15.936}, DifferenceICU)
+	if err != nil {
+		t.Fatal(err)
+	}
+	near(t, "estimated", s.Percent(), 38.1, 0.1)
+	rule, err := ShuntRuleOfThumb(100)
+	if err != nil || rule.Percent() != 5 {
+		t.Errorf("rule of thumb: %v, %v", rule, err)
+	}
 	g.SaO2 = 0.90 // measured below the curve: more shunt still
 	measured, err := ShuntFromGas(g)
 	if err != nil || measured <= icu {

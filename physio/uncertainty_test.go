@@ -90,3 +90,27 @@ func TestAllowableError(t *testing.T) {
 		}
 	}
 }
+
+// The spreads of bicarbonate and base excess are what those of pH and PaCO2
+// make of them: at pH 7.40 and PaCO2 40 within a tenth.
+func TestDerivedSpreadsFollowFromTheMeasured(t *testing.T) {
+	in := []Input{Measured(PHq, 7.40), Measured(PaCO2, 40)}
+	hco3 := propagate(func(x []float64) float64 { return bicarbonate(x[0], x[1]) }, in)
+	direct := Measured(HCO3, hco3.Value)
+	near(t, "bicarbonate", (direct.High-direct.Low)/(hco3.High-hco3.Low), 1, 0.1)
+	if std := Measured(StdHCO3, hco3.Value); std != direct {
+		t.Errorf("standard bicarbonate spreads by %v, the actual one by %v", std, direct)
+	}
+	sbe := propagate(func(x []float64) float64 { return standardBaseExcess(x[0], bicarbonate(x[0], x[1])) }, in)
+	be := Measured(BE, sbe.Value)
+	near(t, "base excess", (be.High-be.Low)/(sbe.High-sbe.Low), 1, 0.15)
+}
+
+// A pulse oximeter is within 2 points for two readings in three (makers'
+// statement), a co-oximeter within half a point (common practice).
+func TestSaturationSpreads(t *testing.T) {
+	for q, sd := range map[Quantity]float64{SpO2: 0.02, SpO2Pre: 0.02, SpO2Post: 0.02, SaO2: 0.005} {
+		in := Measured(q, 0.90)
+		near(t, q.Key(), in.Value-in.Low, 1.96*sd, 1e-9)
+	}
+}

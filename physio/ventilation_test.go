@@ -144,7 +144,8 @@ func TestMechanicsOfOneBreath(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
-	near(t, "surrogate", surrogate, power, 3)
+	near(t, "surrogate", surrogate, 22.5, 1e-9)
+	near(t, "surrogate against power", surrogate, power, 3)
 	pressure, err := PowerPressureControl(b, PressureSteps{PEEP: 10, AbovePEEP: 15})
 	if err != nil {
 		t.Fatal(err)

@@ -49,53 +49,50 @@ var derivations = []derivation{
 		return standardBaseExcess(v[0], bicarbonate(v[0], v[1]))
 	}, always},
 	{"pao2_alveolar", "mmHg", []Quantity{FiO2, PB, PaCO2}, func(v []float64) float64 { return aboutPA(v[0], v[1], v[2]) }, lungCO2},
-	{"aa", "mmHg", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return aboutPA(v[0], v[1], v[2]) - v[3] }, lungO2},
-	{"a_over_a", "", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return v[3] / aboutPA(v[0], v[1], v[2]) }, lungO2},
-	{"resp_index", "", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return aboutPA(v[0], v[1], v[2])/v[3] - 1 }, lungO2},
-	{"pf", "mmHg", []Quantity{PaO2, FiO2}, func(v []float64) float64 { return v[0] / v[1] }, lungO2},
-	{"pf_altitude_corrected", "mmHg", []Quantity{PaO2, FiO2, PB}, func(v []float64) float64 { return v[0] / v[1] * v[2] / 760 },
+	{"aa", "mmHg", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return alveolarArterial(aboutPA(v[0], v[1], v[2]), v[3]) }, lungO2},
+	{"a_over_a", "", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return arterialAlveolarRatio(aboutPA(v[0], v[1], v[2]), v[3]) }, lungO2},
+	{"resp_index", "", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return respiratoryIndex(aboutPA(v[0], v[1], v[2]), v[3]) }, lungO2},
+	{"pf", "mmHg", []Quantity{PaO2, FiO2}, func(v []float64) float64 { return pfRatio(v[0], v[1]) }, lungO2},
+	{"pf_altitude_corrected", "mmHg", []Quantity{PaO2, FiO2, PB}, func(v []float64) float64 { return pfAtAltitude(pfRatio(v[0], v[1]), v[2]) },
 		func(sc *scene) bool { return sc.lungO2 && sc.a.Altitude >= altitudeShiftFrom }},
-	{"sf", "", []Quantity{SpO2, FiO2}, func(v []float64) float64 { return 100 * v[0] / v[1] }, ratioCurve},
-	{"rox", "", []Quantity{SpO2, FiO2, RR}, func(v []float64) float64 { return 100 * v[0] / v[1] / v[2] },
+	{"sf", "", []Quantity{SpO2, FiO2}, func(v []float64) float64 { return sfRatio(v[0], v[1]) }, ratioCurve},
+	{"rox", "", []Quantity{SpO2, FiO2, RR}, func(v []float64) float64 { return rox(v[0], v[1], v[2]) },
 		func(sc *scene) bool { return sc.adultRespiration() && !sc.s.Circumstance.Has(ECMO) }},
-	{"oi", "", []Quantity{FiO2, Pmean, PaO2}, func(v []float64) float64 { return 100 * v[0] * v[1] / v[2] }, lungO2},
-	{"osi", "", []Quantity{FiO2, Pmean, SpO2}, func(v []float64) float64 { return v[0] * v[1] / v[2] }, ratioCurve},
-	{"ve_corrected", "L/min", []Quantity{VE, PaCO2}, func(v []float64) float64 { return v[0] * v[1] / 40 }, lungCO2},
-	{"vent_ratio", "", []Quantity{VE, PaCO2, PBW}, func(v []float64) float64 { return 1000 * v[0] * v[1] / (v[2] * 100 * 37.5) },
+	{"oi", "", []Quantity{FiO2, Pmean, PaO2}, func(v []float64) float64 { return oxygenationIndex(v[0], v[1], v[2]) }, lungO2},
+	{"osi", "", []Quantity{SpO2, FiO2, Pmean}, func(v []float64) float64 { return oxygenSaturationIndex(v[0], v[1], v[2]) }, ratioCurve},
+	{"ve_corrected", "L/min", []Quantity{VE, PaCO2}, func(v []float64) float64 { return correctedMinuteVolume(v[0], v[1]) }, lungCO2},
+	{"vent_ratio", "", []Quantity{VE, PaCO2, PBW}, func(v []float64) float64 { return ventilatoryRatio(v[0], v[1], v[2]) },
 		func(sc *scene) bool { return lungCO2(sc) && sc.passive() }},
-	{"vd_vt", "", []Quantity{PaCO2, PeCO2}, func(v []float64) float64 { return (v[0] - v[1]) / v[0] },
+	{"vd_vt", "", []Quantity{PaCO2, PeCO2}, func(v []float64) float64 { return deadSpaceFraction(v[0], v[1]) },
 		func(sc *scene) bool { return lungCO2(sc) && sc.v.Val(PeCO2) < sc.v.Val(PaCO2) }},
-	{"pa_et_gap", "mmHg", []Quantity{PaCO2, EtCO2}, func(v []float64) float64 { return v[0] - v[1] }, lungCO2},
-	{"alveolar_dead_fraction", "", []Quantity{PaCO2, EtCO2}, func(v []float64) float64 { return (v[0] - v[1]) / v[0] },
+	{"pa_et_gap", "mmHg", []Quantity{PaCO2, EtCO2}, func(v []float64) float64 { return endTidalGap(v[0], v[1]) }, lungCO2},
+	{"alveolar_dead_fraction", "", []Quantity{PaCO2, EtCO2}, func(v []float64) float64 { return alveolarDeadFraction(v[0], v[1]) },
 		func(sc *scene) bool { return lungCO2(sc) && sc.v.Val(EtCO2) <= sc.v.Val(PaCO2) }},
-	{"alveolar_vent", "L/min", []Quantity{VT, RR, PBW}, func(v []float64) float64 { return (v[0] - adultDeadSpacePerKg*v[2]) * v[1] / 1000 },
-		func(sc *scene) bool { return sc.adultRespiration() && sc.v.Val(VT) > adultDeadSpacePerKg*sc.v.Val(PBW) }},
+	{"alveolar_vent", "L/min", []Quantity{VT, RR, PBW}, func(v []float64) float64 { return minuteVolume(v[0]-adultDeadSpace*v[2], v[1]) },
+		func(sc *scene) bool { return sc.adultRespiration() && sc.v.Val(VT) > adultDeadSpace*sc.v.Val(PBW) }},
 	{"pbw", "kg", []Quantity{PBW}, func(v []float64) float64 { return v[0] }, always},
 	{"vt_per_pbw", "mL/kg", []Quantity{VT, PBW}, func(v []float64) float64 { return v[0] / v[1] }, always},
 	{"vt_per_weight", "mL/kg", []Quantity{VT, Weight}, func(v []float64) float64 { return v[0] / v[1] },
 		func(sc *scene) bool { p := sc.a.Population; return p == Newborn || p == Preterm || p == Child }},
-	{"driving_pressure", "cmH2O", []Quantity{Pplat, PEEP}, func(v []float64) float64 { return v[0] - v[1] },
+	{"driving_pressure", "cmH2O", []Quantity{Pplat, PEEP}, func(v []float64) float64 { return drivingPressure(v[0], v[1]) },
 		func(sc *scene) bool { return sc.v.Val(Pplat) > sc.v.Val(PEEP) }},
-	{"compliance", "mL/cmH2O", []Quantity{VT, Pplat, PEEP}, func(v []float64) float64 { return v[0] / (v[1] - v[2]) },
+	{"compliance", "mL/cmH2O", []Quantity{VT, Pplat, PEEP}, func(v []float64) float64 { return v[0] / drivingPressure(v[1], v[2]) },
 		func(sc *scene) bool { return sc.v.Val(Pplat) > sc.v.Val(PEEP) }},
 	{"mech_power", "J/min", []Quantity{RR, VT, PIP, Pplat, PEEP}, func(v []float64) float64 {
-		return 0.098 * v[0] * v[1] / 1000 * (v[2] - (v[3]-v[4])/2)
+		in := Inflation{Peak: CmH2O(v[2]), Plateau: CmH2O(v[3]), TotalPEEP: CmH2O(v[4])}
+		return powerVolumeControl(minuteVolume(v[1], v[0]), in)
 	}, func(sc *scene) bool { return sc.v.Val(Pplat) > sc.v.Val(PEEP) && sc.v.Val(PIP) >= sc.v.Val(Pplat) }},
-	{"rsbi", "/min/L", []Quantity{RR, VT}, func(v []float64) float64 { return v[0] / (v[1] / 1000) },
+	{"rsbi", "/min/L", []Quantity{RR, VT}, func(v []float64) float64 { return breathingIndex(v[0], v[1]) },
 		func(sc *scene) bool { return sc.adultRespiration() && sc.spontaneous() }},
-	{"anion_gap", "mmol/L", []Quantity{Na, Cl, HCO3}, func(v []float64) float64 { return v[0] - v[1] - v[2] }, always},
+	{"anion_gap", "mmol/L", []Quantity{Na, Cl, HCO3}, func(v []float64) float64 { return anionGap(v[0], v[1], v[2]) }, always},
 	{"anion_gap_corrected", "mmol/L", []Quantity{Na, Cl, HCO3, Albumin}, func(v []float64) float64 {
-		return v[0] - v[1] - v[2] + 0.25*(albuminUsual-v[3])
+		return anionGap(v[0], v[1], v[2]) + albuminCorrection(v[3], float64(AlbuminTexts))
 	}, always},
 	{"p50", "mmHg", []Quantity{PaO2, SaO2, PHq, PaCO2}, func(v []float64) float64 {
 		shift := CurveShift{PH: PH(v[2]), PaCO2: MmHg(v[3])}
 		return v[0] / po2At(v[1], shift) * po2At(0.5, CurveShift{})
 	}, func(sc *scene) bool { s := sc.v.Val(SaO2); return s >= 0.2 && s <= 0.9 && sc.a.Blood != NoBlood }},
 }
-
-// adultDeadSpacePerKg is the anatomical dead space of an adult, mL/kg
-// predicted weight (Numa and Newth 1996).
-const adultDeadSpacePerKg = 2.2
 
 // adultRespiration says that adult breathing indices hold.
 func (sc *scene) adultRespiration() bool {
@@ -229,7 +226,7 @@ func (sc *scene) bands() {
 		gap, ok = sc.a.Index("anion_gap")
 	}
 	if fall := sc.a.Ranges.Anchor.HCO3 - sc.a.Triple.HCO3; ok && gap.Value >= gapHigh && fall >= deltaSmallestFall {
-		ratio := propagate(func(v []float64) float64 { return (v[0] - gapUsual) / v[1] },
+		ratio := propagate(func(v []float64) float64 { return deltaRatio(v[0]-gapUsual, v[1]) },
 			[]Input{Bounded(gap.Interval), Measured(HCO3, fall)})
 		sc.add("delta_ratio", "", ratio, Na, Cl, HCO3)
 	}
@@ -299,12 +296,7 @@ func (sc *scene) arterialContent() {
 	if !ok {
 		sat = sc.saturationOfPaO2().Value
 	}
-	iv := propagate(func(v []float64) float64 { return functionalContent(v[0], v[2], v[1]) },
+	iv := propagate(func(v []float64) float64 { return BindingFunctional.content(v[0], v[2], v[1]) },
 		[]Input{Measured(Hb, sc.v.Val(Hb)), Measured(PaO2, sc.v.Val(PaO2)), Measured(SaO2, sat)})
 	sc.add("cao2", "mL/dL", iv, Hb, SaO2, PaO2)
 }
-
-// functionalContent is the content of blood, mL/dL, from haemoglobin g/dL,
-// functional saturation and PO2 mmHg: 1.34 per gram with a functional
-// saturation, 0.0031 per mmHg (common practice; Siggaard-Andersen 1984).
-func functionalContent(hb, sat, po2 float64) float64 { return 1.34*hb*sat + 0.0031*po2 }

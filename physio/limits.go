@@ -196,7 +196,6 @@ const (
 	gapUsual          = 12.0 // mmol/L, without K
 	gapHigh           = 15.5 // mmol/L: above 12 + 4, less half a printed digit
 	gapHidden         = 20.0 // mmol/L: high whatever the bicarbonate
-	albuminUsual      = 40.0 // g/L; Figge 1998 uses 44, most texts 40
 	deltaMixed        = 2.0  // above: alkalosis or earlier hypercapnia beside
 	chronicLatestPH   = 7.50 // chronic hypocapnia at a higher pH is not called
 )

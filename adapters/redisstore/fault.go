@@ -78,14 +78,15 @@ func serverCode(err error) string {
 	return code
 }
 
-// lost says whether the call may have been carried out although it failed: the
-// server gave no answer, and a connection had been made.
+// lost says whether the call may have been carried out although it failed, or
+// was never sent because a machine in a rush was slow to connect: the server
+// gave no answer. A server that refuses a connection is down, and nothing lost.
 func lost(err error) bool {
 	if err == nil || serverCode(err) != "" || ours(err) {
 		return false
 	}
 	var dial *net.OpError
-	return !(errors.As(err, &dial) && dial.Op == "dial")
+	return !(errors.As(err, &dial) && dial.Op == "dial" && !dial.Timeout())
 }
 
 // ours are errors before a connection was had, or after a reply was.

@@ -62,10 +62,8 @@ step "staticcheck"
 go tool staticcheck ./...
 
 step "tests with the race detector"
-if ! go test -race -v ./... >"$scratch/tests" 2>&1; then
-	grep -E '^(FAIL|ok|\?|panic:)|--- FAIL' "$scratch/tests" || true
-	printf '\n-- from the first failure on:\n'
-	awk '/--- FAIL|^panic:|^FAIL|DATA RACE|\[build failed\]/ {on = 1} on' "$scratch/tests" | head -n 300
+if ! go test -race -timeout 5m -v ./... >"$scratch/tests" 2>&1; then
+	grep -vE '^ *(=== (RUN|PAUSE|CONT|NAME)|--- PASS)|^PASS$' "$scratch/tests" | head -n 400 || true
 	printf '%s passed, %s failed\n' "$(grep -cE '^--- PASS' "$scratch/tests")" "$(grep -cE '^--- FAIL' "$scratch/tests")"
 	fail "tests"
 fi

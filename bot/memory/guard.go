@@ -125,6 +125,9 @@ func (g *Guard) leave(ctx context.Context, probing bool, err error) error {
 	case errors.Is(err, store.ErrNotReplicated):
 		g.stats.NotReplicated++
 		g.up()
+	case errors.Is(err, store.ErrUnseen):
+		g.up() // written; only a write without a condition can be unseen, and nobody looks at its item
+		return nil
 	case errors.Is(err, store.ErrFull):
 		g.stats.Full++
 		g.up()

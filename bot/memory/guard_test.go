@@ -133,6 +133,17 @@ func TestNamedOutcomesAreNoFaults(t *testing.T) {
 	expect(t, "counts", [5]uint64{s.Calls, s.Faults, s.Conflicts, s.Full, s.NotReplicated}, [5]uint64{3, 0, 1, 1, 1})
 }
 
+// A write whose reply was lost and that a look-up found stored is stored.
+func TestAWriteThatWasUnseenIsWritten(t *testing.T) {
+	r := newRig()
+	g := newGuard(r, GuardOptions{})
+	r.tap.breakWith(allFail(store.ErrUnseen))
+	_, err := g.Do(ctx, "p", read)
+	expect(t, "unseen", err, nil)
+	_, down := g.Down()
+	expect(t, "down", down, false)
+}
+
 // hung is a store that answers only when its caller gives up.
 type hung struct{}
 

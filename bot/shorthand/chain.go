@@ -461,6 +461,15 @@ func (c *chainReader) saturation(t *token, spaced bool) bool {
 		r.last = c.i
 		r.sample().Set(physio.SaO2, t.v)
 		return true
+	case t.v >= 0.21 && t.v <= 1 && t.decimals > 0 && t.sign == 0:
+		if spaced || !r.fitsBE(t.v) || t.decimals > 1 {
+			return false // FiO2, by its size
+		}
+		r.take(c.i, 0)
+		r.last = c.i
+		r.ask(Question{Code: AskFifth, Quantity: physio.FiO2, Typed: t.typed(), Value: t.v, Choices: []Choice{
+			withWord(choose(physio.FiO2, t.v), "FiO2"), withWord(choose(physio.BE, t.v), "BE")}})
+		return false
 	case t.v <= 20 && t.decimals <= 1 && r.raw[physio.BE] == nil && r.fitsBE(t.signed()) && !spaced:
 		r.raw[physio.BE] = &rawValue{v: t.signed(), decimals: t.decimals, typed: t.typed()}
 		r.note(NoteBEPlace, physio.BE, t.typed(), t.signed())

@@ -30,6 +30,7 @@ const (
 	NoteHighFlowPair NoteCode = "high_flow_pair" // a/b after high flow: only one reading possible
 	NoteMeanAirway   NoteCode = "mean_airway"    // MAP read as mean airway pressure
 	NoteSign         NoteCode = "sign"           // a deficit typed with a minus
+	NoteRangeLow     NoteCode = "range_low"      // a range was typed, its lower end is used
 )
 
 // The questions, most important first within a gas: contradiction, units,

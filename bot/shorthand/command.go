@@ -11,10 +11,10 @@ var commandWords = map[string]Intent{
 	"now": IntentNow, "recheck": IntentNow, "aim": IntentAim, "suppose": IntentSuppose,
 	"check": IntentCheck, "second": IntentCheck, "doublecheck": IntentCheck, "dblcheck": IntentCheck,
 	"trend": IntentTrend, "course": IntentTrend, "series": IntentTrend,
-	"beds": IntentBeds, "huddle": IntentBeds, "board": IntentBeds, "record": IntentRecord, "chart": IntentRecord,
+	"beds": IntentBeds, "huddle": IntentBeds, "record": IntentRecord,
 	"house": IntentHouse, "units": IntentHouse, "order": IntentHouse, "teach": IntentHouse,
 	"why": IntentWhy, "workings": IntentWhy, "forget": IntentForget, "wipe": IntentForget, "erase": IntentForget,
-	"help": IntentHelp, "halp": IntentHelp,
+	"help": IntentHelp,
 }
 
 // lead cuts the bot's own name and a greeting off the front of a message.
@@ -96,11 +96,17 @@ func command(s string) (Intent, string) {
 	if strings.HasPrefix(rest, "'") || strings.HasPrefix(rest, "-") && word != "check" {
 		return IntentNone, s
 	}
+	if word == "second" && countsGas.MatchString(rest) {
+		return IntentNone, s
+	}
 	if intent, ok := commandWords[word]; ok {
 		return intent, strings.TrimLeft(rest, " :,-?!.\t")
 	}
 	return IntentNone, s
 }
+
+// countsGas says that "second" counts: "second gas 7.30/...".
+var countsGas = regexp.MustCompile(`^\s*(gas|abg|vbg|cbg|sample|set|one|stick|draw|of|day|unit)\b`)
 
 // loose says that a command may be taken from a message that was not meant for
 // the bot in so many words: the bare command, or one with a bed label.

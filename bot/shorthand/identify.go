@@ -61,7 +61,7 @@ func identified(s string) Refused {
 }
 
 // gasChain is a run of gas values, which no rule on digits may trip over.
-var gasChain = regexp.MustCompile(`\b[67][.,]\d{1,3}(\s?[/|\\;:,-]\s?[<>+-]?\d{1,3}([.,]\d{1,2})?\b){1,7}|\b\d{3,4} ?(-|to) ?\d{3,4} ?(?i:ml|m|ft|feet)\b`)
+var gasChain = regexp.MustCompile(`\b[67][.,]\d{1,3}(\s?[/|\\;:,.-]\s?[<>+-]?\d{1,3}([.,]\d{1,2})?\b){1,7}|\b\d{3,4} ?(-|to) ?\d{3,4} ?(?i:ml|m|ft|feet)\b`)
 
 func maskGas(s string) string { return gasChain.ReplaceAllString(s, " gas ") }
 

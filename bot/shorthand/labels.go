@@ -33,7 +33,7 @@ func (r *reader) numberAfter(i int) (int, bool) {
 			return j, !t.taken
 		case t.word("on") && q != physio.FiO2 && q != physio.OxygenFlow:
 			return 0, false
-		case t.sep(":=~@(*") || t.is(senseFiller) && j < i+4 || t.used:
+		case t.sep(":=~@(*])") || t.is(senseFiller) && j < i+4 || t.used:
 		case t.sep("-") && j+1 < len(r.t) && r.t[j+1].kind == tokNumber:
 			if q == physio.BE && !t.glued && r.t[j+1].sign == 0 {
 				r.t[j+1].sign = '-'
@@ -119,6 +119,10 @@ func (r *reader) labels() {
 }
 
 func (r *reader) label(i int) {
+	if r.satInFront(i) {
+		r.labelledValue(i, i-1, r.percentOf(i-1), 0)
+		return
+	}
 	j, ok := r.numberAfter(i)
 	if !ok || r.t[i].e.weak && !r.weakFits(i, j) {
 		return
@@ -136,7 +140,74 @@ func (r *reader) label(i int) {
 		}
 	}
 	u, n := r.unitAfter(j)
+	if r.rangeBehind(j) {
+		r.t[j+2].taken = true
+		f := formOf(r.t[i].e.q, &r.t[j], u, r.adult())
+		r.note(NoteRangeLow, f.q, r.t[j].s+"-"+r.t[j+2].s, f.v)
+	}
 	r.labelledValue(i, j, u, n)
+}
+
+// rangeBehind says that a range was typed: "spo2 88-90".
+func (r *reader) rangeBehind(j int) bool {
+	if j+2 >= len(r.t) || !r.t[j+1].sep("-") || !r.t[j+1].glued || !r.t[j+2].free() || !r.t[j+2].glued {
+		return false
+	}
+	a, b := &r.t[j], &r.t[j+2]
+	return b.v > a.v && b.v < 1.5*a.v && a.decimals == b.decimals && a.decimals == 0 && (j+3 >= len(r.t) || !r.t[j+3].sep("-/"))
+}
+
+// satInFront says that the saturation stands in front of its label although a
+// number follows too: "91% sat 40%".
+func (r *reader) satInFront(i int) bool {
+	q := r.t[i].e.q
+	if i == 0 || q != physio.SaO2 && q != physio.SpO2 {
+		return false
+	}
+	p := &r.t[i-1]
+	if !p.free() || p.v < 60 || p.v > 100 || r.joined(i-1) || !p.percent && !r.t[i].glued {
+		return false
+	}
+	j, ok := r.numberAfter(i)
+	return ok && r.t[j].percent && r.t[j].v < 60
+}
+
+// postfix reads values that stand in front of their labels all along the
+// line: "7.28 pH, 58 CO2, 62 O2".
+func (r *reader) postfix() {
+	for i := range r.t {
+		if !r.t[i].free() || i > 0 && (r.t[i-1].is(senseLabel) || r.t[i-1].sep("/:=")) {
+			continue
+		}
+		pairs, end := r.pairsFrom(i)
+		if len(pairs) < 2 || end < len(r.t) && (r.t[end].kind == tokNumber || r.t[end].sep(":=")) {
+			continue
+		}
+		for _, k := range pairs {
+			u, _ := r.unitAfter(k[0])
+			r.labelledValue(k[1], k[0], u, 0)
+		}
+		return
+	}
+}
+
+// pairsFrom lists numbers that a label follows, one after another.
+func (r *reader) pairsFrom(i int) (pairs [][2]int, end int) {
+	for next := i; next < len(r.t) && r.t[next].free(); {
+		j := next + 1
+		if j < len(r.t) && r.t[j].is(senseUnit) {
+			j++
+		}
+		if j >= len(r.t) || !r.t[j].is(senseLabel) || r.t[j].e.weak {
+			break
+		}
+		pairs = append(pairs, [2]int{next, j})
+		next, end = j+1, j+1
+		for next < len(r.t) && r.t[next].sep(",;/|\n") {
+			next++
+		}
+	}
+	return pairs, end
 }
 
 // weakFits says that a spelling of one or two letters may be a label here.
@@ -169,7 +240,7 @@ func (r *reader) labelledValue(i, j int, u string, n int) {
 	e := r.t[i].e
 	q, t := e.q, &r.t[j]
 	switch {
-	case q == physio.PaO2 && (r.t[i].s == "o2" || r.t[i].s == "ox") && r.oxygenNumber(j, u, n):
+	case q == physio.PaO2 && (r.t[i].s == "o2" || r.t[i].s == "ox") && r.oxygenNumber(i, j, u, n):
 		r.t[i].used = true
 		return
 	case q == physio.PaCO2 && t.percent, q == physio.PaO2 && t.percent:
@@ -292,13 +363,13 @@ func (r *reader) hydrogen(j, n int) {
 
 // oxygenNumber reads the number behind a bare "o2": litres and per cent are
 // supply, not PaO2.
-func (r *reader) oxygenNumber(j int, u string, n int) bool {
+func (r *reader) oxygenNumber(i, j int, u string, n int) bool {
 	t := &r.t[j]
 	switch {
 	case u == uLitre || u == uLPM:
 		r.take(j, n)
 		r.oxygen = append(r.oxygen, saying{at: j, flow: t.v, hasFlow: true})
-	case u == uPercent && t.v >= 86:
+	case u == uPercent && t.v >= 86 && i < j:
 		r.take(j, n)
 		ask := Question{Code: AskPercent, Typed: t.typed(), Quantity: physio.SpO2, Choices: []Choice{
 			withWord(choose(physio.SpO2, t.v/100), "saturation"), withWord(choose(physio.FiO2, t.v/100), "FiO2")}}

@@ -40,7 +40,7 @@ func (l *lexer) next() {
 		l.i++
 		l.gap = true
 		return
-	case isDigit(c) || c == '.' && l.digitAt(l.i+1):
+	case isDigit(c) || c == '.' && l.digitAt(l.i+1) && !l.dots:
 		l.number(0, 0)
 	case isLetter(c):
 		l.letters()
@@ -177,7 +177,7 @@ func (l *lexer) fourDigits(at int) bool {
 	}
 	rest := strings.TrimLeft(l.s[l.i:min(len(l.s), l.i+8)], " ")
 	for _, u := range []string{"m ", "ml", "ft", "feet", "met", "mmhg", "g", "cc"} {
-		if strings.HasPrefix(rest+" ", u) {
+		if after, ok := strings.CutPrefix(rest+" ", u); ok && (after == "" || !isLetter(after[0])) {
 			return false
 		}
 	}

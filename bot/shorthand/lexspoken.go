@@ -50,8 +50,12 @@ func spokenAt(in []token, i int) (int, token) {
 			j = k
 		}
 	} else if n == 1 && (whole == 6 || whole == 7) && j < len(in) && in[j].is(senseNumber) {
-		if v, m := spokenWhole(in, j); v >= 10 && v < 100 { // "seven twenty eight"
+		v, m := spokenWhole(in, j)
+		switch {
+		case v >= 10 && v < 100: // "seven twenty eight"
 			digits, j = strconv.Itoa(v), j+m
+		case v < 10 && j+1 < len(in) && in[j+1].is(senseNumber) && in[j+1].e.number < 10: // "seven two eight"
+			digits, j = strconv.Itoa(v)+strconv.Itoa(int(in[j+1].e.number)), j+2
 		}
 	}
 	if j == i || n == 0 && digits == "" || digits == "" && whole <= 12 && !wanted(in, i, j) {

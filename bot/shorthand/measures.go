@@ -130,9 +130,36 @@ func (r *reader) byUnit(i int, u string, n int) {
 
 // store reads the number at i as q.
 func (r *reader) store(q physio.Quantity, i int, u string, n int) {
-	f := formOf(q, &r.t[i], u, r.adult())
+	unit, note := r.pressureUnit(q, &r.t[i], u)
+	f := formOf(q, &r.t[i], unit, r.adult())
+	if note != "" && f.note == "" {
+		f.note = note
+	}
 	r.take(i, n)
 	r.put(f, q, r.t[i].typed())
+}
+
+// pressureUnit gives the unit of a gas pressure beside the gas: the channel's,
+// unless the size speaks against it, which is said.
+func (r *reader) pressureUnit(q physio.Quantity, t *token, u string) (string, NoteCode) {
+	most := 20.0 // kPa
+	switch q {
+	case physio.EtCO2, physio.TcCO2, physio.PeCO2, physio.PvCO2:
+	case physio.TcO2, physio.PvO2:
+		most = 30
+	default:
+		return u, ""
+	}
+	house := r.h.Units == KPa
+	switch {
+	case u == "" && house && t.v <= most:
+		return uKPa, ""
+	case house && u != uKPa:
+		return u, NoteReadMmHg
+	case u == uKPa && !house, u == "" && t.v < 9.5 && t.decimals > 0:
+		return uKPa, NoteReadKPa
+	}
+	return u, ""
 }
 
 // put keeps a form that was read, or its question.
@@ -250,6 +277,16 @@ func (r *reader) metresOrSex(i, n int) {
 		Choices: []Choice{{Word: "male", Sex: physio.Male}, {Word: "female", Sex: physio.Female}}})
 }
 
+// rateNamed says that another word than the one at i names a rate.
+func (r *reader) rateNamed(i int) bool {
+	for j := range r.t {
+		if j != i && r.t[j].is(senseLabel) && r.t[j].e.q == physio.RR && r.t[j].s != "r" {
+			return true
+		}
+	}
+	return false
+}
+
 // letterSex takes a lone m or f as the sex.
 func (r *reader) letterSex() {
 	for i := range r.t {
@@ -257,7 +294,7 @@ func (r *reader) letterSex() {
 		if t.used || t.kind != tokWord || t.s != "m" && t.s != "f" || r.sample().Sex != "" {
 			continue
 		}
-		if t.s == "f" && i+1 < len(r.t) && r.t[i+1].free() {
+		if t.s == "f" && i+1 < len(r.t) && r.t[i+1].free() && !r.rateNamed(i) {
 			continue // a rate
 		}
 		if t.s == "m" && i > 0 && r.t[i-1].kind == tokNumber && r.t[i-1].decimals > 0 && r.t[i-1].v < 2.6 {

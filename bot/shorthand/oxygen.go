@@ -79,6 +79,12 @@ func (r *reader) percentage(i int) {
 		r.sayFiO2(i, f)
 		return
 	}
+	if s := r.sample(); r.first < 0 && !s.Has(physio.SpO2) && !s.Has(physio.SaO2) && v >= 0.7 && !r.saidBefore(i) && r.otherFiO2(i) {
+		r.take(i, 0) // "93% on 2L": the oxygen is said beside it
+		s.Set(physio.SpO2, v)
+		r.note(NoteBareSat, physio.SpO2, t.typed(), v)
+		return
+	}
 	if r.first >= 0 && !r.saidBefore(i) && r.raw[physio.SaO2] == nil && !r.sample().Has(physio.SaO2) && v > 0.5 && r.satFits(v) {
 		other := r.otherFiO2(i)
 		switch {
@@ -186,7 +192,7 @@ func (r *reader) flowOrFiO2(i int, d physio.Device, nums []int) {
 	j := -1
 	if len(nums) > 0 {
 		j = nums[0]
-	} else if i > 0 && r.t[i-1].free() && r.t[i-1].line == r.t[i].line && !r.joined(i-1) && (i < 2 || r.t[i-2].kind != tokNumber) {
+	} else if i > 0 && r.t[i-1].free() && r.t[i-1].line == r.t[i].line && !r.joined(i-1) && (i < 2 || r.t[i-2].kind != tokNumber || r.t[i].glued) {
 		j = i - 1
 	}
 	if j < 0 || r.t[j].percent || r.t[j].sign != 0 || r.joinedAhead(j) || r.gasStart(j) {

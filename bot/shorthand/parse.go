@@ -58,14 +58,27 @@ func (p *parser) parse() Line {
 		return Line{Kind: Command, Intent: IntentHouse, Argument: arg, Sentence: sentence}
 	}
 	p.line.Intent, p.rest = command(p.typed)
+	if p.namesGas() {
+		p.line.Intent, p.rest = IntentNone, p.typed
+	}
 	p.line.Declined = declined(p.typed)
 	p.read()
 	return p.verdict()
 }
 
+// namesGas says that a gas follows a word that is a command only without one:
+// "house fire 7.38/36/240".
+func (p *parser) namesGas() bool {
+	switch p.line.Intent {
+	case IntentHouse, IntentForget, IntentHelp:
+		return len(coreStarts(lex(p.rest))) > 0
+	}
+	return false
+}
+
 // read reads the values of the message.
 func (p *parser) read() {
-	s, mixed := commas(untable(expand(p.rest, p.h.Words)))
+	s, mixed := commas(untable(oneSlash(expand(p.rest, p.h.Words))))
 	p.mixed = mixed
 	t := lex(s)
 	intent, clause, rest := p.clauses(t, s)
@@ -89,9 +102,19 @@ func (p *parser) read() {
 	}
 }
 
+// oneSlash takes a line that doubles every slash as one that does not; a line
+// with single ones keeps the double one as an empty place.
+func oneSlash(s string) string {
+	if n := strings.Count(s, "//"); n < 2 || strings.Count(s, "/") != 2*n {
+		return s
+	}
+	return strings.ReplaceAll(s, "//", "/")
+}
+
 // relate says how the gases belong to each other and to the thread.
 func (p *parser) relate(parts []segment, t []token) {
 	gases := p.line.Gases
+	shareCord(gases)
 	if len(gases) == 2 {
 		if pair, ok := venousPair(&gases[0], &gases[1]); ok {
 			p.line.Gases = []Gas{pair}
@@ -109,6 +132,9 @@ func (p *parser) relate(parts []segment, t []token) {
 	}
 	if len(gases) > 0 && !p.line.List {
 		gases[0].Follow = p.follow(&gases[0], t)
+		if len(gases) > 1 && parts[1].later && p.line.Intent != IntentNow {
+			gases[0].Follow = FollowNone // the word belongs to the second
+		}
 	}
 }
 
@@ -239,13 +265,38 @@ func (p *parser) twoNumbers(t []token) {
 			return
 		}
 	}
-	if len(nums) != 2 || !physio.PaCO2.Possible(nums[0].v) || !physio.PaO2.Possible(nums[1].v) {
+	if len(nums) != 2 {
+		return
+	}
+	co2, o2 := p.pressure(nums[0].v), p.pressure(nums[1].v)
+	if !physio.PaCO2.Possible(co2) || !physio.PaO2.Possible(o2) {
 		return
 	}
 	yes := Choice{Word: "PaCO2/PaO2"}
-	yes.Set.Set(physio.PaCO2, nums[0].v)
-	yes.Set.Set(physio.PaO2, nums[1].v)
+	yes.Set.Set(physio.PaCO2, co2)
+	yes.Set.Set(physio.PaO2, o2)
 	p.line.Gases[0].Questions = []Question{{Code: AskTwoNumbers, Quantity: physio.PaCO2, Typed: nums[0].s + "/" + nums[1].s, Choices: []Choice{yes, {Word: "no gas"}}}}
+}
+
+// shareCord makes all gases of a message about a cord cord gases.
+func shareCord(gases []Gas) {
+	if len(gases) < 2 || gases[0].Sample.Blood != physio.Cord {
+		return
+	}
+	for i := range gases[1:] {
+		s := &gases[i+1].Sample
+		if s.Blood == physio.Arterial || s.Blood == physio.Venous {
+			s.Blood, s.Site = physio.Cord, cordSite(s.Blood)
+		}
+	}
+}
+
+// pressure reads a bare pressure in the channel's unit, when that is possible.
+func (p *parser) pressure(v float64) float64 {
+	if p.h.Units == KPa && v < 27 {
+		return physio.KPa(v).MmHg()
+	}
+	return v
 }
 
 // venousPair joins an arterial and a venous gas of one moment: the venous side

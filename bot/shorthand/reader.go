@@ -48,6 +48,7 @@ func readGas(t []token, h Habits, o segment) Gas {
 	r.said()
 	r.measures()
 	r.modes()
+	r.postfix()
 	r.headings()
 	r.labels()
 	r.settings()
@@ -136,6 +137,10 @@ func (r *reader) saidBlood(i int, e *entry) {
 	if e.blood == "" {
 		return
 	}
+	if s.Blood == physio.Cord && e.site == "" && e.blood != physio.Cord {
+		s.Site = cordSite(e.blood)
+		return
+	}
 	doubted := r.near(i, 3, "could", "maybe", "might", "possibly", "possible", "probably", "probable", "or", "query", "unsure", "think", "suspect", "?venous", "likely", "looks", "perhaps") || r.questioned(i)
 	switch {
 	case doubted && e.blood != physio.Arterial && e.site == "":
@@ -147,6 +152,14 @@ func (r *reader) saidBlood(i int, e *entry) {
 		}
 		s.Blood, s.Site = e.blood, e.site
 	}
+}
+
+// cordSite is the vessel that a word on the blood names in a cord gas.
+func cordSite(b physio.Blood) physio.Site {
+	if b == physio.Arterial {
+		return physio.CordArterySite
+	}
+	return physio.CordVeinSite
 }
 
 // questioned says that a question mark directly follows or leads the word.

@@ -238,8 +238,8 @@ func bedOf(t []token) string {
 func splitLabelled(t []token) []segment {
 	for i := range t {
 		switch {
-		case t[i].kind == tokArrow && i > 1 && i+1 < len(t) && t[i-1].kind == tokNumber && t[i+1].kind == tokNumber:
-			if l := labelBefore(t, i-1); l >= 0 && isCore(t[l].e.q) && t[l].e.q != physio.PHq || l >= 0 && t[l].e.q == physio.EtCO2 {
+		case (t[i].kind == tokArrow || t[i].word("to") && !aimed(t)) && i > 1 && i+1 < len(t) && t[i-1].kind == tokNumber && t[i+1].kind == tokNumber:
+			if l := labelBefore(t, i-1); l >= 0 && measured(t[l].e.q) {
 				second := append([]token{t[l]}, t[i+1:]...)
 				return []segment{{t: t[:i]}, {t: second, later: true}}
 			}
@@ -248,6 +248,26 @@ func splitLabelled(t []token) []segment {
 		}
 	}
 	return []segment{{t: t}}
+}
+
+// measured says that q is measured rather than set.
+func measured(q physio.Quantity) bool {
+	switch q {
+	case physio.EtCO2, physio.SpO2, physio.TcCO2, physio.Lactate:
+		return true
+	}
+	return isCore(q) && q != physio.PHq
+}
+
+// aimed says that the words speak of a target, whose range is no change.
+func aimed(t []token) bool {
+	for i := range t {
+		switch t[i].s {
+		case "target", "goal", "aim", "keep", "range", "between", "aiming":
+			return true
+		}
+	}
+	return false
 }
 
 func labelBefore(t []token, i int) int {

@@ -321,6 +321,7 @@ func (r *reader) finish() {
 	if !gas && s.Blood != physio.BloodUncertain && !s.Values.Empty() {
 		s.Blood = physio.NoBlood
 	}
+	r.deviceByPressures()
 	r.venousDoubt(gas)
 	if v, ok := s.Get(physio.Temp); ok && gas && math.Abs(v-37) >= 2 && !s.Circumstance.Has(physio.TempCorrected) {
 		r.ask(Question{Code: AskTempCorr, Quantity: physio.Temp, Value: v, Choices: []Choice{
@@ -330,6 +331,18 @@ func (r *reader) finish() {
 	sort.SliceStable(r.g.Questions, func(a, b int) bool {
 		return askRank[r.g.Questions[a].Code] < askRank[r.g.Questions[b].Code]
 	})
+}
+
+// deviceByPressures names the device that its own pressures name.
+func (r *reader) deviceByPressures() {
+	s := r.sample()
+	switch {
+	case s.Device != "":
+	case s.Has(physio.IPAP, physio.EPAP):
+		s.Device = physio.Bilevel
+	case s.Has(physio.CPAP):
+		s.Device = physio.CPAPDevice
+	}
 }
 
 // guard is the last wall: whatever way a number came, an impossible value is

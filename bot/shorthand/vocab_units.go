@@ -44,7 +44,7 @@ var unitRows = []row{
 	{unit(uLPM), "lpm, l/min, litres per minute, liters per minute, l per min, litres a minute, liters a minute, lmin, liters per min, litres per min, lt min, slpm, lpms, ltrs per min"},
 	{unit(uLitre), "l, liters, litres, liter, litre, ltr, ltrs, lt, lts"},
 	{unit(uML), "ml, mls, cc, ccs, milliliters, millilitres"},
-	{unit(uMLKg), "ml/kg, mlkg, cc/kg, ml per kg, mls/kg, ml kg, mls per kg"},
+	{unit(uMLKg), "per kg, per kilo, ml/kg, mlkg, cc/kg, ml per kg, mls/kg, ml kg, mls per kg"},
 	{unit(uKg), "kg, kgs, kilo, kilos, kilogram, kilograms"},
 	{unit(uGram), "g, gm, gms, gram, grams, gr"},
 	{unit(uPound), "lb, lbs, pounds, pound"},

@@ -1,0 +1,66 @@
+package shorthand
+
+import "testing"
+
+// Identifiers are invented: zeros, or words that mean no one. After the list of
+// 45 CFR 164.514(b)(2).
+var identifierLines = []lineTest{
+	// identifiers and pictures refuse the message
+	{"", "Mr Placeholder 7.31/55/68/27 35%", "refused identifier"},
+	{"", "mrs placeholder 7.31/55/68/27", "refused identifier"},
+	{"", "Ms. Nobody vbg 7.31/55/38/27", "refused identifier"},
+	{"", "Dr Nobody wants this read 7.31/55/68/27", "refused identifier"},
+	{"", "MRN 00099999 7.31/55/68/27", "refused identifier"},
+	{"", "mrn:0099 7.31/55/68/27", "refused identifier"},
+	{"", "URN 0000001 7.31/55/68/27", "refused identifier"},
+	{"", "hospital number 0012 7.31/55/68/27", "refused identifier"},
+	{"", "NHS no 000 000 0000 7.31/55/68/27", "refused identifier"},
+	{"", "acct 9990002 7.31/55/68/27", "refused identifier"},
+	{"", "FIN# 990001 7.31/55/68/27", "refused identifier"},
+	{"", "encounter #55512 7.31/55/68/27", "refused identifier"},
+	{"", "accession 25-000999 7.31/55/68/27", "refused identifier"},
+	{"", "visit 99900012 7.31/55/68/27", "refused identifier"},
+	{"", "policy 999000 7.31/55/68/27", "refused identifier"},
+	{"", "DOB 1/1/00 7.31/55/68/27", "refused identifier"},
+	{"", "born 1 January 1900 7.31/55/68/27", "refused identifier"},
+	{"", "01/01/1900 7.31/55/68/27", "refused identifier"},
+	{"", "1900-01-01 7.31/55/68/27", "refused identifier"},
+	{"", "pt: Nobody, Nemo 7.31/55/68/27", "refused identifier"},
+	{"", "Nobody, Nemo 7.31/55/68/27 35%", "refused identifier"},
+	{"", "Nemo Nobody 7.31/55/68/27 35%", "refused identifier"},
+	{"", "patient: Nemo 7.31/55/68/27", "refused identifier"},
+	{"", "name is nemo nobody 7.31/55/68/27", "refused identifier"},
+	{"", "bed 9 Nobody 7.31/55/68/27", "refused identifier"},
+	{"", "rm 204 NN 7.31/55/68/27", "refused identifier"},
+	{"", "nemo@example.org 7.31/55/68/27", "refused identifier"},
+	{"", "call 555-010-0001 7.31/55/68/27", "refused identifier"},
+	{"", "(555) 010-0001 7.31/55/68/27", "refused identifier"},
+	{"", "+99 0000 000001 7.31/55/68/27", "refused identifier"},
+	{"", "000-00-0001 7.31/55/68/27", "refused identifier"},
+	{"", "pager 55501 7.31/55/68/27", "refused identifier"},
+	{"", "12 Nowhere Street 7.31/55/68/27", "refused identifier"},
+	{"", "00099999 7.31/55/68/27", "refused identifier"},
+	{"", "10.20.30.40 7.31/55/68/27", "refused identifier"},
+	{"", "photo of the slip", "refused picture"},
+	{"", "IMG_9999.jpg 7.31/55/68/27", "refused picture"},
+	{"", "screenshot.png", "refused picture"},
+	// what must not trip the rules
+	{"", "12/1 0430 7.31/55/68/27 35%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.35 at:04:30"},
+	{"", "0400 7.31/55/68/27 35%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.35 at:04:00"},
+	{"", "plan 0800 gas 7.31/55/68/27 35%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.35 at:08:00"},
+	{"", "7.0 ETT 22 lip 7.31/55/68/27 35%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.35"},
+	{"", "Repeat Gas 7.31/55/68/27 35%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.35 follow:1"},
+	{"", "Bed 9 Still Tired 7.31/55/68/27 35%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.35 bed:9"},
+	{"", "Room 12 RA 7.40/40/90/24", "ph=7.4 paco2=40 pao2=90 hco3=24 fio2=0.21 on:air bed:12"},
+	{"", "Bed 4 Trach Collar 35% 7.31/55/68/27", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.35 on:tracheostomy_mask bed:4"},
+	{"", "Student: Mixed acidosis, 7.20/50/80/19 ra", ":check ph=7.2 paco2=50 pao2=80 hco3=19 fio2=0.21 on:air"},
+	{"", "COPD, CHF 7.31/55/68/27 35%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.35 said:copd"},
+	{"", "pt is struggling 7.31/55/68/27 35%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.35"},
+	{"", "Dr wants gas 7.31/55/68/27 35%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.35"},
+	{"", "PRVC 420 18 8 50 7.31/55/68/27", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.5 rr_set=18 vt=420 peep=8 on:ventilator mode:PRVC !vent_order:fio2:50=0.5 !vent_order:peep:8=8 !vent_order:rr_set:18=18"},
+	{"", "bed 12 VM 28% 7.31/55/68/27", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.28 on:venturi bed:12"},
+	{"", "7.31.55.68.27 35%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.35"},
+	{"", "Ventilated, Sedated 7.31/55/68/27 35%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.35 on:ventilator said:sedation"},
+}
+
+func TestIdentifiers(t *testing.T) { runLines(t, identifierLines) }

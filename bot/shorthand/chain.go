@@ -219,8 +219,8 @@ type chainReader struct {
 	filled  int
 	seps    int // separators since the last number
 	slashes int
-	spaces  int
-	first   bool
+	// sep is the separator before the number, style the one of the chain.
+	sep, style byte
 }
 
 // after is the slot behind q in the channel's order.
@@ -246,11 +246,14 @@ func (c *chainReader) read() {
 			}
 		case t.is(senseOver):
 			c.seps++
+			c.sep = '/'
 		case t.sep("/|\\;"):
 			c.empty()
 			c.seps++
+			c.sep = t.s[0]
 		case t.sep(",-:.~_"):
 			c.seps = max(c.seps, 1)
+			c.sep = t.s[0]
 		case (t.sep("?") || t.word("x")) && c.i+1 < len(c.r.t) && c.r.t[c.i+1].sep("/"), t.used && t.kind == tokWord && c.seps >= 0 && t.is(senseUnit):
 		case t.is(senseLabel) && t.used && isCore(t.e.q):
 			c.slot = c.after(t.e.q)
@@ -276,7 +279,10 @@ func (c *chainReader) empty() {
 // number puts a number in its place and says whether the chain goes on.
 func (c *chainReader) number(t *token) bool {
 	r := c.r
-	spaced := c.seps == 0 && c.filled > 0 && t.sign == 0
+	spaced := (c.seps == 0 || c.sep == ',' && c.style != ',') && c.filled > 0 && t.sign == 0
+	if c.style == 0 && c.filled > 0 {
+		c.style = c.sep
+	}
 	if secondGas(r.t, c.i, c.filled) {
 		return false
 	}
@@ -284,9 +290,7 @@ func (c *chainReader) number(t *token) bool {
 		return false
 	}
 	if c.filled > 0 {
-		if spaced {
-			c.spaces++
-		} else {
+		if !spaced {
 			c.slashes++
 		}
 	}
@@ -446,7 +450,7 @@ func (c *chainReader) saturation(t *token, spaced bool) bool {
 	switch {
 	case c.bicarbonateAfterBE(t):
 		return true
-	case t.percent && t.v < 50 && !r.satFits(t.v/100) && t.v >= 21:
+	case t.percent && !r.satFits(t.v/100) && t.v >= 21 && (t.v < 60 || spaced || !r.t[c.i-1].sep("/|\\")):
 		return false // FiO2, by its sign
 	case t.v >= 50 && t.v <= 100 && (r.satFits(t.v/100) || t.v >= 86 && !spaced) || t.v > 20 && r.satFits(t.v/100):
 		if spaced && r.typicalFiO2(t.v) && !t.percent {

@@ -112,10 +112,15 @@ func cutDoubt(values []string) float64 {
 		if len(v) > 3 {
 			f.Set(physio.HCO3, v[3])
 		}
-		doubt = min(doubt, doubtOf(&f, surroundings{})+float64(len(values))*0.1)
+		doubt = min(doubt, doubtOf(&f, surroundings{}))
 	}
 	if len(v) > 4 && (v[4] > 100 || v[4] < 40) {
 		return impossible
+	}
+	for _, s := range values[1:] { // a joined pair costs, the more the odder it looks
+		if _, fraction, ok := strings.Cut(s, "."); ok {
+			doubt += 0.2 + 1.5*float64(len(fraction)-1)
+		}
 	}
 	return doubt
 }

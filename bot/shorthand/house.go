@@ -45,7 +45,15 @@ func keyAt(s string, i int, keys []string) string {
 	if i > 0 && isLetter(s[i-1]) {
 		return ""
 	}
+	end := i
+	for end < len(s) && (isLetter(s[end]) || isDigit(s[end])) {
+		end++
+	}
+	run := s[i:end]
 	for _, k := range keys {
+		if k != run && look(run) != nil && len(k) < len(run) {
+			continue // "o" is not the beginning of "o2"
+		}
 		if strings.HasPrefix(s[i:], k) && (i+len(k) == len(s) || !isLetter(s[i+len(k)])) {
 			return k
 		}

@@ -9,21 +9,29 @@ import (
 // Parse reads one typed message under the habits of its channel and thread. It
 // never panics, never holds a refusal and values together, and its work grows
 // with the length of the message only up to a fixed cut.
-func Parse(text string, h Habits) (line Line) {
+func Parse(text string, h Habits) Line {
+	if h.Units == "" {
+		h.Units = MmHg
+	}
+	return contained(h, func() Line {
+		folded := fold(text)
+		if r := identified(folded); r != RefusedNone {
+			return Line{Kind: Refusal, Refused: r}
+		}
+		p := &parser{h: h, typed: lower(folded)}
+		return p.parse()
+	})
+}
+
+// contained turns a panic of the reader into a message that was not read: a
+// fault of ours must not take the bot down, nor give half a reading.
+func contained(h Habits, read func() Line) (line Line) {
 	defer func() {
 		if recover() != nil {
 			line = Line{Kind: quietKind(h)}
 		}
 	}()
-	if h.Units == "" {
-		h.Units = MmHg
-	}
-	folded := fold(text)
-	if r := identified(folded); r != RefusedNone {
-		return Line{Kind: Refusal, Refused: r}
-	}
-	p := &parser{h: h, typed: lower(folded)}
-	return p.parse()
+	return read()
 }
 
 // lower gives the text in lower case without what is no typist's text. One

@@ -61,6 +61,11 @@ func (p *parser) byMeaning(said string, q *Question) (*Choice, bool) {
 	if len(coreStarts(t)) > 0 {
 		return nil, false
 	}
+	if n := loneNumber(t); n != nil {
+		if c, ok := byNumber(n.v, n.typed(), q); ok {
+			return c, true
+		}
+	}
 	var found *Choice
 	for i := range t {
 		e := t[i].e
@@ -70,7 +75,7 @@ func (p *parser) byMeaning(said string, q *Question) (*Choice, bool) {
 		for k := range q.Choices {
 			c := &q.Choices[k]
 			same := c.Blood != "" && e.blood == c.Blood || c.Device != "" && e.device == c.Device && e.device != "" || c.Sex != "" && e.sex == c.Sex ||
-				e.unit != "" && strings.EqualFold(c.Word, e.unit) || e.sense == senseLabel && plainWord(c.Word) == plainWord(e.q.Info().Symbol)
+				e.unit != "" && strings.EqualFold(c.Word, e.unit) || e.sense == senseLabel && (plainWord(c.Word) == plainWord(e.q.Info().Symbol) || c.Set.Has(e.q) && onlyIn(q, e.q))
 			if same && found != nil && found != c {
 				return nil, false
 			}
@@ -87,6 +92,31 @@ func (p *parser) byMeaning(said string, q *Question) (*Choice, bool) {
 		}
 	}
 	return found, found != nil
+}
+
+// onlyIn says that one choice alone sets k.
+func onlyIn(q *Question, k physio.Quantity) bool {
+	n := 0
+	for i := range q.Choices {
+		if q.Choices[i].Set.Has(k) {
+			n++
+		}
+	}
+	return n == 1
+}
+
+// loneNumber is the number of an answer that holds just one.
+func loneNumber(t []token) *token {
+	var found *token
+	for i := range t {
+		if t[i].kind == tokNumber {
+			if found != nil {
+				return nil
+			}
+			found = &t[i]
+		}
+	}
+	return found
 }
 
 // byNumber finds the one choice whose value is the number, as typed or in per

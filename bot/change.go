@@ -29,6 +29,11 @@ func (c *composer) changeSentence(when string, t *turn) string {
 		return ""
 	}
 	var parts []string
+	if now, ok := c.gas.Sample.Get(physio.PHq); ok {
+		if before, had := t.before.Sample.Get(physio.PHq); had {
+			parts = append(parts, "pH "+phText(before)+" to "+phText(now)+c.spreadWord(physio.PHq, before, now))
+		}
+	}
 	for _, q := range []physio.Quantity{physio.PaCO2, physio.PaO2} {
 		now, ok := c.gas.Sample.Get(q)
 		before, had := t.before.Sample.Get(q)

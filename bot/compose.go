@@ -103,14 +103,20 @@ func (c *composer) headline() string {
 	if len(c.a.Critical) == 1 {
 		critical = c.criticalValue(c.a.Critical[0]) + " critical"
 	}
-	for _, o := range c.oxygenationShort() {
-		for _, v := range c.ventilationShort() {
-			if h := joinHeads(critical, v, o); len([]rune(h)) <= headlineWidth {
-				return h
+	vs, os := c.ventilationShort(), c.oxygenationShort()
+	told := len(os) - 1 // the last phrasing leaves the efficiency out
+	for _, group := range []struct{ vs, os []string }{
+		{vs[:len(vs)-1], os[:told]}, {vs, os[:told]}, {vs, os[told:]},
+	} {
+		for _, v := range group.vs {
+			for _, o := range group.os {
+				if h := joinHeads(critical, v, o); len([]rune(h)) <= headlineWidth {
+					return h
+				}
 			}
 		}
 	}
-	return joinHeads(critical, last(c.ventilationShort()))
+	return joinHeads(critical, last(vs))
 }
 
 func last(s []string) string { return s[len(s)-1] }
@@ -150,6 +156,12 @@ func (c *composer) ventilationShort() []string {
 	level := c.ventilationHead()
 	short, _, _ := strings.Cut(level, ",")
 	out := []string{level, short}
+	switch level {
+	case "CO2 in range":
+		out[1] = "CO2 fits"
+	case "CO2 not low in asthma":
+		out[1] = "CO2 not low"
+	}
 	if c.a.Ventilation.Efficiency == physio.Poor {
 		out = append([]string{level + ", efficiency poor", short + ", efficiency poor", level + ", costly", short + ", costly"}, out...)
 	}
@@ -170,6 +182,9 @@ func (c *composer) ventilationHead() string {
 	answers := ab.Need == physio.Matches
 	switch v.Level {
 	case physio.LevelAdequate:
+		if c.a.Raised(physio.CautionAsthma) {
+			return "CO2 not low in asthma"
+		}
 		return "CO2 in range"
 	case physio.LevelShortForNeed:
 		return "CO2 above need"
@@ -210,12 +225,11 @@ func (c *composer) oxygenationShort() []string {
 	}
 	level := "O2 " + c.oxygenHead()
 	switch c.a.Oxygenation.Efficiency {
-	case physio.Poor, physio.Reduced, physio.Efficient:
-		word := ", transfer " + efficiencyWord[c.a.Oxygenation.Efficiency]
-		if c.a.Oxygenation.Efficiency == physio.Efficient {
-			word = ", efficient"
-		}
-		return []string{level + word, level}
+	case physio.Efficient:
+		return []string{level + ", efficient", level}
+	case physio.Poor, physio.Reduced:
+		word := efficiencyWord[c.a.Oxygenation.Efficiency]
+		return []string{level + ", transfer " + word, level + ", lung " + word, level}
 	}
 	return []string{level}
 }
@@ -236,6 +250,15 @@ func (c *composer) oxygenHead() string {
 			return "above target"
 		}
 	}
+	if c.a.Raised(physio.CautionAboveRetainer) {
+		return "above 88-92"
+	}
+	if c.a.Raised(physio.CautionHighO2Preterm) {
+		return "above range"
+	}
+	if c.a.Raised(physio.CautionHyperoxia) {
+		return "high"
+	}
 	return c.levelWord()
 }
 
@@ -250,8 +273,8 @@ func (c *composer) levelWord() string {
 			return "can't say"
 		case pao2 < 45:
 			return "critically low"
-		case pao2 < 60:
-			return "low"
+		case pao2 < 60 || o.Saturation.Value > 0 && o.Saturation.Value < 0.895 && o.Scale != physio.DegreeSevere:
+			return "low" // also where acidosis moves the saturation below 90 %
 		}
 	}
 	if o.Scale == physio.DegreeMild && o.OnOxygen {

@@ -33,24 +33,29 @@ func (c *composer) nextPH() string {
 	if !acid || !c.a.Ranges.Responses {
 		return ""
 	}
-	to := c.a.Ranges.PaCO2High
+	to, name := c.a.Ranges.PaCO2High, ""
 	if ab.Course == physio.AcuteOnChronic && ab.UsualPaCO2.High > to {
 		to = (ab.UsualPaCO2.Low + ab.UsualPaCO2.High) / 2
+		name = " (the usual one that HCO3 points to: about " + c.n.between(ab.UsualPaCO2.Low, ab.UsualPaCO2.High) + ")"
 	}
 	sbe, ok := c.a.Index("sbe")
-	if !ok || to >= d.PaCO2 {
+	if !ok || d.PaCO2-to < smallestNext {
 		return ""
 	}
 	ph, err := physio.PHAtPCO2(physio.MmolL(sbe.Value), physio.MmHg(to))
 	if err != nil {
 		return ""
 	}
-	text := fmt.Sprintf("Next: same SBE, PaCO2 %s %s gives pH about %s", c.n.about(to), c.n.unit(), aboutPH(float64(ph)))
+	text := fmt.Sprintf("Next: same SBE, PaCO2 %s %s%s: pH about %s", c.n.about(to), c.n.unit(), name, aboutPH(float64(ph)))
 	if ve, ok := c.gas.Sample.Get(physio.VE); ok && !c.gas.Sample.Circumstance.Has(physio.AsthmaAttack) {
 		text += fmt.Sprintf("; by rate alone VE about %s L/min", plain(ve*d.PaCO2/to, 0))
 	}
 	return text + "."
 }
+
+// smallestNext is the change of PaCO2, mmHg, below which a next pH is not told:
+// it would be inside the spread of repeat samples.
+const smallestNext = 3.0
 
 // stepDown are the fractions of oxygen at which a next PaO2 is told.
 var stepDown = []float64{0.80, 0.60, 0.40, 0.28}

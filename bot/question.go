@@ -71,13 +71,17 @@ func (c *composer) assessedQuestion() *asked {
 	switch {
 	case a.Raised(physio.CautionVenousLikely), a.Raised(physio.CautionVenousPossible):
 		return c.bloodQuestion()
+	case s.Circumstance.Has(physio.CPR):
+		return nil // nothing is asked in a resuscitation
+	case s.Circumstance.Has(physio.SmokeOrCO) && !s.Has(physio.COHb) && a.Oxygenation.Level == physio.DegreeUnknown:
+		return &asked{id: askCOHb, text: askCOHbText}
 	case a.Blood == physio.BloodUncertain && !s.Has(physio.SpO2):
 		return &asked{id: askSpO2, text: askSpO2Text}
 	case a.Raised(physio.CautionHyperbaric) && !s.Has(physio.PB, physio.FiO2):
 		return &asked{id: askChamber, text: askChamberText}
 	case c.oxygenWanted():
 		return c.oxygenQuestion()
-	case a.Blood == physio.Arterial && s.Has(physio.PHq, physio.PaCO2) && a.Oxygenation.Level == physio.DegreeUnknown:
+	case a.Blood == physio.Arterial && !s.Circumstance.Has(physio.ECMO) && !s.Has(physio.PaO2) && s.Has(physio.PHq, physio.PaCO2) && a.Oxygenation.Level == physio.DegreeUnknown:
 		return &asked{id: askPaO2, text: askPaO2Text}
 	case s.Has(physio.VTPerKg) && !s.Has(physio.PBW) && s.Sex == physio.SexUnstated && a.Population == physio.Adult:
 		return &asked{id: askHeight, text: askHeightText}

@@ -181,6 +181,11 @@ func (t *turn) complete(c *composer, last memory.Entry) {
 	if oxygenSaid && !add.Sample.Has(physio.FiO2) {
 		g.Sample.Drop(physio.FiO2)
 	}
+	if add.Follow == shorthand.FollowAddition {
+		if replaced := replacedSettings(&g.Sample, &add.Sample); replaced != "" {
+			c.notices = append(c.notices, replaced)
+		}
+	}
 	g.Sample.Values.Merge(&add.Sample.Values)
 	mergeWords(&g.Sample, &add.Sample)
 	if add.Bed != "" {
@@ -197,6 +202,22 @@ func (t *turn) complete(c *composer, last memory.Entry) {
 	}
 	t.v.Void(last.Message)
 	*c.gas = g
+}
+
+// replacedSettings names the settings that an addition puts in place of others:
+// one that was changed after the gas was drawn does not belong to it.
+func replacedSettings(s, add *physio.Sample) string {
+	var names []string
+	for _, q := range []physio.Quantity{physio.FiO2, physio.OxygenFlow, physio.RR, physio.RRSet, physio.VT, physio.VE, physio.PEEP} {
+		before, had := s.Get(q)
+		if now, ok := add.Get(q); had && ok && now != before {
+			names = append(names, q.Info().Symbol)
+		}
+	}
+	if len(names) == 0 {
+		return ""
+	}
+	return strings.Join(names, ", ") + " replaced as a correction: if it was changed after this gas, the efficiency does not hold."
 }
 
 func mergeWords(s, add *physio.Sample) {

@@ -62,6 +62,9 @@ func (c *composer) borderlineNeed() string {
 
 func (c *composer) adequateCO2() string {
 	level := "level adequate"
+	if c.a.Raised(physio.CautionAsthma) {
+		return "PaCO2 " + c.n.about(c.a.Ventilation.PaCO2.Value) + " where an attack makes it low: not adequate, however usual the number."
+	}
 	if c.a.Ventilation.Borderline {
 		level = "level adequate, borderline (" + c.rangeWords() + ")"
 	}
@@ -133,10 +136,21 @@ func (c *composer) lowCO2() string {
 	if c.a.Ventilation.Borderline {
 		level += ", borderline"
 	}
-	return level + " (" + c.n.between(c.a.Ranges.PaCO2Low, c.a.Ranges.PaCO2High) + "): more than adequate."
+	level += " (" + c.n.between(c.a.Ranges.PaCO2Low, c.a.Ranges.PaCO2High) + ")."
+	low := c.a.Oxygenation.Scale == physio.DegreeMild || c.a.Oxygenation.Scale == physio.DegreeModerate || c.a.Oxygenation.Scale == physio.DegreeSevere
+	if low || c.a.Oxygenation.Efficiency == physio.Poor {
+		level += " Low oxygen can drive it; a later rise into the range is then no recovery by itself."
+	}
+	return level
 }
 
 func (c *composer) unknownCO2() string {
+	switch s := c.gas.Sample.Circumstance; {
+	case s.Has(physio.CPR):
+		return "no lung verdict during resuscitation."
+	case s.Has(physio.ECMO):
+		return "no lung verdict: the circuit shares the work."
+	}
 	switch c.a.Blood {
 	case physio.Venous, physio.CentralVenous, physio.MixedVenous:
 		if c.a.Ventilation.Screen {
@@ -190,6 +204,9 @@ func (c *composer) ventilationEfficiency() string {
 	switch c.a.Blood {
 	case physio.Arterial, physio.Capillary, physio.NoBlood:
 	default:
+		return ""
+	}
+	if s := c.gas.Sample.Circumstance; s.Has(physio.CPR) || s.Has(physio.ECMO) {
 		return ""
 	}
 	if v.Efficiency == physio.EfficiencyUnknown {
@@ -276,13 +293,13 @@ func (c *composer) indexRange(ix physio.Index) string {
 // meaning.
 func (c *composer) metabolic() string {
 	ab := c.a.AcidBase
-	if c.a.Blood == physio.Cord {
-		return ""
+	if c.a.Fit.Grade == physio.FitReject {
+		return "" // no verdict is built on a value that does not fit
 	}
 	var parts []string
 	for _, p := range []physio.Process{physio.MetabolicAcidosis, physio.MetabolicAlkalosis} {
 		if ab.Is(p) {
-			parts = append(parts, c.metabolicProcess(p))
+			parts = append(parts, c.metabolicProcess(p, len(parts) == 0))
 		}
 	}
 	for _, p := range []physio.Process{physio.RespiratoryAcidosis, physio.RespiratoryAlkalosis} {
@@ -300,13 +317,13 @@ func (c *composer) metabolic() string {
 	return "Metabolic side: " + strings.Join(parts, "; ") + "."
 }
 
-func (c *composer) metabolicProcess(p physio.Process) string {
+func (c *composer) metabolicProcess(p physio.Process, first bool) string {
 	word := processWord[p]
 	if c.a.AcidBase.Primary != p {
 		word = "also " + word
 	}
 	sbe, ok := c.a.Index("sbe")
-	if !ok {
+	if !ok || !first || sbe.Value > -2 && sbe.Value < 2 {
 		return word
 	}
 	return word + ", SBE " + signed(sbe.Value) + " mmol/L"

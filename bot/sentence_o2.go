@@ -32,6 +32,14 @@ func (c *composer) oxygenation() string {
 }
 
 func (c *composer) unknownO2() string {
+	switch s := c.gas.Sample.Circumstance; {
+	case s.Has(physio.CPR):
+		return "no lung verdict during resuscitation."
+	case s.Has(physio.ECMO):
+		return "no lung verdict: the circuit shares the work."
+	case s.Has(physio.SmokeOrCO):
+		return "can't say in smoke or CO without COHb: neither PaO2 nor SpO2 tells the oxygen carried."
+	}
 	switch c.a.Blood {
 	case physio.Venous, physio.CentralVenous, physio.MixedVenous:
 		return "can't say: venous PO2 tells nothing of the lungs; SpO2 would."
@@ -59,7 +67,7 @@ func (c *composer) oxygenLevel() string {
 	}
 	if o.Level == physio.DegreeAdequate && o.OnOxygen {
 		b.WriteString(c.onlyOn())
-	} else if c.a.Oxygen.Known && !o.OnOxygen {
+	} else if c.a.Oxygen.Known && !o.OnOxygen && !strings.Contains(b.String(), "air") {
 		b.WriteString(" on air")
 	}
 	b.WriteString(".")
@@ -75,7 +83,13 @@ func (c *composer) oxygenWords() string {
 	if o.ExpectedHere {
 		return "low, expected here by " + c.expectedWhy()
 	}
+	if above := c.aboveUsual(); above != "" {
+		return "above the " + above
+	}
 	word := c.levelWord()
+	if pao2, ok := c.gas.Sample.Get(physio.PaO2); ok && c.oxygenUnsaid() && o.Scale == physio.DegreeMild {
+		return "PaO2 " + c.n.about(pao2) + " is low on air, borderline on oxygen"
+	}
 	if word == "adequate" {
 		return "level adequate" + c.borderlineO2()
 	}
@@ -85,11 +99,32 @@ func (c *composer) oxygenWords() string {
 		}
 		return "PaO2 " + c.n.between(60, 79) + " on oxygen: borderline, no target set"
 	}
-	if !o.OnOxygen && c.a.Ranges.PaO2 && (o.Scale == physio.DegreeMild || o.Scale == physio.DegreeModerate) {
+	if !o.OnOxygen && c.a.Oxygen.Known && c.a.Ranges.PaO2 && (o.Scale == physio.DegreeMild || o.Scale == physio.DegreeModerate) {
 		scale := " on the scale for air at sea level"
 		return strings.TrimSuffix(word, " (mild)") + ", " + string(o.Scale) + scale + c.borderlineO2()
 	}
 	return word + c.borderlineO2()
+}
+
+// oxygenUnsaid says that neither air nor any oxygen was said.
+func (c *composer) oxygenUnsaid() bool {
+	return !c.a.Oxygen.Known && !c.a.Oxygenation.OnOxygen
+}
+
+// aboveUsual names the usual range that a saturation on oxygen is above, where
+// no target is set and a caution says so.
+func (c *composer) aboveUsual() string {
+	switch {
+	case c.a.Oxygenation.AgainstTarget != physio.NoTarget:
+		return ""
+	case c.a.Raised(physio.CautionAboveRetainer):
+		return "88-92 % usual in CO2 retainers"
+	case c.a.Raised(physio.CautionHighO2Preterm):
+		return "usual newborn range"
+	case c.a.Raised(physio.CautionHyperoxia):
+		return "usual range"
+	}
+	return ""
 }
 
 // expectedWhy names what explains a low PaO2.
@@ -102,11 +137,20 @@ func (c *composer) expectedWhy() string {
 
 func (c *composer) borderlineO2() string {
 	o := c.a.Oxygenation
-	near := o.Scale == physio.DegreeAdequate || o.Scale == physio.DegreeMild || o.AgainstTarget != physio.NoTarget
+	near := o.Scale == physio.DegreeMild || o.AgainstTarget != physio.NoTarget || o.Scale == physio.DegreeAdequate && c.atEdge()
 	if o.Borderline && near {
 		return ", borderline"
 	}
 	return ""
+}
+
+// atEdge says that an adequate PaO2 or saturation lies within one standard
+// deviation of a repeat of its cut-off.
+func (c *composer) atEdge() bool {
+	if pao2, ok := c.gas.Sample.Get(physio.PaO2); ok && c.a.Oxygenation.SaturationSource != physio.SpO2 {
+		return pao2 < 83
+	}
+	return c.a.Oxygenation.Saturation.Value < 0.965
 }
 
 func (c *composer) saturationWords() string {
@@ -117,9 +161,12 @@ func (c *composer) saturationWords() string {
 	s := wholePercent(o.Saturation.Value) + " %"
 	switch o.SaturationSource {
 	case physio.SaO2:
-		return "SaO2 " + s + " measured"
+		return "SaO2 " + s + " as given"
 	case physio.SpO2:
 		return "SpO2 " + s
+	}
+	if co, met := c.gas.Sample.Val(physio.COHb), c.gas.Sample.Val(physio.MetHb); co > 0.10 || met > 0.015 {
+		return "oxyhaemoglobin at most about " + s
 	}
 	if ph, ok := c.gas.Sample.Get(physio.PHq); ok && (ph < 7.35 || ph > 7.45) {
 		return "SaO2 about " + s + " at this pH"

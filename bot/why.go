@@ -153,8 +153,10 @@ func (c *composer) inputText(q physio.Quantity) string {
 	case physio.PB:
 		return symbol + plain(c.a.PB, 0) + " mmHg"
 	case physio.FiO2:
-		if c.a.Oxygen.Known {
-			return symbol + percent(c.a.Oxygen.FiO2.Value) + " %"
+		if o := c.a.Oxygen; o.Known && o.Estimated {
+			return symbol + wholePercent(o.FiO2.Low) + "-" + wholePercent(o.FiO2.High) + " %"
+		} else if o.Known {
+			return symbol + percent(o.FiO2.Value) + " %"
 		}
 	}
 	if v, ok := c.gas.Sample.Get(q); ok {

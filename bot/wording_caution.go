@@ -42,14 +42,16 @@ var cautionText = map[physio.CautionCode]string{
 	physio.CautionCeiling:        "above SpO2 97 % neither PaO2 nor S/F can be graded.",
 	physio.CautionOximeter:       "SpO2 alone can hide a lower SaO2 (perfusion, skin pigment, dyshaemoglobin).",
 	physio.CautionTemperature:    "values are read as reported at 37 C; corrected to the patient they move (%s).",
-	physio.CautionEstimated:      "FiO2 is an estimate: every index with it is about.",
+	physio.CautionEstimated:      "FiO2 is an estimate: the indices built on it are rough.",
 	physio.CautionConserving:     "with this oxygen source FiO2 can't be estimated: no index with it is given.",
 	physio.CautionLowPaCO2:       "PaCO2 is calculated from pH and HCO3: the measured one is wanted.",
 	physio.CautionPlateau:        "plateau pressure above 30 cmH2O.",
+	physio.CautionHyperoxia:      "PaO2 this high after arrest or brain injury counts as a harm of its own, as high and low PaCO2 do.",
+	physio.CautionHighPaO2:       "PaO2 above 150 mmHg on oxygen is above any usual target.",
 	physio.CautionShort:          "PaCO2 is above what the metabolic acidosis needs: ventilation does not match the need.",
 	physio.CautionDriving:        "driving pressure above 15 cmH2O.",
 	physio.CautionVT:             "VT above 8 mL/kg predicted weight.",
-	physio.CautionAltitudeUnset:  "sea level was taken: at altitude a lower PaO2 is expected (house altitude ...).",
+	physio.CautionAltitudeUnset:  "sea level was taken: at altitude a lower PaO2 is expected.",
 }
 
 // cautionArgs gives the numbers of the sentences that carry some.

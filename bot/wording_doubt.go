@@ -86,7 +86,7 @@ var questionTemplates = map[shorthand.QuestionCode]string{
 	shorthand.AskHeight:      "Height {t}: which was meant?",
 	shorthand.AskMetresSex:   "Is m metres or male? Sex is needed for the predicted weight.",
 	shorthand.AskMAP:         "MAP {t}: mean airway or mean arterial pressure?",
-	shorthand.AskTempCorr:    "Are the values corrected to {t} C?",
+	shorthand.AskTempCorr:    "Are the values corrected to {v}?",
 }
 
 // The questions that come from the assessment, not from what was typed.
@@ -103,6 +103,8 @@ const (
 	askParentText  = "Which gas does this follow?"
 	askHeight      = "height_and_sex"
 	askHeightText  = "Height and sex?"
+	askCOHb        = "cohb"
+	askCOHbText    = "COHb by co-oximeter?"
 	askChamber     = "chamber"
 	askChamberText = "Chamber pressure and FiO2?"
 	askFiO2        = "which_fio2"

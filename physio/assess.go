@@ -20,7 +20,7 @@ func (sc *scene) acidBase() {
 	a := sc.a
 	a.AcidBase = AcidBase{Primary: UnknownProcess, Course: NoCourse, Compensation: CompensationNotStated, Gap: GapUnknown}
 	d := a.Triple
-	if d.known() && a.Blood != Cord {
+	if d.known() {
 		t := sc.tripleOf(d)
 		a.AcidBase = classify(t)
 		if d.Any && d.Quantity == PaCO2 {
@@ -78,11 +78,13 @@ func (sc *scene) critical() {
 	if a.Population == Newborn || a.Population == Preterm {
 		limits = newbornCritical
 	}
-	if sc.set.Critical != nil {
+	if a.Blood == Cord {
+		limits = cordCritical
+	} else if sc.set.Critical != nil {
 		limits, a.CriticalHouse = *sc.set.Critical, true
 	}
 	a.CriticalLimits = limits
-	if a.Blood == Cord || a.Blood == NoBlood {
+	if a.Blood == NoBlood {
 		return
 	}
 	add := func(q Quantity, crossed bool) {
@@ -123,6 +125,9 @@ func (sc *scene) problem() {
 // efficiency.
 func (sc *scene) ventilationCounts() bool {
 	v, need := sc.a.Ventilation, sc.a.AcidBase.Need
+	if sc.asthmaNotLow() {
+		return true
+	}
 	switch v.Level {
 	case LevelShortForNeed:
 		return true

@@ -126,8 +126,13 @@ func TestSamplesSayWhatTheyMay(t *testing.T) {
 		t.Error("P/F from venous blood")
 	}
 	s.Blood = physio.Cord
-	if a := assess(s); a.AcidBase.Primary != physio.UnknownProcess || len(a.Critical) != 0 {
-		t.Error("a cord gas is judged as a patient's")
+	if a := assess(s); a.AcidBase.Primary != physio.NoProcess || len(a.Critical) != 0 || a.Ventilation.Level != physio.LevelUnknown {
+		t.Errorf("a usual cord gas: %s, %v, %s", a.AcidBase.Primary, a.Critical, a.Ventilation.Level)
+	}
+	s.Set(physio.PHq, 6.95)
+	s.Set(physio.HCO3, 11)
+	if a := assess(s); !a.AcidBase.Is(physio.MetabolicAcidosis) || len(a.Critical) != 1 {
+		t.Errorf("a cord pH of 6.95: %s, %v", a.AcidBase.Primary, a.Critical)
 	}
 	s.Blood, s.Circumstance = physio.Arterial, physio.ECMO
 	if a := assess(s); a.Oxygenation.Efficiency != physio.EfficiencyUnknown {

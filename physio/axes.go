@@ -34,13 +34,16 @@ func (sc *scene) levelOf(pco2 float64) {
 	switch {
 	case pco2 > high:
 		v.Level = LevelHypoventilation
-	case ab.Primary == MetabolicAcidosis && ab.Need == Short:
+	case ab.Primary == MetabolicAcidosis && ab.Need == Short && sc.a.Fit.Grade != FitReject:
 		v.Level = LevelShortForNeed
 		v.Borderline = ab.NeedBorderline
 	case pco2 < low:
 		v.Level = LevelHyperventilation
 	default:
 		v.Level = LevelAdequate
+	}
+	if sc.asthmaNotLow() {
+		v.Borderline = true // never plain adequate in an attack
 	}
 	v.ChronicPattern = v.Level == LevelHypoventilation && ab.Course == Chronic
 	usual := sc.set.UsualPaCO2
@@ -67,7 +70,8 @@ func (sc *scene) floor() {
 }
 
 // ventilationEfficiency takes the strongest basis there is: measured dead
-// space, ventilatory ratio, minute volume at PaCO2 40, PaCO2-EtCO2.
+// space; else the ventilatory ratio or the minute volume at PaCO2 40, unless a
+// PaCO2-EtCO2 beside it is worse.
 func (sc *scene) ventilationEfficiency() {
 	bases := []struct {
 		key           string
@@ -88,10 +92,22 @@ func (sc *scene) ventilationEfficiency() {
 		}
 		sc.a.Ventilation.Basis = b.key
 		sc.a.Ventilation.Efficiency = grade(ix.Value, b.reduced, b.poor)
+		if gap, ok := sc.a.Index("pa_et_gap"); ok && b.key != "vd_vt" && b.key != "pa_et_gap" {
+			sc.worseGap(grade(gap.Value, paEtUsual, paEtWide))
+		}
 		return
 	}
 	sc.lack(VE, "ve_corrected")
 	sc.lack(EtCO2, "pa_et_gap")
+}
+
+// worseGap lets a wide PaCO2-EtCO2 decide where minute volume looks usual: the
+// sign of low lung perfusion must not be covered.
+func (sc *scene) worseGap(e Efficiency) {
+	rank := map[Efficiency]int{Efficient: 0, Reduced: 1, Poor: 2}
+	if v := &sc.a.Ventilation; rank[e] > rank[v.Efficiency] {
+		v.Efficiency, v.Basis = e, "pa_et_gap"
+	}
 }
 
 // grade turns a number that is worse when higher into an efficiency.
@@ -149,7 +165,7 @@ func (sc *scene) saturationUsed() {
 		return
 	}
 	if ix, ok := sc.a.Index("sao2_calc"); ok && sc.lungO2 {
-		o.Saturation, o.SaturationSource = ix.Interval, PaO2
+		o.Saturation, o.SaturationSource = sc.oxyhaemoglobin(ix.Interval), PaO2
 		return
 	}
 	if s, ok := sc.v.Get(SpO2); ok {
@@ -159,6 +175,16 @@ func (sc *scene) saturationUsed() {
 }
 
 func identity(v []float64) float64 { return v[0] }
+
+// oxyhaemoglobin takes measured dyshaemoglobin off a saturation of the curve:
+// what is left is the most that can be oxyhaemoglobin.
+func (sc *scene) oxyhaemoglobin(s Interval) Interval {
+	if !sc.dyshaemoglobin() {
+		return s
+	}
+	left := 1 - sc.v.Val(COHb) - sc.v.Val(MetHb)
+	return Interval{Value: s.Value * left, Low: s.Low * left, High: s.High * left}
+}
 
 // scale puts the PaO2, or without one the saturation, on its scale of degrees.
 func (sc *scene) scale() {
@@ -180,13 +206,19 @@ func (sc *scene) scale() {
 	}
 	// Where haemoglobin carries something else, or the sample does not follow
 	// the curve, a PaO2 on its scale is no comfort: the measured saturation is.
-	if s, ok := sc.v.Get(SaO2); ok && sc.lungO2 && !newborn && sc.saturationMismatch() {
-		o.Scale = worse(o.Scale, degree(s, [3]float64{satAdequate, satMild, satModerate}))
+	if sc.lungO2 && !newborn && (sc.v.Has(SaO2) && sc.saturationMismatch() || sc.dyshaemoglobin() && sc.v.Has(PaO2)) {
+		o.Scale = worse(o.Scale, degree(o.Saturation.Value, [3]float64{satAdequate, satMild, satModerate}))
 	}
-	if sc.aboveAlveolar() {
+	if sc.aboveAlveolar() || sc.unmeasuredCO() {
 		o.Scale, o.Borderline = DegreeUnknown, false
 	}
 	o.Level = o.Scale
+}
+
+// unmeasuredCO says that carbon monoxide is likely and nothing measured it:
+// neither PaO2 nor SpO2 then tells the oxygen carried.
+func (sc *scene) unmeasuredCO() bool {
+	return sc.s.Circumstance.Has(SmokeOrCO) && !sc.v.Has(COHb) && !(sc.v.Has(SaO2) && sc.v.Has(PaO2))
 }
 
 // worse gives the worse of two degrees.
@@ -260,7 +292,7 @@ func (sc *scene) expectedHere() bool {
 	if o.Scale == DegreeAdequate || !onAir(sc) || !sc.adultScale() {
 		return false
 	}
-	age, aged := sc.v.Get(Age)
+	_, aged := sc.v.Get(Age)
 	high := sc.a.Altitude >= altitudeShiftFrom
 	if !high && !aged {
 		return false
@@ -270,9 +302,6 @@ func (sc *scene) expectedHere() bool {
 		paco2 = min(paco2, p)
 	}
 	floor := aboutPA(sc.a.Oxygen.FiO2.Value, sc.a.PB, paco2) - sc.expectedAA().High
-	if !high && age >= oldestLine {
-		floor = min(floor, oldestPaO2)
-	}
 	return sc.v.Val(PaO2) >= floor
 }
 
@@ -315,11 +344,16 @@ func (sc *scene) efficiencyFromGas(aa Index) {
 	if onAir(sc) {
 		o.Basis = "aa"
 		o.Efficiency = Efficient
-		band := Span{High: newbornAA}
-		if sc.adultScale() {
-			band = sc.expectedAA()
-		}
-		if aa.Value > band.High {
+		switch {
+		case sc.a.Population == Child: // no published band is held here: a/A decides
+			if o.Basis = "a_over_a"; ratio.Value < aaEfficientRatio {
+				o.Efficiency = Reduced
+			}
+		case !sc.adultScale():
+			if aa.Value > newbornAA {
+				o.Efficiency = Reduced
+			}
+		case aa.Value > sc.expectedAA().High:
 			o.Efficiency = Reduced
 		}
 		if ratio.Value < aaPoorAir {

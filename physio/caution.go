@@ -58,6 +58,8 @@ const (
 	CautionLowPaCO2       CautionCode = "paco2_calculated"
 	CautionPlateau        CautionCode = "plateau_above_30"
 	CautionVT             CautionCode = "vt_above_8"
+	CautionHyperoxia      CautionCode = "high_o2_brain"
+	CautionHighPaO2       CautionCode = "high_pao2"
 	CautionShort          CautionCode = "short_for_need"
 	CautionDriving        CautionCode = "driving_pressure_above_15"
 	CautionAltitudeUnset  CautionCode = "altitude_not_set"
@@ -96,6 +98,7 @@ var triggers = []trigger{
 	{CautionHidden, Major, (*scene).hidden, nil},
 	{CautionCapillary, Major, func(sc *scene) bool { return sc.a.Blood == Capillary && sc.s.Site != Earlobe }, nil},
 	{CautionHeliox, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(Heliox) }, nil},
+	{CautionHyperoxia, Major, func(sc *scene) bool { return sc.veryHighPaO2() && sc.brainAtRisk() }, nil},
 	{CautionNotSteady, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(JustChanged) }, nil},
 	{CautionShort, Minor, func(sc *scene) bool { return sc.a.Ventilation.Level == LevelShortForNeed }, nil},
 	{CautionEarlobe, Minor, func(sc *scene) bool { return sc.a.Blood == Capillary && sc.s.Site == Earlobe }, nil},
@@ -105,6 +108,7 @@ var triggers = []trigger{
 	{CautionCeiling, Minor, (*scene).aboveCeiling, nil},
 	{CautionLowPaCO2, Minor, func(sc *scene) bool { return sc.a.Triple.Any && sc.a.Triple.Quantity == PaCO2 }, nil},
 	{CautionAboveTarget, Minor, func(sc *scene) bool { return sc.a.Oxygenation.Level == DegreeAbove }, []CautionCode{CautionAboveRetainer}},
+	{CautionHighPaO2, Minor, (*scene).veryHighPaO2, []CautionCode{CautionHyperoxia, CautionAboveRetainer, CautionDyshaem, CautionHighO2Preterm}},
 	{CautionRetainer, Minor, (*scene).retainerUnset, []CautionCode{CautionAboveRetainer}},
 	{CautionTemperature, Minor, (*scene).temperatureOff, nil},
 	{CautionPlateau, Minor, func(sc *scene) bool { return sc.v.Val(Pplat) > plateauLimit }, nil},
@@ -213,8 +217,17 @@ func (sc *scene) asthmaNotLow() bool {
 
 func (sc *scene) brainCO2() bool {
 	p, ok := sc.v.Get(PaCO2)
-	inj := sc.s.Circumstance.Has(BrainInjury) || sc.s.Circumstance.Has(PostArrest)
-	return ok && inj && (p < sc.a.Ranges.PaCO2Low || p > sc.a.Ranges.PaCO2High)
+	return ok && sc.brainAtRisk() && (p < sc.a.Ranges.PaCO2Low || p > sc.a.Ranges.PaCO2High)
+}
+
+// brainAtRisk: the brain was injured or has been without blood.
+func (sc *scene) brainAtRisk() bool {
+	return sc.s.Circumstance.Has(BrainInjury) || sc.s.Circumstance.Has(PostArrest)
+}
+
+// veryHighPaO2: on oxygen, above any usual target.
+func (sc *scene) veryHighPaO2() bool {
+	return sc.lungO2 && sc.a.Oxygenation.OnOxygen && sc.v.Val(PaO2) > highPaO2 && !sc.aboveAlveolar()
 }
 
 func (sc *scene) newborn() bool {
@@ -243,6 +256,11 @@ func (sc *scene) retainer() bool {
 	if sc.s.Circumstance.Has(COPD) || sc.s.Circumstance.Has(Retainer) {
 		return true
 	}
+	// Another cause of an acute rise was named: a target for retainers would
+	// point the wrong way.
+	if sc.s.Circumstance&(BrainInjury|PostArrest|CPR|AsthmaAttack|SmokeOrCO|OpioidOrSedation|Sepsis|Shock) != 0 {
+		return false
+	}
 	d := sc.a.Triple
 	if !d.known() || !sc.lungCO2 {
 		return false
@@ -254,7 +272,8 @@ func (sc *scene) retainer() bool {
 func (sc *scene) aboveRetainer() bool {
 	o := sc.a.Oxygenation
 	word := sc.s.Circumstance.Has(COPD) || sc.s.Circumstance.Has(Retainer)
-	raised := sc.a.Triple.HCO3 > raisedHCO3 && sc.a.AcidBase.Primary == RespiratoryAcidosis
+	course := sc.a.AcidBase.Course
+	raised := sc.a.Triple.HCO3 > raisedHCO3 && sc.a.AcidBase.Primary == RespiratoryAcidosis && (course == Chronic || course == AcuteOnChronic)
 	if !sc.retainer() || !word && !raised || !o.OnOxygen {
 		return false
 	}
@@ -307,5 +326,8 @@ func (sc *scene) largeVT() bool {
 // altitudeUnset: a low PaO2 on air, where a house altitude would matter.
 func (sc *scene) altitudeUnset() bool {
 	low := sc.a.Oxygenation.Scale == DegreeMild || sc.a.Oxygenation.Scale == DegreeModerate
+	if aa, ok := sc.a.Index("aa"); ok && aa.Value > sc.expectedAA().High+altitudeExcess {
+		return false // more than altitude could explain
+	}
 	return low && onAir(sc) && sc.a.PBSource == PressureAssumed
 }

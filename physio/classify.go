@@ -332,7 +332,7 @@ func (ab *AcidBase) withGap(t triple, gap float64) {
 		ab.add(MetabolicAcidosis)
 	}
 	fall := t.r.Anchor.HCO3 - t.hco3
-	if fall > 0 && (gap-gapUsual)/fall > deltaMixed && gap >= gapHidden {
+	if gap >= gapHidden && (fall <= 0 || (gap-gapUsual)/fall > deltaMixed) {
 		ab.add(MetabolicAlkalosis)
 	}
 }

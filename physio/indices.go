@@ -75,13 +75,13 @@ var derivations = []derivation{
 	{"vt_per_weight", "mL/kg", []Quantity{VT, Weight}, func(v []float64) float64 { return v[0] / v[1] },
 		func(sc *scene) bool { p := sc.a.Population; return p == Newborn || p == Preterm || p == Child }},
 	{"driving_pressure", "cmH2O", []Quantity{Pplat, PEEP}, func(v []float64) float64 { return drivingPressure(v[0], v[1]) },
-		func(sc *scene) bool { return sc.v.Val(Pplat) > sc.v.Val(PEEP) }},
+		(*scene).drivingKnown},
 	{"compliance", "mL/cmH2O", []Quantity{VT, Pplat, PEEP}, func(v []float64) float64 { return v[0] / drivingPressure(v[1], v[2]) },
-		func(sc *scene) bool { return sc.v.Val(Pplat) > sc.v.Val(PEEP) }},
+		(*scene).drivingKnown},
 	{"mech_power", "J/min", []Quantity{RR, VT, PIP, Pplat, PEEP}, func(v []float64) float64 {
 		in := Inflation{Peak: CmH2O(v[2]), Plateau: CmH2O(v[3]), TotalPEEP: CmH2O(v[4])}
 		return powerVolumeControl(minuteVolume(v[1], v[0]), in)
-	}, func(sc *scene) bool { return sc.v.Val(Pplat) > sc.v.Val(PEEP) && sc.v.Val(PIP) >= sc.v.Val(Pplat) }},
+	}, func(sc *scene) bool { return sc.drivingKnown() && sc.v.Val(PIP) >= sc.v.Val(Pplat) }},
 	{"rsbi", "/min/L", []Quantity{RR, VT}, func(v []float64) float64 { return breathingIndex(v[0], v[1]) },
 		func(sc *scene) bool { return sc.adultRespiration() && sc.spontaneous() }},
 	{"anion_gap", "mmol/L", []Quantity{Na, Cl, HCO3}, func(v []float64) float64 { return anionGap(v[0], v[1], v[2]) }, always},
@@ -92,6 +92,12 @@ var derivations = []derivation{
 		shift := CurveShift{PH: PH(v[2]), PaCO2: MmHg(v[3])}
 		return v[0] / po2At(v[1], shift) * po2At(0.5, CurveShift{})
 	}, func(sc *scene) bool { s := sc.v.Val(SaO2); return s >= 0.2 && s <= 0.9 && sc.a.Blood != NoBlood }},
+}
+
+// drivingKnown says that the total PEEP is known: an auto-PEEP may have been
+// read as a total or as a part on top, so that the difference is not told.
+func (sc *scene) drivingKnown() bool {
+	return sc.v.Val(Pplat) > sc.v.Val(PEEP) && !sc.v.Has(AutoPEEP)
 }
 
 // adultRespiration says that adult breathing indices hold.
@@ -213,7 +219,7 @@ func (sc *scene) needs() {
 // bands adds the expected A-a on air, the PaO2 of a healthy lung at this
 // PaCO2, and the delta ratio.
 func (sc *scene) bands() {
-	if onAir(sc) && sc.adultScale() {
+	if onAir(sc) && sc.adultScale() && sc.a.Population != Child {
 		b := sc.expectedAA()
 		sc.add("aa_expected", "mmHg", Interval{Value: (b.Low + b.High) / 2, Low: b.Low, High: b.High}, Age)
 	}
@@ -272,7 +278,7 @@ func (sc *scene) contents() {
 	if sc.a.Blood == NoBlood || sc.a.Blood == Cord {
 		return
 	}
-	if sc.v.Has(PaO2) && sc.a.Population != Newborn && sc.a.Population != Preterm {
+	if sc.v.Has(PaO2) && !sc.unmeasuredCO() && sc.a.Population != Newborn && sc.a.Population != Preterm {
 		sc.add("sao2_calc", "", sc.saturationOfPaO2(), PaO2, PHq, PaCO2)
 	}
 	sc.arterialContent()

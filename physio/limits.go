@@ -47,8 +47,15 @@ var (
 	// (mean 20), from memory.
 	infantRanges = Ranges{
 		PHLow: 7.34, PHHigh: 7.46, PaCO2Low: 30, PaCO2High: 40, HCO3Low: 18, HCO3High: 24,
-		Anchor: Anchor{PaCO2: 34, HCO3: 21, SBE: -3}, Responses: true, PaO2: true,
+		Anchor: Anchor{PaCO2: 34, HCO3: 21, SBE: -3}, PaO2: true,
 		Source: "1 month to 2 years: PaCO2 30-40 mmHg, HCO3 18-24 mmol/L, from memory",
+	}
+	// childRanges: 2 to 15 years, the adult ranges but for a lower bicarbonate
+	// (20-26), from memory.
+	childRanges = Ranges{
+		PHLow: 7.35, PHHigh: 7.45, PaCO2Low: 35, PaCO2High: 45, HCO3Low: 20, HCO3High: 26,
+		Anchor: Anchor{PaCO2: 40, HCO3: 23, SBE: -1}, Responses: true, PaO2: true,
+		Source: "2 to 15 years: adult ranges with HCO3 20-26 mmol/L, from memory",
 	}
 	// newbornRanges: term, pH above 7.30 generally acceptable, PaCO2 35-45 with
 	// slightly higher values accepted (newborn chapter in the source list).
@@ -56,6 +63,13 @@ var (
 		PHLow: 7.30, PHHigh: 7.45, PaCO2Low: 35, PaCO2High: 50, HCO3Low: 18, HCO3High: 26,
 		Anchor: Anchor{PaCO2: 40, HCO3: 22, SBE: -2},
 		Source: "term newborn: pH above 7.30, PaCO2 35-50 mmHg",
+	}
+	// cordRanges: cord artery pH 7.18-7.38 and PCO2 32-66 mmHg (one reference
+	// page, weak), HCO3 17-27 from memory.
+	cordRanges = Ranges{
+		PHLow: 7.18, PHHigh: 7.38, PaCO2Low: 32, PaCO2High: 66, HCO3Low: 17, HCO3High: 27,
+		Anchor: Anchor{PaCO2: 49, HCO3: 22, SBE: -4},
+		Source: "cord artery: pH 7.18-7.38, PCO2 32-66 mmHg",
 	}
 	// pretermRanges: permissive 45-55 mmHg, pH from 7.25; the low end stays at
 	// 35, because low PaCO2 is a harm of its own. From memory.
@@ -108,6 +122,7 @@ func rangesFor(p Population, age float64, trimester int, h float64) Ranges {
 		if age > 0 && age < 2 {
 			return infantRanges.atAltitude(h)
 		}
+		return childRanges.atAltitude(h)
 	case Newborn:
 		return newbornRanges
 	case Preterm:
@@ -177,6 +192,10 @@ const (
 // Kost 1990, from memory.
 var defaultCritical = CriticalLimits{PHLow: 7.20, PHHigh: 7.60, PaCO2High: 70, PaO2Low: 45}
 
+// cordCritical: cord arterial pH 7.18 is usual; below 7.00 is not (common
+// practice).
+var cordCritical = CriticalLimits{PHLow: 7.00}
+
 // newbornCritical leaves out PaO2: a newborn's lower values are his range.
 var newbornCritical = CriticalLimits{PHLow: 7.20, PHHigh: 7.60, PaCO2High: 70}
 
@@ -238,8 +257,6 @@ const (
 	venousScreen = 45.0  // mmHg: a venous PCO2 below it makes hypercapnia unlikely (Kelly 2013)
 	tcMargin     = 7.5   // mmHg: agreement of transcutaneous CO2, from memory
 	aaImpossible = -10.0 // mmHg: a more negative A-a has a wrong input (sheet, section 3)
-	oldestLine   = 75.0  // years: PaO2 no longer falls (Cerveri 1995)
-	oldestPaO2   = 68.4  // mmHg: 5th centile at 75 years and above (Cerveri 1995)
 	newbornAA    = 40.0  // mmHg on air, from memory
 
 	newbornPaO2         = 50.0 // mmHg: at or above it inside the usual newborn range, from memory
@@ -251,7 +268,9 @@ const (
 
 // Bounds of cautions.
 const (
-	raisedHCO3      = 28.0 // mmol/L: above it a chronic retention is thought of, common practice
-	flatPaO2        = 80.0 // mmHg: the curve is flat above
-	temperatureSaid = 2.0  // C away from 37: PCO2 moves by more than 9 %
+	highPaO2        = 150.0 // mmHg on oxygen: above any usual target, our bound
+	altitudeExcess  = 30.0  // mmHg of A-a beyond its band: more than an unsaid altitude of a hospital makes
+	raisedHCO3      = 28.0  // mmol/L: above it a chronic retention is thought of, common practice
+	flatPaO2        = 80.0  // mmHg: the curve is flat above
+	temperatureSaid = 2.0   // C away from 37: PCO2 moves by more than 9 %
 )

@@ -43,7 +43,7 @@ var rules = map[string]Rule{
 	"expected_paco2":         {"acidosis: 40 + SBE (+-3) and 1.5 x HCO3 + 8 (+-2); alkalosis: 0.7 x HCO3 + 20 (+-5) and 40 + 0.6 x SBE (+-3)", "short or beyond outside both bands", "Schlichtig 1998; Albert, Dell and Winters 1967"},
 	"expected_hco3_acute":    {"24 + 0.1 x (PaCO2 - 40), or 24 - 0.2 x (40 - PaCO2)", "+-2 mmol/L", "Boston rules, as in Adrogue and Madias 2010"},
 	"expected_hco3_chronic":  {"24 + 0.35 to 0.51 x (PaCO2 - 40), or 24 - 0.41 x (40 - PaCO2)", "", "Boston rules; Martinu 2003; Krapf 1991"},
-	"expected_ph_acute":      {"pH at this PaCO2 with SBE unchanged", "", "Schlichtig 1998"},
+	"expected_ph_acute":      {"pH if only PaCO2 had changed, from SBE 0", "", "Schlichtig 1998"},
 	"expected_ph_chronic":    {"pH at this PaCO2 with the chronic HCO3", "", "Boston rules; Martinu 2003"},
 	"sao2_calc":              {"oxygen dissociation curve at this pH and PaCO2", "", "Siggaard-Andersen 1984"},
 	"cao2":                   {"1.34 x Hb x SaO2 + 0.0031 x PaO2", "", "common practice"},

@@ -106,6 +106,9 @@ func altitudeAt(pb float64) float64 {
 func (sc *scene) ranges() {
 	age, _ := sc.v.Get(Age)
 	sc.a.Ranges = rangesFor(sc.a.Population, age, sc.s.Trimester, sc.a.Altitude)
+	if sc.a.Blood == Cord {
+		sc.a.Ranges = cordRanges
+	}
 }
 
 func (sc *scene) oxygen() {

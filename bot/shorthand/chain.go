@@ -10,10 +10,57 @@ import (
 var defaultOrder = []physio.Quantity{physio.PHq, physio.PaCO2, physio.PaO2, physio.HCO3, physio.SaO2}
 
 func (r *reader) order() []physio.Quantity {
-	if len(r.h.Order) > 0 {
+	if len(r.h.Order) > 0 && r.placeOfPH() >= 0 {
 		return r.h.Order
 	}
 	return defaultOrder
+}
+
+// placeOfPH is where the house's order has the pH, -1 when it has none.
+func (r *reader) placeOfPH() int {
+	for i, q := range r.h.Order {
+		if q == physio.PHq {
+			return i
+		}
+	}
+	return -1
+}
+
+// chainStart finds the first number of an unlabelled gas: its pH, or so many
+// numbers before the pH as the house's order says.
+func (r *reader) chainStart() int {
+	if k := r.placeOfPH(); k > 0 {
+		for i := range r.t {
+			if r.t[i].free() && r.phAfter(i, k) {
+				return i
+			}
+		}
+		return -1
+	}
+	for i := range r.t {
+		if r.gasStart(i) {
+			return i
+		}
+	}
+	return -1
+}
+
+// phAfter says that the number k places behind the one at i is a pH and joined
+// to it.
+func (r *reader) phAfter(i, k int) bool {
+	for j, n := i, 0; j < len(r.t); j++ {
+		switch t := &r.t[j]; {
+		case t.free():
+			if n == k {
+				return phLike(t.v) && t.decimals > 0
+			}
+			n++
+		case t.sep("/|\\,;-"), t.is(senseOver), t.is(senseUnit):
+		default:
+			return false
+		}
+	}
+	return false
 }
 
 // phLike says that v is in the range of a pH.
@@ -156,13 +203,7 @@ func aloneOnLine(t []token, i int) bool {
 
 // chain reads the unlabelled values of the gas by the channel's order.
 func (r *reader) chain() {
-	start := -1
-	for i := range r.t {
-		if r.gasStart(i) {
-			start = i
-			break
-		}
-	}
+	start := r.chainStart()
 	slot := 0
 	switch {
 	case start >= 0 && r.raw[physio.PHq] == nil:
@@ -177,7 +218,8 @@ func (r *reader) chain() {
 	if r.claims && slot == 0 {
 		r.dropClaims(start)
 	}
-	c := &chainReader{r: r, slot: slot, seps: 0}
+	n, _ := chainAhead(r.t, start)
+	c := &chainReader{r: r, slot: slot, whole: slot == 0 && n >= 4}
 	if slot < 0 {
 		c.slot = c.after(physio.PHq)
 		c.i = start + 1
@@ -219,6 +261,8 @@ type chainReader struct {
 	filled  int
 	seps    int // separators since the last number
 	slashes int
+	// whole says that the chain, from the pH on, holds at least four values.
+	whole bool
 	// sep is the separator before the number, style the one of the chain.
 	sep, style byte
 }
@@ -283,7 +327,7 @@ func (c *chainReader) number(t *token) bool {
 	if c.style == 0 && c.filled > 0 {
 		c.style = c.sep
 	}
-	if secondGas(r.t, c.i, c.filled) {
+	if o := r.order(); !(c.slot < len(o) && o[c.slot] == physio.PHq) && secondGas(r.t, c.i, c.filled) {
 		return false
 	}
 	if spaced && c.slashes >= 2 && c.filled >= 3 || c.filled > 0 && c.foreignUnit() {
@@ -329,10 +373,7 @@ func (c *chainReader) place(t *token, spaced bool) bool {
 		q = order[c.slot]
 	}
 	if q != 255 && c.repeats(t, q) {
-		r.take(c.i, 0)
-		r.last = c.i
-		c.slot++
-		c.filled++
+		c.twice(t, q)
 		return true
 	}
 	for q != 255 && r.raw[q] != nil {
@@ -379,11 +420,30 @@ func (c *chainReader) place(t *token, spaced bool) bool {
 	return true
 }
 
-// repeats says that the number stands in its place although its label said it
-// already: "co2 58, 7.28/58/62/27".
+// repeats says that the number stands in its place although a label in front
+// of the chain said the quantity already: "co2 58, 7.28/58/62/27". A label
+// takes a place out of the chain only when the chain is too short to hold it.
 func (c *chainReader) repeats(t *token, q physio.Quantity) bool {
 	have := c.r.raw[q]
-	return have != nil && have.labelled && have.v == t.v && have.at < c.r.first && q != physio.PHq
+	if have == nil || !have.labelled || have.at >= c.r.first || q == physio.PHq || t.percent {
+		return false
+	}
+	return have.v == t.v || c.whole
+}
+
+// twice takes a repeated value, and asks when the two differ.
+func (c *chainReader) twice(t *token, q physio.Quantity) {
+	r := c.r
+	have := r.raw[q]
+	r.take(c.i, 0)
+	r.last = c.i
+	c.slot++
+	c.filled++
+	if have.v == t.v {
+		return
+	}
+	delete(r.raw, q)
+	r.ask(Question{Code: AskTwice, Quantity: q, Typed: t.typed(), Choices: []Choice{choose(q, t.v), choose(q, have.v)}})
 }
 
 // dashes says that hyphens separate the values: an earlier one stood before

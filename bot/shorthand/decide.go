@@ -60,7 +60,7 @@ func (d *decider) swapFits(kept, moved *candidate) bool {
 		return kept.doubt >= 5 && moved.doubt < 1
 	}
 	hco3 := kept.v.Val(physio.HCO3)
-	return k > math.Max(quiet, 0.05*hco3) && m <= 1.3 && k-m > 1.5 && moved.doubt < kept.doubt-1
+	return k > math.Max(quiet, 0.05*hco3) && (m <= 1.3 && k-m > 1.5 || m <= quiet && k-m > loud) && moved.doubt < kept.doubt-1
 }
 
 // askSwap leaves the places that the two readings differ in open.

@@ -134,6 +134,11 @@ func (l *lexer) number(sign, than byte) {
 	if sign == 0 && whole == l.i && l.clock(at) {
 		return
 	}
+	if n := ordinalSuffix(l.s[l.i:]); n > 0 && whole == l.i && sign == 0 {
+		l.i += n
+		l.add(token{kind: tokWord, s: l.s[at:l.i], at: at, end: l.i})
+		return
+	}
 	typed := l.s[at:l.i]
 	v, err := strconv.ParseFloat(typed, 64)
 	if err != nil || l.i-at > 12 {
@@ -145,6 +150,16 @@ func (l *lexer) number(sign, than byte) {
 		t.decimals = l.i - whole - 1
 	}
 	l.add(t)
+}
+
+// ordinalSuffix gives the length of the ending of an ordinal: 2nd, 3rd.
+func ordinalSuffix(s string) int {
+	for _, end := range []string{"st", "nd", "rd", "th"} {
+		if after, ok := strings.CutPrefix(s, end); ok && (after == "" || !isLetter(after[0]) && !isDigit(after[0])) {
+			return len(end)
+		}
+	}
+	return 0
 }
 
 // clock reads hh:mm, hhmm with a leading zero or a time mark, and a colon

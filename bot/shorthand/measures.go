@@ -120,7 +120,7 @@ func (r *reader) byUnit(i int, u string, n int) {
 	case uMLKg:
 		r.store(physio.VTPerKg, i, u, n)
 	case uC, uF:
-		if t.v > 25 && !r.joined(i) && r.first < 0 && r.t[i+1].glued {
+		if t.v > 25 && !r.joined(i) && (r.t[i+1].glued || len(r.t[i+1].s) > 1) {
 			r.store(physio.Temp, i, u, n)
 		}
 	case uHz:

@@ -200,11 +200,11 @@ func (p *parser) worth(g *Gas) bool {
 	s := &g.Sample
 	said := !s.Values.Empty() || len(g.Questions) > 0
 	switch {
-	case s.Has(physio.PHq), s.Has(physio.PaCO2, physio.PaO2):
+	case s.Has(physio.PHq) && (p.h.Addressed || p.h.Earlier != nil || p.part(s) || coreDoubt(g.Questions)), s.Has(physio.PaCO2, physio.PaO2):
 		return true
 	case p.command():
 		return false
-	case len(g.Questions) > 0 && coreDoubt(g.Questions):
+	case p.h.Addressed && coreDoubt(g.Questions):
 		return true
 	case p.h.Earlier != nil && p.h.Addressed:
 		return said || g.Follow != FollowNone && (s.Blood != "" || s.Device != "" || s.Population != "" || s.Circumstance != 0) || s.Blood != "" && s.Blood != physio.NoBlood || s.Device != "" || g.Target != nil
@@ -212,6 +212,11 @@ func (p *parser) worth(g *Gas) bool {
 		return said || g.Follow == FollowCorrection && s.Blood != "" || s.Device == physio.Air
 	}
 	return together(s)
+}
+
+// part says that another value of a gas stands beside the pH.
+func (p *parser) part(s *physio.Sample) bool {
+	return s.Has(physio.PaCO2) || s.Has(physio.PaO2) || s.Has(physio.HCO3) || s.Has(physio.BE)
 }
 
 // command says that the message is a command whose numbers are no values.

@@ -2,6 +2,7 @@ package bot
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 
 	"galeward/bot/reply"
@@ -20,7 +21,9 @@ var whyWords = []struct {
 	{[]string{"acute", "chronic", "course", "compensat", "acid", "alkal", "metabolic", "sbe", "bicarb", "hco3"},
 		[]string{"expected_ph_acute", "expected_hco3_acute", "expected_hco3_chronic", "expected_paco2", "sbe"}},
 	{[]string{"need", "short"}, []string{"expected_paco2", "sbe", "hco3_calc"}},
-	{[]string{"gap", "delta"}, []string{"anion_gap", "anion_gap_corrected", "delta_ratio"}},
+	{[]string{"gap", "delta"}, []string{"anion_gap", "anion_gap_corrected", "delta_ratio", "sig"}},
+	{[]string{"sid", "strong", "stewart"}, []string{"sid_apparent", "sid_effective", "sig"}},
+	{[]string{"shunt", "admixture"}, []string{"shunt", "shunt_estimated"}},
 	{[]string{"critical"}, []string{"critical"}},
 	{[]string{"borderline"}, []string{"borderline", "paco2_range", "pao2_scale"}},
 	{[]string{"fit", "read"}, []string{"hco3_calc", "sbe"}},
@@ -46,15 +49,23 @@ func (t *turn) why() {
 	a := physio.Assess(g.Sample, t.settingFor(&g))
 	c := &composer{gas: &g, a: &a, n: numbers{t.v.House.Units}}
 	var r reply.Reply
-	if strings.Contains(t.line.Argument, "caution") {
+	switch {
+	case strings.Contains(t.line.Argument, "criteri"), strings.Contains(t.line.Argument, "ards"):
+		for _, line := range criteriaLines(&a) {
+			r.Add(reply.Item, line)
+		}
+	case strings.Contains(t.line.Argument, "caution"):
 		for _, caution := range a.Cautions {
 			r.Add(reply.Item, upperFirst(c.cautionSentence(caution.Code)))
 		}
-	} else {
-		for _, line := range c.whyKeys(whyKeys(t.line.Argument)) {
+	default:
+		keys := whyKeys(t.line.Argument)
+		for _, line := range c.whyKeys(keys) {
 			r.Add(reply.Item, line)
 		}
-		r.Add(reply.Item, c.schools())
+		if slices.Contains(keys, "expected_ph_acute") || slices.Contains(keys, "expected_paco2") {
+			r.Add(reply.Item, c.schools())
+		}
 	}
 	if r.Empty() {
 		r.Add(reply.Item, "Nothing in the last answer rests on that.")
@@ -119,6 +130,20 @@ func (c *composer) whyLine(key string) string {
 	}
 	b.WriteString(" Source: " + rule.Source + ".")
 	return b.String()
+}
+
+// criteriaLines name the oxygenation criteria that are met, with what a gas
+// can not tell of the definition.
+func criteriaLines(a *physio.Assessment) []string {
+	var out []string
+	for _, criterion := range physio.Criteria(a) {
+		out = append(out, "Meets the oxygenation part of the "+criterion.Definition+": "+criterion.Part+
+			". Not known from a gas: "+strings.Join(criterion.Open, ", ")+".")
+	}
+	if out == nil {
+		return []string{"No oxygenation criterion of a published definition is met, or its device and pressure are not known."}
+	}
+	return out
 }
 
 // verdictRule says that a rule without an index belongs to this answer.

@@ -100,7 +100,8 @@ var basisWord = map[string]string{
 	"expected_ph_acute": "pH if acute", "expected_ph_chronic": "pH if chronic", "cao2": "CaO2",
 	"pao2_alveolar": "PAO2", "pf_altitude_corrected": "P/F corrected for altitude", "resp_index": "respiratory index",
 	"alveolar_dead_fraction": "alveolar dead-space fraction", "alveolar_vent": "alveolar ventilation",
-	"pbw": "predicted weight", "p50": "P50",
+	"pbw": "predicted weight", "p50": "P50", "shunt": "shunt", "shunt_estimated": "shunt, estimated",
+	"cco2": "Cc'O2", "sid_apparent": "apparent SID", "sid_effective": "effective SID", "sig": "strong ion gap",
 }
 
 // shortBasis abbreviates the lacking quantities.

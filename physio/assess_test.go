@@ -284,3 +284,66 @@ func TestVerdictsAreMonotone(t *testing.T) {
 		}
 	})
 }
+
+// TestCriteriaAreNotDiagnoses: the bands of Berlin 2012, the global definition
+// 2024 and PALICC 2015, each only with the device and pressure it asks for.
+func TestCriteriaAreNotDiagnoses(t *testing.T) {
+	abg := func(po2, fio2 float64, more ...any) physio.Sample {
+		return gas(append([]any{physio.PHq, 7.40, physio.PaCO2, 40, physio.PaO2, po2, physio.FiO2, fio2}, more...)...)
+	}
+	met := func(s physio.Sample) string {
+		a := assess(s)
+		out := ""
+		for _, c := range physio.Criteria(&a) {
+			if len(c.Open) == 0 {
+				t.Errorf("%s leaves nothing open", c.Definition)
+			}
+			out += c.Definition + ": " + c.Part + "\n"
+		}
+		return out
+	}
+	high := abg(120, 0.5)
+	high.Device = physio.HighFlow
+	high.Set(physio.OxygenFlow, 50)
+	child := abg(60, 0.6, physio.Age, 4, physio.Pmean, 15)
+	for _, c := range []struct {
+		what, got, want string
+	}{
+		{"no pressure", met(abg(95, 0.6)), ""},
+		{"P/F 158 at PEEP 8", met(abg(95, 0.6, physio.PEEP, 8)), "Berlin 2012: P/F 101-200 at PEEP 5 or more (band: moderate)\n"},
+		{"P/F 100 at PEEP 5", met(abg(60, 0.6, physio.PEEP, 5)), "Berlin 2012: P/F 100 or below at PEEP 5 or more (band: severe)\n"},
+		{"P/F 280 at CPAP 6", met(abg(84, 0.3, physio.CPAP, 6)), "Berlin 2012: P/F 201-300 at PEEP 5 or more (band: mild)\n"},
+		{"P/F 300.1", met(abg(120.04, 0.4, physio.PEEP, 5)), ""},
+		{"high flow", met(high), "global definition 2024: P/F 300 or below on high flow of 30 L/min or more\n"},
+		{"a child with OI 15", met(child), "PALICC 2015: OI in the band moderate\n"}, // 100 x 0.6 x 15 / 60
+	} {
+		if c.got != c.want {
+			t.Errorf("%s: %q, want %q", c.what, c.got, c.want)
+		}
+	}
+}
+
+// TestAdmixture: measured where mixed venous blood is given. Case c069 of the
+// published cases (C. Blaine): with the end-capillary saturation of the curve
+// the printed 16.6 % becomes about 10 %.
+func TestAdmixture(t *testing.T) {
+	s := gas(physio.PaCO2, 40, physio.PaO2, 90, physio.SaO2, 0.95, physio.Hb, 15, physio.PvO2, 40, physio.SvO2, 0.70, physio.FiO2, 0.21)
+	a := assess(s)
+	if ix, ok := a.Index("shunt"); !ok || math.Abs(ix.Value-0.10) > 0.03 {
+		t.Errorf("measured shunt %.3f, %v", ix.Value, ok)
+	}
+	est := assess(gas(physio.PHq, 7.4, physio.PaCO2, 40, physio.PaO2, 92, physio.FiO2, 0.5))
+	// Iso-shunt table of the sheets, Hb 15, PaCO2 40, difference 5: 20 % on 50 %
+	// oxygen is PaO2 92.
+	if ix, ok := est.Index("shunt_estimated"); !ok || ix.Low < 0.18 || ix.Low > 0.22 || ix.High < ix.Low {
+		t.Errorf("estimated shunt %+v, %v", ix.Interval, ok)
+	}
+	if _, ok := assessIndex(gas(physio.PHq, 7.4, physio.PaCO2, 40, physio.PaO2, 60, physio.FiO2, 0.28), "shunt_estimated"); ok {
+		t.Error("an estimated shunt below 35 % oxygen")
+	}
+}
+
+func assessIndex(s physio.Sample, key string) (physio.Index, bool) {
+	a := assess(s)
+	return a.Index(key)
+}

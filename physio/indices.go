@@ -88,6 +88,16 @@ var derivations = []derivation{
 	{"anion_gap_corrected", "mmol/L", []Quantity{Na, Cl, HCO3, Albumin}, func(v []float64) float64 {
 		return anionGap(v[0], v[1], v[2]) + albuminCorrection(v[3], float64(AlbuminTexts))
 	}, always},
+	{"sid_apparent", "mEq/L", []Quantity{Na, K, Calcium, Magnesium, Cl, Lactate}, func(v []float64) float64 {
+		return v[0] + v[1] + 2*v[2] + 2*v[3] - v[4] - v[5] // Kellum 2007
+	}, always},
+	{"sid_effective", "mEq/L", []Quantity{PHq, HCO3, Albumin, Phosphate}, func(v []float64) float64 {
+		return v[1] + v[2]*albuminCharge(v[0]) + v[3]*phosphateCharge(v[0]) // Figge 1992
+	}, always},
+	{"sig", "mEq/L", []Quantity{Na, K, Calcium, Magnesium, Cl, Lactate, PHq, HCO3, Albumin, Phosphate}, func(v []float64) float64 {
+		apparent := v[0] + v[1] + 2*v[2] + 2*v[3] - v[4] - v[5]
+		return apparent - v[7] - v[8]*albuminCharge(v[6]) - v[9]*phosphateCharge(v[6]) // Kellum 1995
+	}, always},
 	{"p50", "mmHg", []Quantity{PaO2, SaO2, PHq, PaCO2}, func(v []float64) float64 {
 		shift := CurveShift{PH: PH(v[2]), PaCO2: MmHg(v[3])}
 		return v[0] / po2At(v[1], shift) * po2At(0.5, CurveShift{})
@@ -151,6 +161,7 @@ func (sc *scene) indices() {
 	sc.needs()
 	sc.bands()
 	sc.contents()
+	sc.admixture()
 }
 
 // derive carries one row of the table out.

@@ -192,7 +192,13 @@ func (sc *scene) triple() {
 	default:
 		return
 	}
-	d.PH, d.PaCO2, d.HCO3 = ph, pco2, hco3
+	// What was worked out must be possible too: else two given values can not
+	// be of one sample, and the third stays unknown.
+	if PHq.Possible(ph) && PaCO2.Possible(pco2) && HCO3.Possible(hco3) {
+		d.PH, d.PaCO2, d.HCO3 = ph, pco2, hco3
+	} else {
+		*d = Derived{}
+	}
 }
 
 // known says that the whole triple is there, given or completed.

@@ -23,6 +23,18 @@ func lungO2(sc *scene) bool  { return sc.lungO2 }
 func lungCO2(sc *scene) bool { return sc.lungCO2 && sc.a.Blood == Arterial }
 func always(*scene) bool     { return true }
 
+// alveolarCO2 and alveolarO2 also ask that the alveolar PO2 is one: at a low
+// pressure a high PaCO2 leaves no room for oxygen, so an input is amiss.
+func alveolarCO2(sc *scene) bool { return lungCO2(sc) && sc.alveolarRoom() }
+func alveolarO2(sc *scene) bool  { return sc.lungO2 && sc.alveolarRoom() }
+
+func (sc *scene) alveolarRoom() bool {
+	return aboutPA(sc.v.Val(FiO2), sc.a.PB, sc.v.Val(PaCO2)) > leastAlveolar
+}
+
+// leastAlveolar is an alveolar PO2, mmHg, that nobody was found alive below.
+const leastAlveolar = 10.0
+
 func adultRules(sc *scene) bool {
 	return sc.a.Ranges.Responses && sc.a.Triple.known() && sc.a.Blood != Cord
 }
@@ -48,10 +60,10 @@ var derivations = []derivation{
 	{"sbe", "mmol/L", []Quantity{PHq, PaCO2}, func(v []float64) float64 {
 		return standardBaseExcess(v[0], bicarbonate(v[0], v[1]))
 	}, always},
-	{"pao2_alveolar", "mmHg", []Quantity{FiO2, PB, PaCO2}, func(v []float64) float64 { return aboutPA(v[0], v[1], v[2]) }, lungCO2},
-	{"aa", "mmHg", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return alveolarArterial(aboutPA(v[0], v[1], v[2]), v[3]) }, lungO2},
-	{"a_over_a", "", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return arterialAlveolarRatio(aboutPA(v[0], v[1], v[2]), v[3]) }, lungO2},
-	{"resp_index", "", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return respiratoryIndex(aboutPA(v[0], v[1], v[2]), v[3]) }, lungO2},
+	{"pao2_alveolar", "mmHg", []Quantity{FiO2, PB, PaCO2}, func(v []float64) float64 { return aboutPA(v[0], v[1], v[2]) }, alveolarCO2},
+	{"aa", "mmHg", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return alveolarArterial(aboutPA(v[0], v[1], v[2]), v[3]) }, alveolarO2},
+	{"a_over_a", "", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return arterialAlveolarRatio(aboutPA(v[0], v[1], v[2]), v[3]) }, alveolarO2},
+	{"resp_index", "", []Quantity{FiO2, PB, PaCO2, PaO2}, func(v []float64) float64 { return respiratoryIndex(aboutPA(v[0], v[1], v[2]), v[3]) }, alveolarO2},
 	{"pf", "mmHg", []Quantity{PaO2, FiO2}, func(v []float64) float64 { return pfRatio(v[0], v[1]) }, lungO2},
 	{"pf_altitude_corrected", "mmHg", []Quantity{PaO2, FiO2, PB}, func(v []float64) float64 { return pfAtAltitude(pfRatio(v[0], v[1]), v[2]) },
 		func(sc *scene) bool { return sc.lungO2 && sc.a.Altitude >= altitudeShiftFrom }},

@@ -1,7 +1,6 @@
 package shorthand
 
 import (
-	"math"
 	"strings"
 
 	"galeward/physio"

@@ -1,8 +1,6 @@
 package shorthand
 
 import (
-	"math"
-
 	"galeward/physio"
 )
 

@@ -2,7 +2,6 @@ package shorthand
 
 import (
 	"math"
-	"sort"
 
 	"galeward/physio"
 )

@@ -4,7 +4,6 @@ import (
 	"context"
 	"encoding/json"
 	"net/http"
-	"sync/atomic"
 	"time"
 
 	"galeward/bot/store"
@@ -19,7 +18,6 @@ type health struct {
 	kind     string
 	adapters map[string]chatAdapter
 	warnings []string // about the store's settings, found at the start
-	stopping atomic.Bool
 }
 
 // guardedStore is the store with what is known of its outages.
@@ -71,9 +69,6 @@ func (h *health) state(ctx context.Context) state {
 	}
 	if !s.Ready {
 		s.Reason = "no platform is connected"
-	}
-	if h.stopping.Load() {
-		s.Ready, s.Reason = false, "stopping"
 	}
 	return s
 }

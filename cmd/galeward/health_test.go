@@ -31,7 +31,6 @@ func TestReadiness(t *testing.T) {
 	well, ill := platform{}, platform{errors.New("the token was refused")}
 	for name, c := range map[string]struct {
 		health         *health
-		stopping       bool
 		code           int
 		degraded       bool
 		says, mustName string
@@ -40,11 +39,9 @@ func TestReadiness(t *testing.T) {
 		"the store is down":     {health: &health{store: down, adapters: map[string]chatAdapter{"a": well}}, code: 200, degraded: true, says: "2026-01-02T03:04:05Z"},
 		"one platform of two":   {health: &health{store: up, adapters: map[string]chatAdapter{"a": well, "b": ill}}, code: 200, degraded: true, says: "token was refused"},
 		"no platform connected": {health: &health{store: up, adapters: map[string]chatAdapter{"b": ill}}, code: 503, degraded: true, says: "no platform"},
-		"stopping":              {health: &health{store: up, adapters: map[string]chatAdapter{"a": well}}, stopping: true, code: 503, says: "stopping"},
 		"a warning":             {health: &health{store: up, warnings: []string{"noeviction"}, adapters: map[string]chatAdapter{"a": well}}, code: 200, says: "noeviction"},
 	} {
 		c.health.kind = "redis"
-		c.health.stopping.Store(c.stopping)
 		w := httptest.NewRecorder()
 		c.health.ready(w, httptest.NewRequest("GET", "/readyz", nil))
 		var s state

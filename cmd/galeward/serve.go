@@ -136,7 +136,6 @@ func (s *service) serve(ctx context.Context) error {
 // drain time. What platforms send meanwhile they send again to another process.
 func (s *service) stop() error {
 	begun := time.Now()
-	s.health.stopping.Store(true)
 	s.log.Info("stopping")
 	ctx, cancel := context.WithTimeout(context.Background(), s.drain)
 	defer cancel()

@@ -36,6 +36,7 @@ const usualLine = "7.27/72/54/32 fio2 40"
 // medians, and the median of ours.
 func ratio(b *testing.B, ours, reference func()) {
 	b.Helper()
+	tune()
 	ours()
 	reference() // both are warm
 	var mine, theirs []time.Duration
@@ -124,6 +125,7 @@ func ran(b *testing.B, path string, args ...string) {
 // constant. Both are asked by several at once; the metric is their throughput,
 // ours over the reference's.
 func BenchmarkSlackCommandAgainstConstant(b *testing.B) {
+	tune()
 	redis := storetest.Redis(b)
 	s, err := redisstore.Open(redisstore.Options{Addrs: []string{redis.Addr()}})
 	if err != nil {

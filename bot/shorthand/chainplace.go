@@ -10,48 +10,53 @@ import (
 // its percent sign or its size say that it is none of that kind.
 func (c *chainReader) place(t *token, spaced bool) bool {
 	r := c.r
-	order := r.order()
-	q := physio.Quantity(255)
-	if c.slot < len(order) {
-		q = order[c.slot]
-	}
-	if q != 255 && c.repeats(t, q) {
+	q, has := c.current()
+	if has && c.repeats(t, q) {
 		c.twice(t, q)
 		return true
 	}
-	for q != 255 && r.raw[q] != nil {
+	for has && r.raw[q] != nil {
 		c.slot++
-		q = 255
-		if c.slot < len(order) {
-			q = order[c.slot]
-		}
+		q, has = c.current()
 	}
+	isSat := has && q == physio.SaO2
 	switch {
-	case t.percent && q != physio.SaO2:
-		return c.percent(t, q, spaced)
+	case t.percent && !isSat:
+		return c.percent(t, q, has, spaced)
 	case t.percent && spaced:
 		return false // its role is weighed with the oxygen
-	case t.sign != 0 && c.filled >= 3 && q != physio.BE && q != physio.HCO3:
+	case t.sign != 0 && c.filled >= 3 && !(has && (q == physio.BE || q == physio.HCO3)):
 		return c.baseExcess(t)
-	case q == 255:
+	case !has:
 		return false
-	case q == physio.SaO2:
+	case isSat:
 		return c.saturation(t, spaced)
 	}
+	c.keep(t, q)
+	return true
+}
+
+// current is the quantity whose turn it is in the channel's order.
+func (c *chainReader) current() (physio.Quantity, bool) {
+	if o := c.r.order(); c.slot < len(o) {
+		return o[c.slot], true
+	}
+	return 0, false
+}
+
+// keep puts the number in the place of q.
+func (c *chainReader) keep(t *token, q physio.Quantity) {
+	r := c.r
 	u, n := r.unitAfter(c.i)
 	raw := &rawValue{v: t.v, decimals: t.decimals, typed: t.typed()}
-	if q == physio.BE || q == physio.HCO3 {
-		raw.v = t.signed()
-		if t.sign == '-' && q == physio.HCO3 && t.v > 12 && c.i > 0 && (c.dashes()) {
-			raw.v = t.v
-		}
+	separated := q == physio.HCO3 && t.v > 12 && c.dashes()
+	if t.sign == '-' && (q == physio.BE || q == physio.HCO3) && !separated {
+		raw.v = -t.v
 	}
 	if u == uKPa || u == uMmHg {
 		raw.unit = u
 	}
-	if q == physio.HCO3 && t.v <= 12 && t.sign != '-' {
-		r.smallPlace = true
-	}
+	r.smallPlace = r.smallPlace || q == physio.HCO3 && t.v <= 12 && t.sign != '-'
 	r.take(c.i, n)
 	r.last = c.i
 	if !r.rangeMark(q, c.i) {
@@ -60,15 +65,15 @@ func (c *chainReader) place(t *token, spaced bool) bool {
 	c.i += n
 	c.slot++
 	c.filled++
-	return true
 }
 
-// repeats says that the number stands in its place although a label in front
-// of the chain said the quantity already: "co2 58, 7.28/58/62/27". A label
+// repeats says that the number stands in its place although a label outside
+// the chain said the quantity too: "co2 58, 7.28/58/62/27". A label
 // takes a place out of the chain only when the chain is too short to hold it.
 func (c *chainReader) repeats(t *token, q physio.Quantity) bool {
 	have := c.r.raw[q]
-	if have == nil || !have.labelled || have.at >= c.r.first || q == physio.PHq || t.percent {
+	inside := have != nil && have.at > c.r.first && have.at < c.i
+	if have == nil || !have.labelled || inside || q == physio.PHq || t.percent {
 		return false
 	}
 	return have.v == t.v || c.whole
@@ -86,7 +91,8 @@ func (c *chainReader) twice(t *token, q physio.Quantity) {
 		return
 	}
 	delete(r.raw, q)
-	r.ask(Question{Code: AskTwice, Quantity: q, Typed: t.typed(), Choices: []Choice{choose(q, t.v), choose(q, have.v)}})
+	r.ask(Question{Code: AskTwice, Quantity: q, Typed: t.typed(), Choices: []Choice{
+		choose(q, r.canonical(q, &rawValue{v: t.v})), choose(q, r.canonical(q, have))}})
 }
 
 // dashes says that hyphens separate the values: an earlier one stood before
@@ -102,9 +108,9 @@ func (c *chainReader) dashes() bool {
 
 // percent takes a percentage that stands in another place than the
 // saturation's: in the place of PaO2 it is a saturation, and said.
-func (c *chainReader) percent(t *token, q physio.Quantity, spaced bool) bool {
+func (c *chainReader) percent(t *token, q physio.Quantity, has, spaced bool) bool {
 	r := c.r
-	if q != physio.PaO2 && q != physio.PaCO2 || c.filled < 2 && q == physio.PaO2 && r.raw[physio.PaCO2] == nil || t.v < 40 {
+	if !has || q != physio.PaO2 && q != physio.PaCO2 || c.filled < 2 && q == physio.PaO2 && r.raw[physio.PaCO2] == nil || t.v < 40 {
 		return false
 	}
 	if q == physio.PaO2 && r.raw[physio.SaO2] == nil {
@@ -149,46 +155,53 @@ func (c *chainReader) baseExcess(t *token) bool {
 // saturation weighs a number in the fifth place: a saturation, a base excess,
 // or an FiO2 that is asked about.
 func (c *chainReader) saturation(t *token, spaced bool) bool {
-	r := c.r
-	switch {
+	r, v := c.r, t.v
+	if v >= 0.21 && v <= 1 && t.decimals == 1 && t.sign == 0 && !spaced && r.fitsBE(v) && r.otherFiO2(c.i) {
+		r.note(NoteBEPlace, physio.BE, t.typed(), v)
+		return c.baseExcess(t)
+	}
+	joined := c.i > 0 && r.t[c.i-1].sep("/|\\")
+	switch fits := r.satFits(v / 100); {
 	case c.bicarbonateAfterBE(t):
 		return true
-	case t.percent && !r.satFits(t.v/100) && t.v >= 21 && (t.v < 60 || spaced || !r.t[c.i-1].sep("/|\\")):
+	case t.percent && !fits && v >= 21 && (v < 60 || spaced || !joined):
 		return false // FiO2, by its sign
-	case t.v >= 50 && t.v <= 100 && (r.satFits(t.v/100) || t.v >= 86 && !spaced) || t.v > 20 && r.satFits(t.v/100):
-		if spaced && r.typicalFiO2(t.v) && !t.percent {
+	case v > 20 && v <= 100 && (fits || v >= 86 && !spaced):
+		if spaced && r.typicalFiO2(v) && !t.percent {
 			return false
 		}
 		r.keepSat(c.i, "")
 		c.slot++
 		c.filled++
 		return true
-	case t.v <= 1 && t.decimals >= 2 && t.v > 0.4 && r.satFits(t.v):
+	case v <= 1 && v > 0.4 && t.decimals >= 2 && r.satFits(v):
 		r.take(c.i, 0)
 		r.last = c.i
-		r.sample().Set(physio.SaO2, t.v)
+		r.sample().Set(physio.SaO2, v)
 		return true
-	case t.v >= 0.21 && t.v <= 1 && t.decimals > 0 && t.sign == 0:
-		if spaced || !r.fitsBE(t.v) || t.decimals > 1 {
-			return false // FiO2, by its size
-		}
-		r.take(c.i, 0)
-		r.last = c.i
-		r.ask(Question{Code: AskFifth, Quantity: physio.FiO2, Typed: t.typed(), Value: t.v, Choices: []Choice{
-			withWord(choose(physio.FiO2, t.v), "FiO2"), withWord(choose(physio.BE, t.v), "BE")}})
+	case v >= 0.21 && v <= 1 && t.decimals > 0 && t.sign == 0:
+		c.smallFraction(t, spaced)
 		return false
-	case t.v <= 20 && t.decimals <= 1 && r.raw[physio.BE] == nil && r.fitsBE(t.signed()) && !spaced:
-		r.raw[physio.BE] = &rawValue{v: t.signed(), decimals: t.decimals, typed: t.typed()}
+	case v <= 20 && t.decimals <= 1 && r.raw[physio.BE] == nil && r.fitsBE(t.signed()) && !spaced:
 		r.note(NoteBEPlace, physio.BE, t.typed(), t.signed())
-		r.take(c.i, 0)
-		r.last = c.i
-		c.filled++
-		return true
-	case !spaced && t.v >= 21 && t.v <= 100 && t.decimals == 0:
+		return c.baseExcess(t)
+	case !spaced && v >= 21 && v <= 100 && t.decimals == 0:
 		r.askFifth(c.i)
-		return false
 	}
 	return false
+}
+
+// smallFraction asks whether 0.4 in the fifth place is FiO2 or a base excess
+// that it fits; any other fraction is left to be read as FiO2.
+func (c *chainReader) smallFraction(t *token, spaced bool) {
+	r := c.r
+	if spaced || !r.fitsBE(t.v) || t.decimals > 1 {
+		return
+	}
+	r.take(c.i, 0)
+	r.last = c.i
+	r.ask(Question{Code: AskFifth, Quantity: physio.FiO2, Typed: t.typed(), Value: t.v, Choices: []Choice{
+		withWord(choose(physio.FiO2, t.v), "FiO2"), withWord(choose(physio.BE, t.v), "BE")}})
 }
 
 // bicarbonateAfterBE takes a bicarbonate that follows a base excess in the

@@ -61,6 +61,23 @@ func (r *reader) guard() {
 	})
 	for i := range r.g.Questions {
 		r.g.Questions[i].Choices = possibleChoices(r.g.Questions[i].Choices)
+		if r.h.Units == KPa {
+			r.inKPa(&r.g.Questions[i])
+		}
+	}
+}
+
+// inKPa names pressures in the channel's unit, except a choice that says that
+// the typed number was meant in mmHg.
+func (r *reader) inKPa(q *Question) {
+	for i := range q.Choices {
+		c := &q.Choices[i]
+		for _, k := range []physio.Quantity{physio.PaCO2, physio.PaO2, physio.EtCO2, physio.TcCO2} {
+			x, ok := c.Set.Get(k)
+			if ok && c.Word == choiceWord(k, x) && c.Word != q.Typed+" "+string(MmHg) {
+				c.Word = number(physio.MmHg(x).KPa()) + " " + string(KPa)
+			}
+		}
 	}
 }
 

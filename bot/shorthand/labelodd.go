@@ -17,9 +17,13 @@ func (r *reader) rangeMark(q physio.Quantity, j int) bool {
 		code = AskUnderRange
 	}
 	ask := Question{Code: code, Quantity: q, Typed: t.typed()}
-	if q.Possible(t.v) {
-		ask.Value = t.v
-		ask.Choices = []Choice{withWord(choose(q, t.v), "use "+t.s), {Word: "leave out", Drop: []physio.Quantity{q}}}
+	raw := &rawValue{v: t.v}
+	if u, _ := r.unitAfter(j); u == uKPa || u == uMmHg {
+		raw.unit = u
+	}
+	if x := r.canonical(q, raw); q.Possible(x) {
+		ask.Value = x
+		ask.Choices = []Choice{withWord(choose(q, x), "use "+t.s), {Word: "leave out", Drop: []physio.Quantity{q}}}
 	}
 	if t.than == '<' && q == physio.PaO2 {
 		ask.Choices = []Choice{{Word: "venous", Blood: physio.Venous}, {Word: "sample fault", Drop: []physio.Quantity{q}}}
@@ -50,6 +54,9 @@ func (r *reader) oxygenNumber(i, j int, u string, n int) bool {
 	case u == uLitre || u == uLPM:
 		r.take(j, n)
 		r.oxygen = append(r.oxygen, saying{at: j, flow: t.v, hasFlow: true})
+	case u == "" && t.v >= 1 && t.v <= 15 && t.decimals == 0 && r.wholeGas():
+		r.take(j, n) // beside a whole gas a small "o2 3" is no PaO2
+		r.ask(*askFiO2(t.v, t.typed()))
 	case u == uPercent && t.v >= 86 && i < j:
 		r.take(j, n)
 		ask := Question{Code: AskPercent, Typed: t.typed(), Quantity: physio.SpO2, Choices: []Choice{
@@ -62,6 +69,16 @@ func (r *reader) oxygenNumber(i, j int, u string, n int) bool {
 		return false
 	}
 	return true
+}
+
+// wholeGas says that the line holds a chain of four or more values.
+func (r *reader) wholeGas() bool {
+	for i := range r.t {
+		if n, _ := chainAhead(r.t, i); n >= 4 && r.gasStart(i) {
+			return true
+		}
+	}
+	return false
 }
 
 // isTranscutaneous says that the line speaks of transcutaneous values.

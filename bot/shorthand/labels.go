@@ -232,32 +232,30 @@ func (r *reader) keepRaw(q physio.Quantity, i, j int, u string, n int, deficit b
 	if r.rangeMark(q, j) {
 		return
 	}
-	v := t.signed()
-	if q != physio.BE {
-		v = t.v
-	}
-	if deficit {
-		if t.sign == '-' {
-			r.note(NoteSign, physio.BE, t.typed(), -t.v)
-		}
-		v = -t.v
-		if t.v == 0 {
-			v = 0
-		}
-	}
-	raw := &rawValue{v: v, labelled: true, decimals: t.decimals, typed: t.typed(), at: j}
+	raw := &rawValue{v: r.labelledSign(q, t, deficit), labelled: true, decimals: t.decimals, typed: t.typed(), at: j}
 	if u == uKPa || u == uMmHg {
 		raw.unit = u
 	}
-	if have := r.raw[q]; have != nil && have.v != v {
-		if r.claims {
-			r.raw[q] = raw
-			return
-		}
-		a, b := have.v, v
-		delete(r.raw, q)
-		r.ask(Question{Code: AskTwice, Quantity: q, Typed: t.typed(), Choices: []Choice{choose(q, b), choose(q, a)}})
+	have := r.raw[q]
+	if have == nil || have.v == raw.v || r.claims {
+		r.raw[q] = raw
 		return
 	}
-	r.raw[q] = raw
+	delete(r.raw, q)
+	r.ask(Question{Code: AskTwice, Quantity: q, Typed: t.typed(), Choices: []Choice{
+		choose(q, r.canonical(q, raw)), choose(q, r.canonical(q, have))}})
+}
+
+// labelledSign gives the number its sign: only a base excess has one, and a
+// deficit turns it.
+func (r *reader) labelledSign(q physio.Quantity, t *token, deficit bool) float64 {
+	switch {
+	case q != physio.BE:
+		return t.v
+	case !deficit:
+		return t.signed()
+	case t.sign == '-':
+		r.note(NoteSign, physio.BE, t.typed(), -t.v)
+	}
+	return 0 - t.v
 }

@@ -37,7 +37,7 @@ var ladder = []lineTest{
 	{"", "7.31/55 torr/68 torr/27 35%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.35"},
 	{"", "7.31/7.4/68/27 35%", "ph=7.31 paco2=55.5 pao2=68 hco3=27 fio2=0.35 !mixed_units:paco2:7.4=55.5"},
 	{"", "7.31/55/9.1/27 35%", "ph=7.31 paco2=55 hco3=27 fio2=0.35 ?pao2[91 mmHg|9.1 kPa]"},
-	{"K", "7.31/7.4/68/27 35%", "ph=7.31 paco2=55.5 hco3=27 fio2=0.35 ?pao2[51 mmHg|68 mmHg]"},
+	{"K", "7.31/7.4/68/27 35%", "ph=7.31 paco2=55.5 hco3=27 fio2=0.35 ?pao2[6.8 kPa|68 mmHg]"},
 	// impossible numbers
 	{"", "7.31/550/68/27", "ph=7.31 pao2=68 hco3=27 ?paco2[55 mmHg]"},
 	{"", "7.31/55/680/27 40%", "ph=7.31 paco2=55 pao2=680 hco3=27 fio2=0.4 ?pao2_ceiling[68 mmHg|more oxygen|680 mmHg]"},

@@ -130,6 +130,7 @@ func byNumber(v float64, said string, q *Question) (*Choice, bool) {
 		c.Set.Each(func(quantity physio.Quantity, x float64) {
 			percent := quantity.Info().Unit == "fraction"
 			same := math.Abs(x-v) < 0.005*math.Max(1, math.Abs(v)) && !(percent && strings.HasSuffix(said, "%"))
+			same = same || quantity.Info().Unit == "mmHg" && math.Abs(physio.KPa(v).MmHg()-x) < 0.5 // answered in kPa
 			same = same || percent && !strings.HasSuffix(said, "l") && math.Abs(100*x-v) < 0.5
 			if strings.HasSuffix(said, "l") && quantity != physio.OxygenFlow {
 				same = false

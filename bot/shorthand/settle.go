@@ -90,12 +90,7 @@ func (r *reader) likely(q physio.Quantity) (float64, bool) {
 	if v == nil {
 		return 0, false
 	}
-	x := v.v
-	co2 := r.raw[physio.PaCO2]
-	kpa := v.unit == uKPa || v.unit == "" && (r.h.Units == KPa && x < 27 || x < 10 || q == physio.PaO2 && x < 24 && co2 != nil && co2.v < 14)
-	if kpa && q != physio.PHq {
-		x = physio.KPa(x).MmHg()
-	}
+	x := r.canonical(q, v)
 	if q == physio.PHq && x >= 65 {
 		slips, _ := phSlips(x, v.typed)
 		if len(slips) == 0 {
@@ -104,6 +99,20 @@ func (r *reader) likely(q physio.Quantity) (float64, bool) {
 		x = slips[0]
 	}
 	return x, q.Possible(x)
+}
+
+// canonical gives a raw pressure in mmHg by the unit that it most likely has;
+// other values are what they are.
+func (r *reader) canonical(q physio.Quantity, v *rawValue) float64 {
+	if q != physio.PaCO2 && q != physio.PaO2 || v.unit == uMmHg {
+		return v.v
+	}
+	co2 := r.raw[physio.PaCO2]
+	small := v.v < 10 || r.h.Units == KPa && v.v < 27 || q == physio.PaO2 && v.v < 24 && co2 != nil && co2.v < 14
+	if v.unit == uKPa || small {
+		return physio.KPa(v.v).MmHg()
+	}
+	return v.v
 }
 
 // likelyValues collects the likely pH, PaCO2 and PaO2.

@@ -20,7 +20,7 @@ var valueRows = []row{
 	{label(physio.TotalCO2), "tco2, total co2, totalco2, ttco2, ctco2, total carbon dioxide, chem co2, chemistry co2, serum co2, bmp co2"},
 	{label(physio.BE), "be, sbe, abe, base excess, base ex, bxs, bx, base xs, beecf, be ecf, beb, be b, base, b e, exceso de base, baseexzess, basenexzess, cbase, ebe, excess"},
 	{entry{sense: senseLabel, q: physio.BE, number: -1}, "bd, base def, base deficit, basedeficit, deficit, def, base d, bdef"},
-	{label(physio.SaO2), "sao2, sa02, sat, sats, so2, o2 sat, o2sat, o2 sats, o2sats, saturation, saturations, s02, hbo2, o2hb, satting, sattin, sating, fo2hb, so2c, satn, sattigung, saturating, abg sat"},
+	{label(physio.SaO2), "sao2, sa02, sato2, sat o2, sat, sats, so2, o2 sat, o2sat, o2 sats, o2sats, saturation, saturations, s02, hbo2, o2hb, satting, sattin, sating, fo2hb, so2c, satn, sattigung, saturating, abg sat"},
 	{label(physio.SpO2), "spo2, sp02, spo, pulse ox, pulseox, pox, oximeter, sat probe, oximetry, spo2 now, pulse oximetry, pulse oximeter, spo2s"},
 	{weakLabel(physio.SpO2Pre), "pre"},
 	{weakLabel(physio.SpO2Post), "post"},

@@ -107,7 +107,7 @@ func (sc *scene) ranges() {
 	age, _ := sc.v.Get(Age)
 	sc.a.Ranges = rangesFor(sc.a.Population, age, sc.s.Trimester, sc.a.Altitude)
 	if sc.a.Blood == Cord {
-		sc.a.Ranges = cordRanges
+		sc.a.Ranges = cordRangesOf(sc.s.Site)
 	}
 }
 

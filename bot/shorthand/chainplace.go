@@ -90,6 +90,10 @@ func (c *chainReader) twice(t *token, q physio.Quantity) {
 	if have.v == t.v {
 		return
 	}
+	if r.claims { // the gas counts, not what is said of it
+		r.raw[q] = &rawValue{v: t.v, decimals: t.decimals, typed: t.typed()}
+		return
+	}
 	delete(r.raw, q)
 	r.ask(Question{Code: AskTwice, Quantity: q, Typed: t.typed(), Choices: []Choice{
 		choose(q, r.canonical(q, &rawValue{v: t.v})), choose(q, r.canonical(q, have))}})

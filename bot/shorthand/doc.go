@@ -4,6 +4,15 @@
 //
 // # What lives here
 //
+// Parse is the one way in. A message is folded to plain text (fold.go),
+// searched for identifiers (identify.go), cut into tokens (lex.go), parted into
+// a clause of an aim or a what-if and into gases (clause.go, segment.go), and
+// each gas is read by labels, settings, the chain of unlabelled values and the
+// sayings on oxygen (reader.go lists the steps). The values of the gas are
+// weighed last: every way to read them is a candidate, and one measure
+// (score.go) compares them; decide.go turns its answer into use, note or
+// question.
+//
 // The lexer with positions, the one vocabulary table (spellings, accepted
 // units), the reading of unlabelled values by order, the comparison of two
 // candidate readings, and the refusal of identifiers. A doubt climbs one

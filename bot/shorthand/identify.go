@@ -29,7 +29,9 @@ var (
 	lastFirst  = regexp.MustCompile(`\b([A-Z][a-z'-]{1,}|[A-Z]{3,}), ?([A-Z][a-z'-]{1,}|[A-Z]{3,}|[A-Z]\b)`)
 	twoNames   = regexp.MustCompile(`\b([A-Z][a-z'-]{1,}|[A-Z]\.?) ([A-Z][a-z'-]{2,})[ ,:;-]+`)
 	initials   = regexp.MustCompile(`(?i:\b(?:room|rm|bed|bay|rm#|initials?)) *#?:? *[0-9]{0,4}[a-z]? *[,:-]? *([A-Z]\.? ?[A-Z]\.?)(?:[^A-Za-z0-9.+]|$)`)
-	bedName    = regexp.MustCompile(`(?i:\b(?:room|rm|bed|bay|b)) *#?[0-9]{1,4}[a-z]?[ ,:-]+([A-Z][a-z'-]{2,})[ ,:-]+(?:(?i:ph|abg|gas)|[67][.,]?\d)`)
+	dotted     = regexp.MustCompile(`(?:^|[\s(])([A-Z]\.\s?[A-Z]\.)(?:[\s,):]|$)`)
+	localPhone = regexp.MustCompile(`(?i)\b(call|reach|contact|text|me at|number)\b\D{0,14}\d{3}-\d{4}\b`)
+	bedName    = regexp.MustCompile(`(?i:\b(?:room|rm|bed|bay|b)) *#?[0-9]{1,4}[a-z]?[ ,:(-]+([A-Z][a-z'-]{2,})[ ,:)-]+(?:(?i:ph|abg|gas)|[67][.,]?\d)`)
 	ptName     = regexp.MustCompile(`\b(?i:pt|patient|baby|bb|infant of|mother of|baby of) ([A-Z][a-z'-]{2,})\b`)
 	street     = regexp.MustCompile(`(?i)\b\d{1,5} (?:[a-z]+ ){1,3}(street|st|avenue|ave|road|rd|lane|ln|drive|dr|boulevard|blvd|court|crescent|way|strasse)\b`)
 	zipCode    = regexp.MustCompile(`(?i)\b(zip|post ?code|postal code|plz)[\s:]*[a-z0-9]{3,}`)
@@ -41,7 +43,7 @@ const months = `(jan|feb|mar|apr|may|jun|jul|aug|sept?|oct|nov|dec|january|febru
 
 // identifiers are the rules that need no further look at the words.
 var identifiers = []*regexp.Regexp{strongID, weakID, numberSign, email, longDigits, phone, phoneWord,
-	socialNo, ninePair, yearDate, monthDate, bornWord, street, zipCode}
+	socialNo, localPhone, ninePair, yearDate, monthDate, bornWord, street, zipCode}
 
 // identified says what in the text is not processed at all.
 func identified(s string) Refused {
@@ -89,7 +91,7 @@ func named(s string) bool {
 			return true
 		}
 	}
-	for _, r := range []*regexp.Regexp{bedName, ptName, initials} {
+	for _, r := range []*regexp.Regexp{bedName, ptName, initials, dotted} {
 		for _, m := range r.FindAllStringSubmatch(s, 8) {
 			if !known(m[1]) {
 				return true

@@ -213,5 +213,5 @@ func (r *reader) rangeBehind(j int) bool {
 		return false
 	}
 	a, b := &r.t[j], &r.t[j+2]
-	return b.v > a.v && b.v < 1.5*a.v && a.decimals == b.decimals && a.decimals == 0 && (j+3 >= len(r.t) || !r.t[j+3].sep("-/"))
+	return b.v > a.v && b.v <= 3*a.v && a.decimals == b.decimals && a.decimals == 0 && (j+3 >= len(r.t) || !r.t[j+3].sep("-/"))
 }

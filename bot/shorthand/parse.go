@@ -97,6 +97,7 @@ func (p *parser) read() {
 	}
 	claims := p.line.Intent == IntentCheck
 	parts, list := split(t)
+	parts = parts[:min(len(parts), mostGases)]
 	p.line.List = list
 	for i := range parts {
 		parts[i].mixed, parts[i].claims = p.mixed, claims
@@ -118,6 +119,10 @@ func oneSlash(s string) string {
 	}
 	return strings.ReplaceAll(s, "//", "/")
 }
+
+// mostGases is more than any list of beds or series holds; what is pasted
+// beyond it is not read.
+const mostGases = 100
 
 // relate says how the gases belong to each other and to the thread.
 func (p *parser) relate(parts []segment, t []token) {

@@ -61,10 +61,12 @@ func (p *parser) byMeaning(said string, q *Question) (*Choice, bool) {
 	if len(coreStarts(t)) > 0 {
 		return nil, false
 	}
-	if n := loneNumber(t); n != nil {
-		if c, ok := byNumber(n.v, n.typed(), q); ok {
-			return c, true
+	if holdsNumber(t) { // a number that is no choice is a new value
+		n := loneNumber(t)
+		if n == nil {
+			return nil, false
 		}
+		return byNumber(n.v, n.typed(), q)
 	}
 	var found *Choice
 	for i := range t {
@@ -103,6 +105,15 @@ func onlyIn(q *Question, k physio.Quantity) bool {
 		}
 	}
 	return n == 1
+}
+
+func holdsNumber(t []token) bool {
+	for i := range t {
+		if t[i].kind == tokNumber {
+			return true
+		}
+	}
+	return false
 }
 
 // loneNumber is the number of an answer that holds just one.

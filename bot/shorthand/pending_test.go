@@ -46,6 +46,8 @@ func TestOneWordAnswersAQuestion(t *testing.T) {
 		{"7.28/58/62/27/40", "fio2", "picked FiO2"},
 		{"7.28/58/62/27/40", "sat", "picked saturation"},
 		{"7.28/58/62/27 28", "rate", "picked rate"},
+		{"7.28/58/62/27 28", "rr 20", "rr=20"},
+		{"7.28/58/62/27 28", "the rate is 28", "rr=28"},
 		{"7.29/67/55/31 2L NC now on 28% VM", "2L", "picked 2 L"},
 		{"7.29/67/55/31 2L NC now on 28% VM", "the mask, 28%", "picked 28 %"},
 		{"7.34/50/40/26", "no idea what you mean by that", "unclear"},

@@ -224,6 +224,8 @@ func (r *reader) marks() {
 			r.bed(i)
 		case t.is(senseSwallow):
 			r.swallow(i)
+		case t.kind == tokNumber && i+1 < len(r.t) && (r.t[i+1].word("am") || r.t[i+1].word("pm")):
+			r.halfDay(i)
 		case t.is(senseTime):
 			if r.g.Time == "" && weekday(t.s) != "" {
 				r.g.Time = weekday(t.s)
@@ -263,6 +265,22 @@ func weekday(s string) string {
 		return s
 	}
 	return ""
+}
+
+// halfDay takes 6 am and 11pm.
+func (r *reader) halfDay(i int) {
+	t := &r.t[i]
+	if t.v < 1 || t.v > 12 || t.decimals > 0 {
+		return
+	}
+	t.taken = true
+	h := int(t.v) % 12
+	if r.t[i+1].s == "pm" {
+		h += 12
+	}
+	if r.g.Time == "" {
+		r.g.Time = clockText(h, 0)
+	}
 }
 
 func (r *reader) clock(i int) {

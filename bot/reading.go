@@ -27,12 +27,23 @@ func (t *turn) reading() {
 		return
 	case !hasLast:
 		c.question = &asked{id: askParent, text: askParentText}
-	case gas.Follow == shorthand.FollowNow:
+	case gas.Follow == shorthand.FollowNow && measured(&gas.Sample):
 		t.inherit(c, last)
 	default:
 		t.complete(c, last)
 	}
 	t.deliverReading(c)
+}
+
+// measured says that a follow-up brings a measurement: one that brings settings
+// only completes the gas that is there.
+func measured(s *physio.Sample) bool {
+	for _, q := range []physio.Quantity{physio.PHq, physio.PaCO2, physio.PaO2, physio.SpO2, physio.SaO2, physio.EtCO2, physio.TcCO2} {
+		if s.Has(q) {
+			return true
+		}
+	}
+	return false
 }
 
 // deliverReading assesses, composes and remembers.
@@ -181,7 +192,7 @@ func (t *turn) complete(c *composer, last memory.Entry) {
 	if oxygenSaid && !add.Sample.Has(physio.FiO2) {
 		g.Sample.Drop(physio.FiO2)
 	}
-	if add.Follow == shorthand.FollowAddition {
+	if add.Follow != shorthand.FollowCorrection {
 		if replaced := replacedSettings(&g.Sample, &add.Sample); replaced != "" {
 			c.notices = append(c.notices, replaced)
 		}
@@ -196,7 +207,7 @@ func (t *turn) complete(c *composer, last memory.Entry) {
 	}
 	g.Notes = append(append([]shorthand.Note(nil), g.Notes...), add.Notes...)
 	g.Questions = add.Questions
-	g.Follow = add.Follow
+	g.Follow = shorthand.FollowAddition
 	if add.Follow == shorthand.FollowCorrection {
 		c.notices = append(c.notices, earlierVoid)
 	}

@@ -98,8 +98,11 @@ func (c *composer) highCO2() string {
 		return "high, chronic pattern" + c.limitWords() + "."
 	}
 	level := "inadequate"
-	if v.Borderline {
+	switch {
+	case v.Borderline:
 		level = "borderline high"
+	case c.a.Triple.PH >= c.a.Ranges.PHLow:
+		level = "high, with pH in its range"
 	}
 	return level + c.limitWords() + "."
 }

@@ -356,7 +356,7 @@ func (sc *scene) efficiencyFromGas(aa Index) {
 		case aa.Value > sc.expectedAA().High:
 			o.Efficiency = Reduced
 		}
-		if ratio.Value < aaPoorAir {
+		if ratio.Value < sc.poorOnAir() {
 			o.Efficiency = Poor
 		}
 		return
@@ -370,6 +370,16 @@ func (sc *scene) efficiencyFromGas(aa Index) {
 	if !ratioOnly && pf.Value <= pfPoor {
 		o.Basis = "pf"
 	}
+}
+
+// poorOnAir is the a/A below which transfer on air is poor. A newborn's PaO2 of
+// 50 mmHg, inside his usual range, is an a/A of 0.49: his bound is the one that
+// adults have on oxygen.
+func (sc *scene) poorOnAir() float64 {
+	if !sc.adultScale() {
+		return aaPoorOxygen
+	}
+	return aaPoorAir
 }
 
 func (sc *scene) transfer(ratio, pf float64, ratioOnly bool) Efficiency {

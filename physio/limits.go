@@ -1,7 +1,8 @@
 package physio
 
 // Every cut-off that a verdict uses stands in this file, with its unit, its
-// side and where it comes from.
+// side and where it comes from. The ranges of the populations stand in
+// population.go.
 
 // Degrees of a low PaO2 (mmHg): mild 60-79, moderate 40-59, severe below 40.
 // They belong to air at sea level; Oxygen studies, common practice.
@@ -24,7 +25,7 @@ const (
 	retainerTargetHigh = 0.92
 	pretermTargetLow   = 0.91 // NICE QS193
 	pretermTargetHigh  = 0.95
-	pretermPaO2High    = 80.0 // mmHg; above it hyperoxia is a caution, from memory
+	pretermPaO2High    = 80.0 // mmHg; above it hyperoxia (Huang 2017; a hospital's target ends at 9 kPa = 68)
 )
 
 // Efficiency of oxygenation.
@@ -61,14 +62,17 @@ const (
 )
 
 // defaultCritical are the critical limits of a house that has set none, after
-// Kost 1990, from memory.
+// Kost 1990, from memory; pH and PaCO2 are also those of a university
+// hospital's list (Iowa), which has PaO2 below 40. None was found for pregnancy.
 var defaultCritical = CriticalLimits{PHLow: 7.20, PHHigh: 7.60, PaCO2High: 70, PaO2Low: 45}
 
 // cordCritical: cord arterial pH 7.18 is usual; below 7.00 is not (common
 // practice).
 var cordCritical = CriticalLimits{PHLow: 7.00}
 
-// newbornCritical leaves out PaO2: a newborn's lower values are his range.
+// newbornCritical leaves out PaO2: a newborn's lower values are his range. A pH
+// down to 7.20-7.22 is accepted in the first days (Sweet 2013), where Iowa's
+// list of nurseries calls from 7.25; both call above a PaCO2 of 70.
 var newbornCritical = CriticalLimits{PHLow: 7.20, PHHigh: 7.60, PaCO2High: 70}
 
 // Acid-base tolerances.
@@ -129,13 +133,15 @@ const (
 	venousScreen = 45.0  // mmHg: a venous PCO2 below it makes hypercapnia unlikely (Kelly 2013)
 	tcMargin     = 7.5   // mmHg: agreement of transcutaneous CO2, from memory
 	aaImpossible = -10.0 // mmHg: a more negative A-a has a wrong input (sheet, section 3)
-	newbornAA    = 40.0  // mmHg on air, from memory
+	// newbornAA, mmHg on air: PaO2 60 and PaCO2 30 an hour after birth, as a
+	// textbook table of the healthy has it, are an A-a of 54.
+	newbornAA = 55.0
 
-	newbornPaO2         = 50.0 // mmHg: at or above it inside the usual newborn range, from memory
-	newbornPaO2Mild     = 40.0
-	newbornPaO2Moderate = 30.0
-	newbornSatMild      = 0.85
-	newbornSatModerate  = 0.75
+	newbornPaO2         = 50.0 // mmHg: at or above it inside the usual newborn range (Gomella; Huang 2017)
+	newbornPaO2Mild     = 40.0 // mmHg: below it a laboratory calls (Iowa)
+	newbornPaO2Moderate = 30.0 // mmHg, from memory
+	newbornSatMild      = 0.85 // lower arm of SUPPORT, 85-89 % (Ambalavanan 2015)
+	newbornSatModerate  = 0.75 // from memory
 )
 
 // Bounds of cautions.

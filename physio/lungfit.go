@@ -33,7 +33,7 @@ const (
 	dropStep       = 10.0 // mmHg
 	leastFiO2Range = 0.05 // between the points: below it shunt and drop are one
 	fitSaturation  = 0.98 // above it a saturation tells nothing
-	profile95      = 3.84 // rise of the sum of squares, chi-squared with one degree of freedom
+	refineRuns     = 400  // of the model, on the way downhill
 )
 
 // FitLung finds the model of two or more gases of one patient at different
@@ -44,7 +44,7 @@ func FitLung(points []LungGas) (LungModel, error) {
 	if err := checkPoints(points); err != nil {
 		return LungModel{}, err
 	}
-	f := lungFit{points: make([]LungGas, len(points))}
+	f := &lungFit{points: make([]LungGas, len(points))}
 	for i, p := range points {
 		f.points[i] = p.filledForFit()
 	}
@@ -87,12 +87,16 @@ func (g LungGas) filledForFit() LungGas {
 	return g
 }
 
+// lungFit is one search. It counts how often the model was run, so that a test
+// can hold the work to mostRuns.
 type lungFit struct {
 	points []LungGas
+	runs   int
 }
 
 // misfit gives the sum of squares of a pair, in measurement errors.
-func (f lungFit) misfit(shunt, drop float64) float64 {
+func (f *lungFit) misfit(shunt, drop float64) float64 {
+	f.runs++
 	var sum float64
 	for _, p := range f.points {
 		po2 := p.pao2Of(shunt, drop)
@@ -113,8 +117,8 @@ func (g LungGas) pao2Of(shunt, drop float64) float64 {
 }
 
 // solve searches a grid, which can not be trapped, refines its best pair, and
-// reads the spans off the grid.
-func (f lungFit) solve() (LungModel, error) {
+// walks from there to the ends of the spans.
+func (f *lungFit) solve() (LungModel, error) {
 	m := LungModel{Points: len(f.points)}
 	grid := f.grid()
 	best := grid[0]
@@ -129,7 +133,7 @@ func (f lungFit) solve() (LungModel, error) {
 	}
 	m.Shunt, m.Drop = Fraction(best.shunt), MmHg(best.drop)
 	m.Misfit = math.Sqrt(best.sum / float64(len(f.points)))
-	m.ShuntSpan, m.DropSpan = spans(grid, best)
+	m.ShuntSpan, m.DropSpan = f.spans(grid, best)
 	return m, nil
 }
 
@@ -138,7 +142,7 @@ type cell struct {
 	shunt, drop, sum float64
 }
 
-func (f lungFit) grid() []cell {
+func (f *lungFit) grid() []cell {
 	var cells []cell
 	for shunt := 0.0; shunt <= mostShunt; shunt += shuntStep {
 		for drop := 0.0; drop <= mostDrop; drop += dropStep {
@@ -149,12 +153,12 @@ func (f lungFit) grid() []cell {
 }
 
 // refine walks downhill from a pair (Nelder and Mead 1965) inside the limits.
-func (f lungFit) refine(from cell) (cell, error) {
+func (f *lungFit) refine(from cell) (cell, error) {
 	pair := func(x []float64) (shunt, drop float64) {
 		return min(max(x[0], 0), mostShunt), min(max(x[1]*100, 0), mostDrop)
 	}
 	problem := optimize.Problem{Func: func(x []float64) float64 { return f.misfit(pair(x)) }}
-	settings := &optimize.Settings{MajorIterations: 200}
+	settings := &optimize.Settings{MajorIterations: 200, FuncEvaluations: refineRuns}
 	result, err := optimize.Minimize(problem, []float64{from.shunt, from.drop / 100}, settings, &optimize.NelderMead{SimplexSize: 0.02})
 	if result == nil {
 		return cell{}, err
@@ -166,19 +170,6 @@ func (f lungFit) refine(from cell) (cell, error) {
 	}
 	shunt, drop := pair(result.X)
 	return cell{shunt, drop, result.F}, nil
-}
-
-// spans gives the ranges of both numbers over all pairs that fit nearly as well
-// as the best.
-func spans(grid []cell, best cell) (shunt, drop Span) {
-	shunt, drop = Span{best.shunt, best.shunt}, Span{best.drop, best.drop}
-	for _, c := range grid {
-		if c.sum <= best.sum+profile95 {
-			shunt = Span{min(shunt.Low, c.shunt), max(shunt.High, c.shunt)}
-			drop = Span{min(drop.Low, c.drop), max(drop.High, c.drop)}
-		}
-	}
-	return shunt, drop
 }
 
 // PaO2 gives the PaO2 that the model foresees for a gas, of which PaO2 and SaO2

@@ -105,7 +105,7 @@ func (c *composer) whyKeys(keys []string) []string {
 
 // whyLine prints one rule: equation, inputs, result, cut-off, source.
 func (c *composer) whyLine(key string) string {
-	rule, ok := physio.RuleFor(key)
+	rule, ok := c.a.RuleFor(key)
 	if !ok {
 		return ""
 	}

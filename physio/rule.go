@@ -1,5 +1,7 @@
 package physio
 
+import "fmt"
+
 // Rule is how a number or a verdict was made: the equation in the field's
 // notation, the cut-off it is held against, and the source. Package bot prints
 // it behind "why" with the inputs of the sample.
@@ -65,4 +67,19 @@ var rules = map[string]Rule{
 func RuleFor(key string) (Rule, bool) {
 	r, ok := rules[key]
 	return r, ok
+}
+
+// RuleFor gives the rule behind a key as it was applied here: the range of
+// PaCO2 and the scale of PaO2 are those of the population.
+func (a *Assessment) RuleFor(key string) (Rule, bool) {
+	rule, ok := RuleFor(key)
+	switch r := a.Ranges; {
+	case key == "paco2_range" && r.Source != "":
+		rule.Cutoff = fmt.Sprintf("%.0f to %.0f mmHg (%.1f to %.1f kPa)", r.PaCO2Low, r.PaCO2High, r.PaCO2Low/mmHgPerKPa, r.PaCO2High/mmHgPerKPa)
+		rule.Source = r.Source
+	case key == "pao2_scale" && !r.PaO2:
+		rule.Cutoff = fmt.Sprintf("%.0f, %.0f and %.0f mmHg", newbornPaO2, newbornPaO2Mild, newbornPaO2Moderate)
+		rule.Source = "newborn bounds, Huang 2017 and from memory"
+	}
+	return rule, ok
 }

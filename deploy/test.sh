@@ -71,6 +71,9 @@ grep -E '^(ok|\?)' "$scratch/tests"
 if grep -E '^ *--- SKIP' "$scratch/tests"; then fail "a test was skipped: every test must run here"; fi
 passed="$(grep -cE '^--- PASS' "$scratch/tests")"
 
+step "general reference libraries"
+deploy/reference.sh
+
 step "fuzz, $fuzz_seconds s a target"
 targets=0
 while IFS=: read -r file _ line; do

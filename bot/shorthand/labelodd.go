@@ -99,6 +99,11 @@ func (r *reader) transcutaneous(i int) {
 	}
 	u, n := r.unitAfter(j)
 	r.take(j, n)
+	if u == uPercent { // no pressure: TC is the trach collar
+		r.oxygen = append(r.oxygen, saying{at: i, device: physio.TracheostomyMask})
+		r.sayFiO2(j, formOf(physio.FiO2, &r.t[j], u, true))
+		return
+	}
 	f := formOf(physio.TcCO2, &r.t[j], u, true)
 	r.ask(Question{Code: AskTc, Quantity: physio.TcCO2, Typed: r.t[j].typed(), Choices: []Choice{
 		withWord(choose(physio.TcCO2, f.v), "CO2"), withWord(choose(physio.TcO2, f.v), "O2")}})

@@ -72,6 +72,13 @@ var ladder = []lineTest{
 	{"", "7.31/55/62/27/0.4", "ph=7.31 paco2=55 pao2=62 hco3=27 ?fifth[FiO2|BE]"},
 	{"", "7.40/40/94/24 sat 79 ra", "ph=7.4 paco2=40 pao2=94 hco3=24 sao2=0.79 fio2=0.21 on:air ?sat_fit[exchanged|sat is off|PaO2 is off]"},
 	{"", "7.30/52/36/25 sat 66 spo2 96", "ph=7.3 paco2=52 pao2=36 hco3=25 sao2=0.66 spo2=0.96 ?venous[arterial|venous]"},
+	// a label outside the chain
+	{"", "7.31/55/68/27 co2 60", "ph=7.31 pao2=68 hco3=27 ?twice[55 mmHg|60 mmHg]"},
+	{"", "7.31/55/68/27 bicarb 27", "ph=7.31 paco2=55 pao2=68 hco3=27"},
+	{"", "7.31/co2 55/o2 68/27", "ph=7.31 paco2=55 pao2=68 hco3=27"},
+	{"", "co2 55 7.31/68/27", "ph=7.31 paco2=55 pao2=68 hco3=27"},
+	{"", "7.31/55 po2 68 hco3 27", "ph=7.31 paco2=55 pao2=68 hco3=27"},
+	{"", "7.31/55.2/68.4/26.9/0.3/91.2% 35%", "ph=7.31 paco2=55.2 pao2=68.4 hco3=26.9 be=0.3 sao2=0.912 fio2=0.35 !be_place:be:0.3=0.3"},
 }
 
 func TestLadder(t *testing.T) { runLines(t, ladder) }

@@ -12,8 +12,8 @@ func (r *reader) leftovers() {
 	}
 	for j := r.last + 1; j < len(r.t) && j <= r.last+3; j++ {
 		t := &r.t[j]
-		if j+1 < len(r.t) && r.t[j+1].is(senseSwallow) {
-			return // "2 mg": it belongs to what follows
+		if j+1 < len(r.t) && r.t[j+1].is(senseSwallow) || t.free() && r.joinedAhead(j) {
+			return // "2 mg", "60/40": it belongs to what follows
 		}
 		if u, _ := r.unitAfter(j); t.free() && u == "" && t.sign == 0 && t.than == 0 && t.decimals == 0 && !r.unknownBefore(j) {
 			r.bareNumber(j)

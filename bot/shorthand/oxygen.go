@@ -56,7 +56,11 @@ func (r *reader) litres(i int) {
 		return
 	}
 	r.take(i, n)
-	v := r.t[i].v
+	v := r.part(i)
+	if low, ok := r.lowerEnd(i); ok {
+		r.note(NoteRangeLow, physio.OxygenFlow, number(low)+"-"+r.t[i].s, low)
+		v = low
+	}
 	if !physio.OxygenFlow.Possible(v) {
 		r.ask(*askImpossible(physio.OxygenFlow, v, r.t[i].typed()))
 		return
@@ -66,6 +70,34 @@ func (r *reader) litres(i int) {
 		return
 	}
 	r.oxygen = append(r.oxygen, saying{at: i, flow: v, hasFlow: true})
+}
+
+// part reads the number at i, which may end a fraction: 1/2 L, 1 1/2 L.
+func (r *reader) part(i int) float64 {
+	v := r.t[i].v
+	if i < 2 || !r.t[i-1].sep("/") || !r.t[i-1].glued || !r.t[i-2].free() {
+		return v
+	}
+	top := &r.t[i-2]
+	if top.v >= v || v != 2 && v != 4 && v != 8 && v != 16 || top.decimals+r.t[i].decimals > 0 {
+		return v
+	}
+	top.used = true
+	v = top.v / v
+	if i >= 3 && r.t[i-3].free() && r.t[i-3].v <= 6 && r.t[i-3].decimals == 0 && !r.joined(i-3) && !(i >= 4 && r.t[i-4].free()) {
+		r.t[i-3].used = true
+		v += r.t[i-3].v
+	}
+	return v
+}
+
+// lowerEnd finds the lower end of a range that ends at i: 2-3 L, 40-50 %.
+func (r *reader) lowerEnd(i int) (float64, bool) {
+	if i < 2 || !r.t[i-1].sep("-") || !r.t[i-2].free() || r.t[i-2].v >= r.t[i].v || r.t[i-2].v < r.t[i].v/3 || r.joined(i-2) {
+		return 0, false
+	}
+	r.t[i-2].used = true
+	return r.t[i-2].v, true
 }
 
 // percentage reads a bare percentage: FiO2, or the saturation when it fits the
@@ -99,6 +131,10 @@ func (r *reader) percentage(i int) {
 		}
 	}
 	r.take(i, 0)
+	if low, ok := r.lowerEnd(i); ok && low >= 21 {
+		r.note(NoteRangeLow, physio.FiO2, number(low)+"-"+t.s, low/100)
+		v = low / 100
+	}
 	r.oxygen = append(r.oxygen, saying{at: i, fio2: math.Max(v, 0.21)})
 }
 

@@ -75,6 +75,15 @@ var oxygenLines = []lineTest{
 	{"", "7.31/55/68/27 was on 50% now 35%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.5 !fio2_at_draw:fio2:=0.5"},
 	{"", "7.31/55/68/27 went from 35% to 50%", "ph=7.31 paco2=55 pao2=68 hco3=27 ?which_at_draw[35 %|50 %]"},
 	{"", "7.31/55/68/27 changed to 50% 10 min ago", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.5 said:just_changed"},
+	// fractions and ranges
+	{"", "7.31/55/68/27 1/2 L", "ph=7.31 paco2=55 pao2=68 hco3=27 flow=0.5 taken:cannula !cannula_taken:flow:0.5=0.5"},
+	{"", "7.31/55/68/27 1 1/2 L nc", "ph=7.31 paco2=55 pao2=68 hco3=27 flow=1.5 on:cannula"},
+	{"", "7.31/55/68/27 2-3L", "ph=7.31 paco2=55 pao2=68 hco3=27 flow=2 taken:cannula !cannula_taken:flow:2=2 !range_low:flow:2-3=2"},
+	{"", "7.31/55/68/27 40-50%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.4 !range_low:fio2:40-50=0.4"},
+	{"", "7.31/55/68/27 60/40 hfnc", "ph=7.31 paco2=55 pao2=68 hco3=27 on:high_flow ?flow_or_fio2[60 L/min|40 L/min]"},
+	{"", "7.31/55/68/27 TC 28%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.28 on:tracheostomy_mask"},
+	{"", "7.31/55/68/27 trach 35%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.35"},
+	{"", "7.31/55/68/27 O2 at 3", "ph=7.31 paco2=55 pao2=68 hco3=27 ?fio2[3 L/min|30 %]"},
 }
 
 func TestOxygen(t *testing.T) { runLines(t, oxygenLines) }

@@ -86,7 +86,7 @@ func (p *parser) namesGas() bool {
 
 // read reads the values of the message.
 func (p *parser) read() {
-	s, mixed := commas(untable(oneSlash(expand(p.rest, p.h.Words))))
+	s, mixed := commas(untable(oneSlash(expand(dropRanges(p.rest), p.h.Words))))
 	p.mixed = mixed
 	t := lex(s)
 	intent, clause, rest := p.clauses(t, s)

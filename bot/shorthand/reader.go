@@ -321,6 +321,8 @@ func (r *reader) swallow(i int) {
 	for j := i + 1; j < len(r.t) && j < i+6; j++ {
 		t := &r.t[j]
 		switch {
+		case t.kind == tokNumber && t.percent:
+			return
 		case t.kind == tokNumber && !r.gasStart(j):
 			t.taken = true
 			if j+2 >= len(r.t) || !r.t[j+1].sep("/:-") || r.t[j+2].kind != tokNumber || r.gasStart(j+2) {

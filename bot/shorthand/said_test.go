@@ -96,6 +96,17 @@ var saidLines = []lineTest{
 	{"", "values temp corrected, temp 33 7.36/44/80/25", "ph=7.36 paco2=44 pao2=80 hco3=25 temp=33 said:temp_corrected"},
 	{"", "spont breathing 7.36/44/80/25 40%", "ph=7.36 paco2=44 pao2=80 hco3=25 fio2=0.4 said:spont"},
 	{"", "hypoplastic left, hlhs 7.38/41/42/24 sat 78 30%", "ph=7.38 paco2=41 pao2=42 hco3=24 sao2=0.78 fio2=0.3 said:cyanotic"},
+	// pasted lists and print-outs
+	{"", "ICU 2: 7.31/55/68 35%\nICU 5: 7.40/40/90 ra", "list ph=7.31 paco2=55 pao2=68 fio2=0.35 bed:2 ph=7.4 paco2=40 pao2=90 fio2=0.21 on:air bed:5"},
+	{"", "A: 7.31/55/68 35%\nB: 7.40/40/90 ra", "list ph=7.31 paco2=55 pao2=68 fio2=0.35 bed:a ph=7.4 paco2=40 pao2=90 fio2=0.21 on:air bed:b"},
+	{"", "gas 1: 7.31/55/68 35%\ngas 2: 7.34/50/72 35%", "ph=7.31 paco2=55 pao2=68 fio2=0.35 ph=7.34 paco2=50 pao2=72 fio2=0.35"},
+	{"", "2 - 7.31/55/68 35%\n5 - 7.40/40/90 ra", "list ph=7.31 paco2=55 pao2=68 fio2=0.35 bed:2 ph=7.4 paco2=40 pao2=90 fio2=0.21 on:air bed:5"},
+	{"", "bed 2\npH 7.31\npCO2 55\npO2 68\nbed 5\npH 7.40\npCO2 40\npO2 90", "list ph=7.31 paco2=55 pao2=68 bed:2 ph=7.4 paco2=40 pao2=90 bed:5"},
+	{"", "Time pH CO2 O2 FiO2\n0400 7.31 55 68 35\n0800 7.34 50 72 35", "ph=7.31 paco2=55 pao2=68 fio2=0.35 at:04:00 ph=7.34 paco2=50 pao2=72 fio2=0.35 at:08:00"},
+	{"", "pH 7.31 (7.35-7.45) pCO2 55 (35-45) pO2 68 (80-100) HCO3 27 (22-26)", "ph=7.31 paco2=55 pao2=68 hco3=27"},
+	{"", "pH 7.31 L pCO2 55 H pO2 68 L HCO3 27 H", "ph=7.31 paco2=55 pao2=68 hco3=27"},
+	{"", "yesterday 7.31/55/68 35%, today 7.34/50/72 30%", "ph=7.31 paco2=55 pao2=68 fio2=0.35 at:yesterday ph=7.34 paco2=50 pao2=72 fio2=0.3 at:today"},
+	{"", "trend: 7.31/55/68 -> 7.34/50/72 -> 7.36/46/75", ":trend ph=7.31 paco2=55 pao2=68 ph=7.34 paco2=50 pao2=72 follow:1 ph=7.36 paco2=46 pao2=75 follow:1"},
 }
 
 func TestSaid(t *testing.T) { runLines(t, saidLines) }

@@ -127,7 +127,7 @@ func boundary(t []token, from, to int, next *segment) int {
 			w, at = 5, i+1
 		case x.sep(";"):
 			w, at = 4, i+1
-		case x.kind == tokClock:
+		case x.kind == tokClock, x.is(senseTime) && weekday(x.s) != "":
 			w = 3
 		case x.kind == tokArrow, x.word("then"), x.word("now"), x.word("repeat"), x.word("later"), x.word("recheck"), x.word("after"):
 			w = 2
@@ -167,21 +167,42 @@ func heads(t []token) {
 			continue
 		}
 		j := i + 1
+		if wardNumber(t, i) { // "icu 2: 7.41/..."
+			x, j = &t[i+1], i+2
+		}
+		first := j
 		for j < len(t) && t[j].sep(":).-") {
 			j++
 		}
-		marked := j > i+1 && t[i+1].glued || j > i+1 && t[i+1].sep("-)")
+		marked := j > first && (t[first].glued || t[first].sep("-)"))
 		if j >= len(t) || !startsGas(t, j) || !marked && !(j == i+1 && x.kind == tokNumber && !t[j].glued) {
 			continue
 		}
 		if x.kind == tokNumber && x.decimals == 0 && x.sign == 0 && !x.percent && x.v < 10000 && !phHead(x, t, i) {
 			x.kind, x.e = tokWord, bedHead
 		}
-		if x.kind == tokWord && x.e == nil && marked && len(x.s) <= 6 && (len(x.s) == 1 || strings.ContainsAny(x.s, "0123456789")) {
+		if x.kind == tokWord && marked && (len(x.s) == 1 || x.e == nil && len(x.s) <= 6 && strings.ContainsAny(x.s, "0123456789")) {
 			x.e = bedHead
 		}
 	}
 }
+
+// wardNumber says that the line starts with a word, a whole number and a
+// colon.
+func wardNumber(t []token, i int) bool {
+	if i+2 >= len(t) || t[i].kind != tokWord || t[i].is(senseBed) || t[i].is(senseLabel) || t[i].is(senseDevice) {
+		return false
+	}
+	switch t[i].s {
+	case "gas", "sample", "draw", "set", "no":
+		return false // the first and the second gas of one patient
+	}
+	n := &t[i+1]
+	return t[i].e.bloodless() && n.kind == tokNumber && n.decimals == 0 && n.v < 10000 && t[i+2].sep(":)") && t[i+2].glued
+}
+
+// bloodless says that a word names no sample.
+func (e *entry) bloodless() bool { return e == nil || e.blood == "" }
 
 // phHead says that the number is itself the mistyped pH of the chain.
 func phHead(x *token, t []token, i int) bool {

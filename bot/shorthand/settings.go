@@ -32,7 +32,7 @@ func (r *reader) deviceAt(i int) {
 	}
 	nums := r.numbersBehind(i)
 	if len(nums) == 0 || r.t[nums[0]].percent {
-		if before := r.pairBefore(i); before != nil {
+		if before := r.pairBefore(i, e.device); before != nil {
 			nums = before
 		}
 	}
@@ -67,11 +67,12 @@ func (r *reader) deviceAt(i int) {
 }
 
 // pairBefore finds a pair of pressures in front of the device: "14/6 bipap".
-func (r *reader) pairBefore(i int) []int {
+func (r *reader) pairBefore(i int, d physio.Device) []int {
 	if i < 3 || !r.t[i-1].free() || !r.t[i-2].sep("/") && !r.t[i-2].is(senseOver) || !r.t[i-3].free() {
 		return nil
 	}
-	if r.joined(i-3) || r.t[i-1].percent || r.t[i-3].v > 50 || r.t[i-1].v >= r.t[i-3].v {
+	pressures := r.t[i-3].v <= 50 && r.t[i-1].v < r.t[i-3].v && (d == physio.Bilevel || d == physio.Ventilator)
+	if r.joined(i-3) || r.t[i-1].percent || !pressures && d != physio.HighFlow {
 		return nil
 	}
 	return []int{i - 3, i - 1}

@@ -1,6 +1,20 @@
 package shorthand
 
-import "strings"
+import (
+	"regexp"
+	"strings"
+)
+
+// referenceRange is a range in brackets that a print-out puts behind a value.
+var referenceRange = regexp.MustCompile(`[(\[]\s*-?\d+(?:[.,]\d+)?\s*(?:-|to)\s*-?\d+(?:[.,]\d+)?\s*[a-z/%0-9]{0,8}\s*[)\]]`)
+
+// dropRanges takes reference ranges out of a pasted print-out.
+func dropRanges(s string) string {
+	if !strings.ContainsAny(s, "([") {
+		return s
+	}
+	return referenceRange.ReplaceAllString(s, " ")
+}
 
 // untable turns a pasted table with a head line into lines of labels and
 // values, so that it is read like any other list.

@@ -83,7 +83,7 @@ var compounds = []struct{ typed, word string }{
 	{"t/c", "trach collar"}, {"t-piece", "tpiece"}, {"h+", "h+"}, {"x-ray", "xray"}, {"ac/vc", "ac"},
 	{"a/c", "ac"}, {"vc/ac", "ac"}, {"vc+", "prvc"}, {"pc/ac", "pcv"}, {"ac/pc", "pcv"}, {"pc-ac", "pcv"}, {"c-pap", "cpap"}, {"bi-pap", "bipap"},
 	{"f/b", "followed"}, {"post-op", "postop"}, {"p-high", "phigh"}, {"p-low", "plow"}, {"t-high", "thigh"}, {"t-low", "tlow"},
-	{"ps/cpap", "psv"}, {"cpap/ps", "psv"}, {"a.b.g", "abg"}, {"r.a.", "ra"}, {"n.c.", "nc"}, {"non-re", "nonre"},
+	{"ps/cpap", "psv"}, {"cpap/ps", "psv"}, {"a.b.g", "abg"}, {"s/t", "st"}, {"r.a.", "ra"}, {"n.c.", "nc"}, {"non-re", "nonre"},
 }
 
 func look(word string) *entry { return vocabulary[word] }

@@ -58,7 +58,7 @@ func reads(l Line, q physio.Quantity, want, tol float64) bool {
 
 func TestCleanGasesRaiseNoDoubt(t *testing.T) {
 	m := gasMaker{rand.New(rand.NewSource(1))}
-	const n = 20000
+	const n = 10000
 	alarms := 0
 	for i := 0; i < n; i++ {
 		g := m.gas()
@@ -78,7 +78,7 @@ func TestCleanGasesRaiseNoDoubt(t *testing.T) {
 
 func TestKPaChannelRaisesNoDoubt(t *testing.T) {
 	m := gasMaker{rand.New(rand.NewSource(2))}
-	const n = 10000
+	const n = 5000
 	alarms := 0
 	for i := 0; i < n; i++ {
 		g := m.gas()
@@ -123,7 +123,7 @@ func TestInjectedErrorsAreDoubted(t *testing.T) {
 	} {
 		m := gasMaker{rand.New(rand.NewSource(3))}
 		seen, caught := 0, 0
-		for seen < 3000 {
+		for seen < 1500 {
 			line, counts := e.spoil(m, m.gas())
 			if !counts {
 				continue

@@ -71,7 +71,7 @@ func fullWidth(s string) string {
 // without a question.
 func TestLayoutsReadTheSame(t *testing.T) {
 	m := gasMaker{rand.New(rand.NewSource(7))}
-	for i := 0; i < 20000; i++ {
+	for i := 0; i < 6000; i++ {
 		g := m.gas()
 		if g.pct %= 60; g.pct < 36 || g.pct%5 != 0 {
 			g.pct = 50 // what may be a rate or a saturation has rungs of its own

@@ -115,18 +115,19 @@ func (r *reader) byUnit(i int, u string, n int) {
 		}
 	case uMetre, uFoot:
 		r.length(i, u, n)
-	case uPerMin:
-		r.store(physio.RR, i, u, n)
-	case uMLKg:
-		r.store(physio.VTPerKg, i, u, n)
 	case uC, uF:
 		if t.v > 25 && !r.joined(i) && (r.t[i+1].glued || len(r.t[i+1].s) > 1) {
 			r.store(physio.Temp, i, u, n)
 		}
-	case uHz:
-		r.store(physio.Hertz, i, u, n)
+	default:
+		if q, ok := namedByUnit[u]; ok {
+			r.store(q, i, u, n)
+		}
 	}
 }
+
+// namedByUnit are the units that belong to one quantity only.
+var namedByUnit = map[string]physio.Quantity{uPerMin: physio.RR, uMLKg: physio.VTPerKg, uHz: physio.Hertz}
 
 // store reads the number at i as q.
 func (r *reader) store(q physio.Quantity, i int, u string, n int) {

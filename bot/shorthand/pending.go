@@ -76,8 +76,7 @@ func (p *parser) byMeaning(said string, q *Question) (*Choice, bool) {
 		}
 		for k := range q.Choices {
 			c := &q.Choices[k]
-			same := c.Blood != "" && e.blood == c.Blood || c.Device != "" && e.device == c.Device && e.device != "" || c.Sex != "" && e.sex == c.Sex ||
-				e.unit != "" && strings.EqualFold(c.Word, e.unit) || e.sense == senseLabel && (plainWord(c.Word) == plainWord(e.q.Info().Symbol) || c.Set.Has(e.q) && onlyIn(q, e.q))
+			same := e.means(c, q)
 			if same && found != nil && found != c {
 				return nil, false
 			}
@@ -94,6 +93,17 @@ func (p *parser) byMeaning(said string, q *Question) (*Choice, bool) {
 		}
 	}
 	return found, found != nil
+}
+
+// means says that a word of the vocabulary names the choice.
+func (e *entry) means(c *Choice, q *Question) bool {
+	switch {
+	case c.Blood != "" && e.blood == c.Blood, c.Device != "" && e.device == c.Device, c.Sex != "" && e.sex == c.Sex:
+		return true
+	case e.unit != "" && strings.EqualFold(c.Word, e.unit):
+		return true
+	}
+	return e.sense == senseLabel && (plainWord(c.Word) == plainWord(e.q.Info().Symbol) || c.Set.Has(e.q) && onlyIn(q, e.q))
 }
 
 // onlyIn says that one choice alone sets k.

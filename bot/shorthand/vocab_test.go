@@ -1,6 +1,7 @@
 package shorthand
 
 import (
+	"galeward/physio"
 	"strings"
 	"testing"
 )
@@ -24,5 +25,18 @@ func TestVocabularyHasNoSpellingTwice(t *testing.T) {
 	}
 	if len(seen) < 800 {
 		t.Errorf("only %d spellings", len(seen))
+	}
+}
+
+func TestQuantityNamed(t *testing.T) {
+	for word, want := range map[string]physio.Quantity{"PaCO2": physio.PaCO2, " bicarb ": physio.HCO3, "rate": physio.RR} {
+		if got, ok := QuantityNamed(word); !ok || got != want {
+			t.Errorf("%q names %v (%v), want %v", word, got, ok, want)
+		}
+	}
+	for _, word := range []string{"", "cannula", "nobody"} {
+		if got, ok := QuantityNamed(word); ok {
+			t.Errorf("%q names %v", word, got)
+		}
 	}
 }

@@ -132,8 +132,8 @@ type climb struct{ atSea, perKm float64 }
 
 var (
 	// adultClimb is the line 38.3 - 2.5 x height of Vazquez and Perez-Padilla
-	// 2000 for the acclimatised; eight series of residents from 1605 to 4000 m
-	// lie within 5 mmHg of it.
+	// 2000 for the acclimatised; the means of seven series of residents from
+	// 1605 to 4000 m lie within 5 mmHg of it.
 	adultClimb = climb{atSea: 1.7, perKm: 2.5}
 	// pregnantClimb is flatter, as the fall of pregnancy is there already: 26.6
 	// mmHg at 1388 m (Hankins 1996) and 24 at 4200 m (Reddi 2014), a straight

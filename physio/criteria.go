@@ -18,7 +18,8 @@ var openPARDS = []string{"timing within a week", "imaging", "origin of the oedem
 // Criteria lists the oxygenation criteria that an assessed sample meets: the
 // Berlin definition 2012 with PEEP or CPAP of at least 5 cmH2O, the global
 // definition 2024 for high flow and for SpO2 up to 97 %, and the paediatric
-// bands of PALICC 2015 by OI or OSI. Estimated oxygen fractions of masks and
+// bands of PALICC 2015 by OI or OSI, with the threshold of PALICC-2 2023 on
+// high flow. Estimated oxygen fractions of masks and
 // cannulas meet none.
 func Criteria(a *Assessment) []Criterion {
 	if a.Oxygen.Estimated || !a.Oxygen.Known {
@@ -79,6 +80,23 @@ func paediatricCriteria(a *Assessment) []Criterion {
 		}
 		return []Criterion{{"PALICC 2015", c.name + " in the band " + band, openPARDS}}
 	}
+	return nasalCriteria(a)
+}
+
+// nasalCriteria is the oxygenation threshold of possible disease in children
+// on high flow; by the second consensus it has no bands.
+func nasalCriteria(a *Assessment) []Criterion {
+	flow, weight := a.Sample.Val(OxygenFlow), a.Sample.Val(Weight)
+	enough := flow >= globalFlow || weight > 0 && flow >= paliccFlowPerKg*weight
+	if a.Sample.Device != HighFlow || !enough {
+		return nil
+	}
+	if pf, ok := a.Index("pf"); ok && pf.Value <= pfAbnormal {
+		return []Criterion{{"PALICC-2 2023", "P/F 300 or below on high flow (possible, on nasal support)", openPARDS}}
+	}
+	if sf, ok := a.Index("sf"); ok && sf.Value <= paliccNasalSF {
+		return []Criterion{{"PALICC-2 2023", "S/F 250 or below with SpO2 up to 97 % on high flow (possible, on nasal support)", openPARDS}}
+	}
 	return nil
 }
 
@@ -90,4 +108,6 @@ const (
 
 	paliccOIMild, paliccOIModerate, paliccOISevere    = 4.0, 8.0, 16.0 // PALICC 2015
 	paliccOSIMild, paliccOSIModerate, paliccOSISevere = 5.0, 7.5, 12.3 // PALICC 2015
+	paliccNasalSF                                     = 250.0          // PALICC-2 2023 (Yehya 2023), table 5
+	paliccFlowPerKg                                   = 1.5            // L/min per kg of high flow (PALICC-2 2023)
 )

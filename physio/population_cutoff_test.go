@@ -169,6 +169,9 @@ func TestAgesAndTrimestersChooseTheirTable(t *testing.T) {
 		r := assess(of(t, name, 0, physio.PaCO2, 40)).Ranges
 		table[name] = r.PaCO2Low + 1000*r.PHLow
 	}
+	if table["newborn day 1"] >= table["newborn"] || table["infant"] == table["child"] || table["trimester 2"] == table["trimester 3"] {
+		t.Errorf("two tables are one: %v", table)
+	}
 	for _, c := range []struct {
 		what string
 		got  float64
@@ -182,6 +185,49 @@ func TestAgesAndTrimestersChooseTheirTable(t *testing.T) {
 	} {
 		if c.got != table[c.want] {
 			t.Errorf("%s does not take the table %s", c.what, c.want)
+		}
+	}
+}
+
+// TestPaediatricCriteria tries the bands of PALICC 2015 (OI 4, 8, 16; OSI 5,
+// 7.5, 12.3) and the threshold of PALICC-2 2023 on high flow (P/F 300, S/F 250,
+// from 1.5 L/min per kg or 30 L/min) below, at and above.
+func TestPaediatricCriteria(t *testing.T) {
+	met := func(device physio.Device, pairs ...any) string {
+		s := of(t, "child", 0, pairs...)
+		s.Device = device
+		a := assess(s)
+		out := ""
+		for _, c := range physio.Criteria(&a) {
+			out += c.Definition + " " + c.Part
+		}
+		return out
+	}
+	oi := func(mean float64) string { // FiO2 0.5 and PaO2 50: OI is the mean pressure
+		return met(physio.Ventilator, physio.PaO2, 50, physio.FiO2, 0.5, physio.Pmean, mean)
+	}
+	osi := func(mean float64) string { // FiO2 0.9 and SpO2 90 %: OSI is the mean pressure
+		return met(physio.Ventilator, physio.SpO2, 0.90, physio.FiO2, 0.9, physio.Pmean, mean)
+	}
+	pf := func(po2, flow float64) string {
+		return met(physio.HighFlow, physio.PaO2, po2, physio.FiO2, 0.4, physio.OxygenFlow, flow, physio.Weight, 20)
+	}
+	sf := func(s, flow float64) string {
+		return met(physio.HighFlow, physio.SpO2, s, physio.FiO2, 0.38, physio.OxygenFlow, flow)
+	}
+	const nasalPF = "PALICC-2 2023 P/F 300 or below on high flow (possible, on nasal support)"
+	const nasalSF = "PALICC-2 2023 S/F 250 or below with SpO2 up to 97 % on high flow (possible, on nasal support)"
+	band := func(name, b string) string { return "PALICC 2015 " + name + " in the band " + b }
+	for _, c := range []struct{ what, got, want string }{
+		{"OI 3.9", oi(3.9), ""}, {"OI 4", oi(4), band("OI", "mild")}, {"OI 7.9", oi(7.9), band("OI", "mild")}, {"OI 8", oi(8), band("OI", "moderate")},
+		{"OI 15.9", oi(15.9), band("OI", "moderate")}, {"OI 16", oi(16), band("OI", "severe")},
+		{"OSI 4.9", osi(4.9), ""}, {"OSI 5.1", osi(5.1), band("OSI", "mild")}, {"OSI 7.4", osi(7.4), band("OSI", "mild")}, {"OSI 7.6", osi(7.6), band("OSI", "moderate")},
+		{"OSI 12.2", osi(12.2), band("OSI", "moderate")}, {"OSI 12.4", osi(12.4), band("OSI", "severe")},
+		{"P/F 300 at 1.5 L/min/kg", pf(120, 30), nasalPF}, {"P/F 301", pf(120.4, 30), ""}, {"P/F 300 below the flow", pf(120, 29.9), ""},
+		{"S/F 250 at 30 L/min", sf(0.95, 30), nasalSF}, {"S/F 252.6", sf(0.96, 30), ""}, {"S/F 250 below the flow", sf(0.95, 29.9), ""},
+	} {
+		if c.got != c.want {
+			t.Errorf("%s: %q, want %q", c.what, c.got, c.want)
 		}
 	}
 }

@@ -7,9 +7,9 @@
 // # What lives here
 //
 // Pure functions and the tables they read. One concept a file: a formula with
-// its source on the line that uses it, every cut-off in limits.go, every
-// caution with its trigger in caution.go, every quantity with its unit and
-// possible range in quantity.go.
+// its source on the line that uses it, every cut-off in limits.go, the ranges
+// of each population in population.go, every caution with its trigger in
+// caution.go, every quantity with its unit and possible range in quantity.go.
 //
 // # What does not
 //

@@ -104,31 +104,50 @@ def model(fio2, shunt, drop):
     return math.exp(brentq(lambda ln: content(math.exp(ln)) - arterial, 0, math.log(capillary) + 1e-12, xtol=1e-15))
 
 
-def fit(points):
+def fit(points, pulse):
     """The best shunt and drop within the bounds, from several starts."""
     def misfit(x):
-        return [math.log(model(f, x[0], x[1] * 100) / p) / 0.036 for f, p in points]
+        shown = [(model(f, x[0], x[1] * 100), seen) for f, seen in points]
+        return [(curve(p) - seen) / 0.02 if pulse else math.log(p / seen) / 0.036 for p, seen in shown]
     best = None
     for start in [(0.05, 0.1), (0.1, 1.5), (0.3, 0.3), (0.45, 1.0), (0.6, 0.05)]:
-        # diff_step: the root inside the model is good to 1e-15 only
         found = least_squares(misfit, start, bounds=([0, 0], [0.7, 4.5]), xtol=1e-15, ftol=1e-15, gtol=1e-15, jac="3-point")
         if best is None or found.cost < best.cost:
             best = found
     return best.x[0], best.x[1] * 100, 2 * best.cost
 
 
+def shows(draw, shunt, drop, count, pulse):
+    """What a lung shows on several fractions of oxygen, with measurement error.
+
+    Every third lung is seen by an oximeter alone, whose readings above 97 % tell
+    nothing. A PaO2 above the alveolar one would be refused and is kept below it.
+    """
+    points = []
+    for fio2 in [0.3, 0.4, 0.5, 0.7, 0.9][:count]:
+        po2 = model(fio2, shunt, drop)
+        if pulse:
+            points.append((fio2, curve(po2) + 0.02 * draw.standard_normal()))
+        else:
+            alveolar = fio2 * 713 - 40 * (fio2 + (1 - fio2) / 0.8)
+            points.append((fio2, min(po2 * math.exp(0.036 * draw.standard_normal()), alveolar)))
+    return [p for p in points if not pulse or 0.5 <= p[1] <= 0.97]
+
+
 def lungs():
-    """Invented lungs, what they would show with measurement error, and the fit."""
+    """Invented lungs, what they would show, and the fit."""
     draw = numpy.random.default_rng(1995)
-    rows = []
-    for patient in range(LUNGS):
+    rows, patient = [], 0
+    while patient < LUNGS:
+        pulse = patient % 3 == 2
         shunt, drop = draw.uniform(0.02, 0.45), draw.uniform(2, 80)
-        fio2s = [0.3, 0.4, 0.5, 0.7, 0.9][: 3 + patient % 3]
-        points = [(f, model(f, shunt, drop) * math.exp(0.036 * draw.standard_normal())) for f in fio2s]
-        # a sample that shows more than the alveolar PO2 is refused: keep the limit
-        points = [(f, min(p, f * 713 - 40 * (f + (1 - f) / 0.8))) for f, p in points]
-        rows += [(patient, shunt, drop, f, p, *fit(points)) for f, p in points]
-    columns = ("patient", "true_shunt", "true_drop", "fio2", "pao2", "shunt", "drop", "sum")
+        points = shows(draw, shunt, drop, 3 + patient % 3, pulse)
+        if len(points) < 3:
+            continue
+        best = fit(points, pulse)
+        rows += [(patient, shunt, drop, "sao2" if pulse else "pao2", f, seen, *best) for f, seen in points]
+        patient += 1
+    columns = ("patient", "true_shunt", "true_drop", "seen", "fio2", "value", "shunt", "drop", "sum")
     write("lungs", f"scipy.optimize.least_squares of SciPy {scipy.__version__}, lungs drawn by NumPy {numpy.__version__}", columns, rows)
 
 

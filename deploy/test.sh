@@ -62,7 +62,7 @@ step "staticcheck"
 go tool staticcheck ./...
 
 step "tests with the race detector"
-if ! go test -race -timeout 5m -v ./... >"$scratch/tests" 2>&1; then
+if ! go test -race -timeout 7m -v ./... >"$scratch/tests" 2>&1; then
 	grep -vE '^ *(=== (RUN|PAUSE|CONT|NAME)|--- PASS)|^PASS$' "$scratch/tests" | head -n 400 || true
 	printf '%s passed, %s failed\n' "$(grep -cE '^--- PASS' "$scratch/tests")" "$(grep -cE '^--- FAIL' "$scratch/tests")"
 	fail "tests"

@@ -31,7 +31,13 @@ func drawnLungs(t *testing.T) []drawn {
 		}
 		d := &lungs[len(lungs)-1]
 		gas := AlveolarGas{FiO2: Fraction(tb.number(row, "fio2")), PB: 760, PaCO2: 40}
-		d.points = append(d.points, LungGas{Gas: gas, PaO2: MmHg(tb.number(row, "pao2"))})
+		p := LungGas{Gas: gas}
+		if seen := tb.number(row, "value"); tb.text(row, "seen") == "sao2" {
+			p.SaO2 = Fraction(seen)
+		} else {
+			p.PaO2 = MmHg(seen)
+		}
+		d.points = append(d.points, p)
 	}
 	return lungs
 }

@@ -4,7 +4,7 @@ import (
 	"context"
 	"encoding/json"
 	"os"
-	"strings"
+	"strconv"
 	"testing"
 	"time"
 
@@ -41,7 +41,7 @@ func newDesk(t testing.TB) *desk {
 // event is the next message typed on the desk.
 func (d *desk) event(text string) bot.Event {
 	d.count++
-	id := strings.Repeat("m", d.count)
+	id := "m" + strconv.Itoa(d.count)
 	return bot.Event{Kind: bot.Typed, Delivery: id, Message: id, Where: d.place, Text: text, At: d.now, Listening: true}
 }
 

@@ -1,5 +1,7 @@
 package physio
 
+import "math"
+
 // The house family of constants. They are used together or not at all: the
 // reference bicarbonate gives a base excess of 0 at pH 7.40 and PCO2 40 only
 // with its own solubility and pK'.
@@ -97,8 +99,18 @@ func PHAtPCO2(sbe Concentration, pco2 Pressure) (PH, error) {
 	return PH(ph), nil
 }
 
+// phAtPCO2 solves for the pH by Newton's method: base excess rises with pH
+// without a bend the other way, so a few steps from the middle find it.
 func phAtPCO2(sbe, pco2 float64) float64 {
-	return bisect(func(ph float64) float64 {
-		return standardBaseExcess(ph, bicarbonate(ph, pco2)) - sbe
-	}, 5, 9.5)
+	ph := referencePH
+	for range 20 {
+		hco3 := bicarbonate(ph, pco2)
+		slope := vanSlykeScale * (hco3*math.Ln10 + vanSlykeBeta)
+		step := (standardBaseExcess(ph, hco3) - sbe) / slope
+		ph -= step
+		if abs(step) < 1e-12 {
+			break
+		}
+	}
+	return ph
 }

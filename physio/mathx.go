@@ -3,7 +3,7 @@ package physio
 import "math"
 
 func log10(x float64) float64 { return math.Log10(x) }
-func pow10(x float64) float64 { return math.Pow(10, x) }
+func pow10(x float64) float64 { return math.Exp(x * math.Ln10) }
 
 func abs(x float64) float64 { return math.Abs(x) }
 

@@ -4,7 +4,6 @@ import (
 	"slices"
 	"strings"
 
-	"galeward/bot/shorthand"
 	"galeward/physio"
 )
 
@@ -227,13 +226,4 @@ func (c *composer) derivedWord(d physio.Derived) string {
 		return "pH about " + aboutPH(d.PH) + " calculated"
 	}
 	return "HCO3 " + plain(d.HCO3, 0) + " calculated, no cross-check"
-}
-
-// typedInOther says that the gas was read in another unit than the channel's.
-func (c *composer) typedInOther() bool {
-	want := c.n.units
-	if want == "" {
-		want = shorthand.MmHg
-	}
-	return c.gas.Typed != "" && c.gas.Typed != want
 }

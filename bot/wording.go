@@ -103,8 +103,3 @@ var basisWord = map[string]string{
 	"pbw": "predicted weight", "p50": "P50", "shunt": "shunt", "shunt_estimated": "shunt, estimated",
 	"cco2": "Cc'O2", "sid_apparent": "apparent SID", "sid_effective": "effective SID", "sig": "strong ion gap",
 }
-
-// shortBasis abbreviates the lacking quantities.
-var lackWord = map[physio.Quantity]string{
-	physio.VE: "VE", physio.VT: "VT", physio.EtCO2: "EtCO2", physio.FiO2: "the oxygen",
-}

@@ -125,20 +125,18 @@ var triggers = []trigger{
 
 // cautions raises what the sample calls for.
 func (sc *scene) cautions() {
-	raised := make(map[CautionCode]bool)
 	for i := range triggers {
 		t := &triggers[i]
-		if !t.when(sc) || anyRaised(raised, t.unless) {
+		if !t.when(sc) || sc.a.anyRaised(t.unless) {
 			continue
 		}
-		raised[t.code] = true
 		sc.a.Cautions = append(sc.a.Cautions, Caution{t.code, t.severity})
 	}
 }
 
-func anyRaised(raised map[CautionCode]bool, codes []CautionCode) bool {
+func (a *Assessment) anyRaised(codes []CautionCode) bool {
 	for _, c := range codes {
-		if raised[c] {
+		if a.Raised(c) {
 			return true
 		}
 	}

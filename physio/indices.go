@@ -163,6 +163,7 @@ func (sc *scene) indices() {
 	if d := sc.a.Triple; d.Any && d.Quantity == HCO3 {
 		v.Set(HCO3, d.HCO3)
 	}
+	sc.a.Indices = make([]Index, 0, usualIndices)
 	sc.given(&v)
 	for i := range derivations {
 		d := &derivations[i]
@@ -176,6 +177,9 @@ func (sc *scene) indices() {
 	sc.contents()
 	sc.admixture()
 }
+
+// usualIndices is room for the indices of a usual gas.
+const usualIndices = 20
 
 // derive carries one row of the table out.
 func (sc *scene) derive(d *derivation, v *Values) {
@@ -251,15 +255,30 @@ func (sc *scene) bands() {
 		sc.a.Oxygenation.HealthyPaO2 = sc.healthyPaO2(pa)
 		sc.add("pao2_expected_at_paco2", "mmHg", sc.a.Oxygenation.HealthyPaO2, PaCO2, FiO2, PB)
 	}
+	sc.deltaRatio()
+}
+
+// deltaRatio compares the gap with the fall of bicarbonate, which is in both:
+// they err together.
+func (sc *scene) deltaRatio() {
+	anchor, hco3 := sc.a.Ranges.Anchor.HCO3, sc.a.Triple.HCO3
+	in := []Input{Measured(Na, sc.v.Val(Na)), Measured(Cl, sc.v.Val(Cl)), Measured(HCO3, hco3)}
 	gap, ok := sc.a.Index("anion_gap_corrected")
-	if !ok {
-		gap, ok = sc.a.Index("anion_gap")
+	if ok {
+		in = append(in, Measured(Albumin, sc.v.Val(Albumin)))
+	} else if gap, ok = sc.a.Index("anion_gap"); !ok {
+		return
 	}
-	if fall := sc.a.Ranges.Anchor.HCO3 - sc.a.Triple.HCO3; ok && gap.Value >= gapHigh && fall >= deltaSmallestFall {
-		ratio := propagate(func(v []float64) float64 { return deltaRatio(v[0]-gapUsual, v[1]) },
-			[]Input{Bounded(gap.Interval), Measured(HCO3, fall)})
-		sc.add("delta_ratio", "", ratio, Na, Cl, HCO3)
+	if gap.Value < gapHigh || anchor-hco3 < deltaSmallestFall {
+		return
 	}
+	sc.add("delta_ratio", "", propagate(func(v []float64) float64 {
+		rise := anionGap(v[0], v[1], v[2]) - gapUsual
+		if len(v) > 3 {
+			rise += albuminCorrection(v[3], float64(AlbuminTexts))
+		}
+		return deltaRatio(rise, anchor-v[2])
+	}, in), Na, Cl, HCO3)
 }
 
 // adultScale says that adult expectations of PaO2 hold.
@@ -310,11 +329,23 @@ func (sc *scene) contents() {
 
 // saturationOfPaO2 is the saturation at this PaO2, pH and PaCO2.
 func (sc *scene) saturationOfPaO2() Interval {
-	ph, pco2 := sc.a.Triple.PH, sc.a.Triple.PaCO2
-	return propagate(func(v []float64) float64 {
-		return saturation(v[0], CurveShift{PH: PH(ph), PaCO2: MmHg(pco2)})
-	}, []Input{Measured(PaO2, sc.v.Val(PaO2))})
+	return propagate(func(v []float64) float64 { return saturation(v[0], shiftOf(v[1], v[2])) }, sc.curveInputs())
 }
+
+// curveInputs are the inputs of the curve; a pH or PaCO2 that is not known is
+// exactly the standard one.
+func (sc *scene) curveInputs() []Input {
+	in := []Input{Measured(PaO2, sc.v.Val(PaO2)), Bounded(point(0)), Bounded(point(0))}
+	if ph := sc.a.Triple.PH; ph != 0 {
+		in[1] = Measured(PHq, ph)
+	}
+	if pco2 := sc.a.Triple.PaCO2; pco2 != 0 {
+		in[2] = Measured(PaCO2, pco2)
+	}
+	return in
+}
+
+func shiftOf(ph, pco2 float64) CurveShift { return CurveShift{PH: PH(ph), PaCO2: MmHg(pco2)} }
 
 // arterialContent adds CaO2: a measured saturation first, with the fractions
 // of dyshaemoglobin taken off, else the one of the curve.
@@ -322,11 +353,14 @@ func (sc *scene) arterialContent() {
 	if !sc.v.Has(Hb, PaO2) || !sc.lungO2 {
 		return
 	}
-	sat, ok := sc.v.Get(SaO2)
-	if !ok {
-		sat = sc.saturationOfPaO2().Value
+	in := append(sc.curveInputs(), Measured(Hb, sc.v.Val(Hb)))
+	content := func(v []float64) float64 {
+		return BindingFunctional.content(v[3], saturation(v[0], shiftOf(v[1], v[2])), v[0])
 	}
-	iv := propagate(func(v []float64) float64 { return BindingFunctional.content(v[0], v[2], v[1]) },
-		[]Input{Measured(Hb, sc.v.Val(Hb)), Measured(PaO2, sc.v.Val(PaO2)), Measured(SaO2, sat)})
+	if sat, ok := sc.v.Get(SaO2); ok {
+		in = append(in, Measured(SaO2, sat))
+		content = func(v []float64) float64 { return BindingFunctional.content(v[3], v[4], v[0]) }
+	}
+	iv := propagate(content, in)
 	sc.add("cao2", "mL/dL", iv, Hb, SaO2, PaO2)
 }

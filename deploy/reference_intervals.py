@@ -15,7 +15,12 @@ SPREADS = {
     "fio2": (0.005, 0), "etco2": (1, 0), "peco2": (1, 0), "vt": (0, 0.05), "ve": (0, 0.05), "rr": (1, 0), "pplat": (0.5, 0),
     "peep": (0.5, 0), "pip": (0.5, 0), "mpaw": (0.5, 0), "na": (0.7, 0), "k": (0.05, 0), "cl": (0.7, 0), "lactate": (0.1, 0.03),
     "albumin": (0.8, 0), "pb": (1, 0), "weight": (0, 0.01), "phosphate": (0.03, 0), "pbw": (0, 0), "calcium": (0, 0), "magnesium": (0, 0),
+    "hb": (0, 0.02), "svo2": (0.005, 0), "pvo2": (0, 0.036),
 }
+
+# Whole samples, which hold one another's inputs: a stated fraction of oxygen is
+# taken as it is there, and the pressure is exact where it was not measured.
+EXACT = ("fio2", "pb")
 
 PATIENTS = {
     "adult": dict(ph=7.31, paco2=55, pao2=68, hco3=27, sao2=0.88, spo2=0.92, fio2=0.4, etco2=46, peco2=24, vt=420, ve=9.5, rr=24, pplat=26,
@@ -107,15 +112,59 @@ INDICES = {
 }
 
 
+def curve(po2, ph, pco2):
+    shift = -0.88 * (ph - 7.4) + 0.048 * numpy.log(pco2 / 40)
+    x = numpy.log(po2 * 0.133322387415 / 7) - shift
+    return 1 / (1 + numpy.exp(-(1.8747 + x + (3.5 + shift) * numpy.tanh(0.5342857 * x))))
+
+
+def content(v, sat, po2):
+    return 1.34 * v["hb"] * sat + 0.0031 * po2
+
+
+def admixture(v):
+    """Berggren's equation; the end-capillary blood at the alveolar PO2."""
+    best = content(v, curve(alveolar(v), v["ph"], v["paco2"]), alveolar(v))
+    arterial = content(v, v["sao2"] if "sao2" in v else curve(v["pao2"], v["ph"], v["paco2"]), v["pao2"])
+    return (best - arterial) / (best - content(v, v["svo2"], v["pvo2"]))
+
+
+def delta(v):
+    correction = 0.25 * (40 - v["albumin"]) if "albumin" in v else 0
+    return (v["na"] - v["cl"] - v["hco3"] + correction - 12) / (24 - v["hco3"])
+
+
+# Derived numbers that a whole sample is needed for: the sample and how.
+SAMPLES = {
+    "sao2_calc": (lambda v: curve(v["pao2"], v["ph"], v["paco2"]),
+                  [dict(ph=7.31, paco2=55, pao2=68), dict(ph=7.1, paco2=80, pao2=44), dict(ph=7.48, paco2=30, pao2=95)]),
+    "cao2": (lambda v: content(v, v["sao2"] if "sao2" in v else curve(v["pao2"], v["ph"], v["paco2"]), v["pao2"]),
+             [dict(ph=7.31, paco2=55, pao2=68, fio2=0.4, hb=12, sao2=0.91), dict(ph=7.36, paco2=48, pao2=52, fio2=0.5, hb=9)]),
+    "shunt": (admixture,
+              [dict(ph=7.31, paco2=55, pao2=68, fio2=0.4, pb=760, hb=12, sao2=0.92, svo2=0.65, pvo2=37),
+               dict(ph=7.38, paco2=41, pao2=62, fio2=0.6, pb=760, hb=10, svo2=0.6, pvo2=34),
+               dict(ph=7.25, paco2=60, pao2=110, fio2=1.0, pb=760, hb=13, sao2=0.975, svo2=0.7, pvo2=43)]),
+    "delta_ratio": (delta,
+                    [dict(ph=7.18, paco2=28, hco3=10.1, na=140, cl=104, albumin=38), dict(ph=7.31, paco2=37, hco3=18.2, na=142, cl=100)]),
+}
+
+
+def simulated(values, names, formula, draws, random, exact=()):
+    """The inputs as name=value+-sd and both ends of the simulated interval."""
+    spread = {n: 0 if n in exact else max(SPREADS[n][0], SPREADS[n][1] * abs(values[n])) for n in names}
+    drawn = {n: random.normal(values[n], sd, draws) for n, sd in spread.items()}
+    low, high = numpy.quantile(formula(drawn), [0.025, 0.975])
+    return " ".join(f"{n}={values[n]:g}+-{sd:.6g}" for n, sd in spread.items()), low, high
+
+
 def intervals(write, draws):
-    """One row for each derived number and patient, inputs as name=value+-sd."""
+    """One row for each derived number and patient, then those of whole samples."""
     random = numpy.random.default_rng(2015)
     rows = []
     for patient, values in PATIENTS.items():
         for key, (names, formula) in INDICES.items():
-            spread = {n: max(SPREADS[n][0], SPREADS[n][1] * abs(values[n])) for n in names.split()}
-            drawn = {n: random.normal(values[n], sd, draws) for n, sd in spread.items()}
-            low, high = numpy.quantile(formula(drawn), [0.025, 0.975])
-            inputs = " ".join(f"{n}={values[n]:g}+-{sd:.6g}" for n, sd in spread.items())
-            rows.append((patient, key, inputs, low, high))
+            rows.append((patient, key, *simulated(values, names.split(), formula, draws, random)))
+    for key, (formula, samples) in SAMPLES.items():
+        for values in samples:
+            rows.append(("whole sample", key, *simulated(values, values, formula, draws, random, EXACT)))
     write("intervals", f"quantiles of {draws} draws by NumPy {numpy.__version__}", ("patient", "index", "inputs", "low", "high"), rows)

@@ -44,24 +44,29 @@ func (sc *scene) measuredShunt(g LungGas) bool {
 	if !ok {
 		po2 = po2At(sat, g.Shift)
 	}
-	measured := float64(g.SaO2)
-	g = g.filled()
-	capillary := g.capillary(g.alveolar())
-	iv := propagate(func(v []float64) float64 {
-		arterial := g.content(v[0], saturationOr(measured, v[0], g.Shift))
-		return shunt(capillary, min(arterial, capillary), g.content(v[2], v[1]))
-	}, []Input{Measured(PaO2, sc.v.Val(PaO2)), Measured(SvO2, sat), Measured(PvO2, po2)})
+	measured := float64(g.SaO2) > 0
+	iv := propagate(func(v []float64) float64 { return berggren(g, measured, v) }, []Input{
+		Measured(PaO2, sc.v.Val(PaO2)), Measured(SaO2, float64(g.filled().SaO2)), Measured(SvO2, sat),
+		Measured(PvO2, po2), Measured(PaCO2, g.Gas.PaCO2.MmHg()), Measured(PHq, float64(g.Shift.PH)), sc.input(FiO2, sc.v.Val(FiO2)),
+	})
+	capillary := g.filled().capillary(g.alveolar())
 	sc.add("cco2", "mL/dL", point(capillary), Hb, FiO2, PB, PaCO2)
 	sc.add("shunt", "", iv, Hb, PaO2, SvO2)
 	return true
 }
 
-// saturationOr is the measured saturation, or the curve's at po2.
-func saturationOr(measured, po2 float64, at CurveShift) float64 {
-	if measured > 0 {
-		return measured
+// berggren is the venous admixture of PaO2, SaO2, SvO2, PvO2, PaCO2, pH and
+// FiO2. A saturation that was not measured is the curve's, whatever v says.
+func berggren(g LungGas, measured bool, v []float64) float64 {
+	g.PaO2, g.SaO2 = MmHg(v[0]), 0
+	if measured {
+		g.SaO2 = Fraction(v[1])
 	}
-	return saturation(po2, at)
+	g.Gas.PaCO2, g.Shift.PH, g.Gas.FiO2 = MmHg(v[4]), PH(v[5]), Fraction(v[6])
+	g = g.filled()
+	capillary := g.capillary(g.alveolar())
+	arterial := g.content(v[0], float64(g.SaO2))
+	return shunt(capillary, min(arterial, capillary), g.content(v[3], v[2])) // Berggren 1942
 }
 
 func (sc *scene) estimatedShuntRange(g LungGas) {

@@ -1,9 +1,6 @@
 package physio
 
 import (
-	"fmt"
-	"strconv"
-	"strings"
 	"testing"
 )
 
@@ -109,57 +106,4 @@ func TestFitOfWhatNothingFits(t *testing.T) {
 	if m.Misfit < 2 {
 		t.Errorf("misfit %v of impossible points", m.Misfit)
 	}
-}
-
-// inputsOf reads name=value+-sd and checks that this package takes the same
-// spread of the quantity.
-func inputsOf(t *testing.T, cell string) map[Quantity]Input {
-	t.Helper()
-	in := map[Quantity]Input{}
-	for _, part := range strings.Fields(cell) {
-		name, rest, _ := strings.Cut(part, "=")
-		value, spread, _ := strings.Cut(rest, "+-")
-		q, ok := QuantityByKey(name)
-		v, err1 := strconv.ParseFloat(value, 64)
-		sd, err2 := strconv.ParseFloat(spread, 64)
-		if !ok || err1 != nil || err2 != nil {
-			t.Fatalf("not an input: %q", part)
-		}
-		in[q] = Measured(q, v)
-		near(t, "spread of "+name, in[q].High-in[q].Low, 2*coverage*sd, 1e-4*(1+sd))
-	}
-	return in
-}
-
-// Each derived number's interval against the quantiles of 100,000 draws, for
-// every index and an invented patient of every population: endpoints within 5 %
-// of the width.
-func TestReferenceIntervals(t *testing.T) {
-	formulas := map[string]*derivation{}
-	for i := range derivations {
-		formulas[derivations[i].key] = &derivations[i]
-	}
-	tb := reference(t, "intervals")
-	ends := comparison{what: "ends of intervals, part of the width", bound: 0.05}
-	for _, row := range tb.rows {
-		d, ok := formulas[tb.text(row, "index")]
-		if !ok {
-			t.Fatalf("no index %s", tb.text(row, "index"))
-		}
-		measured := inputsOf(t, tb.text(row, "inputs"))
-		var in []Input
-		for _, q := range d.in {
-			in = append(in, measured[q])
-		}
-		iv := propagate(d.f, in)
-		low, high := tb.number(row, "low"), tb.number(row, "high")
-		where := fmt.Sprintf("%s of the %s", d.key, tb.text(row, "patient"))
-		if width := high - low; width > 0 {
-			ends.see((iv.Low-low)/width, "low end, %s", where)
-			ends.see((iv.High-high)/width, "high end, %s", where)
-		} else if iv.Low != iv.High {
-			t.Errorf("%s: %v of exact inputs", where, iv)
-		}
-	}
-	ends.report(t)
 }

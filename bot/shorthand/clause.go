@@ -1,7 +1,6 @@
 package shorthand
 
 import (
-	"regexp"
 	"strings"
 
 	"galeward/physio"
@@ -9,13 +8,13 @@ import (
 
 // The words by which an aim, a what-if and a check are told from a gas.
 var (
-	supposeWords = regexp.MustCompile(`\bwhat if\b|\bwhat happens? (if|when|with|to)\b|\bwhat would happen\b|\bsuppose\b|\bif (we|i|you|he|she|they|the)\b|\bwhat would\b.{0,40}\b(if|with|at|on)\b|^if\b|\bhow about\b|\bwould (it|that) help if\b|\bwhatif\b`)
-	aimWords     = regexp.MustCompile(`\b(what|which|how much|how many|how high|how low|whats the|what's the)\b.{0,40}\b(for|gets?|to get|gives?|needed|need|reach|reaches|brings?|makes?|hit|would get|will get|achieves?)\b|\b(target|goal|aim|aiming for|aim for|trying to get|want|wanting|shooting for|looking for)\b|\bneed(ed)?\b.{0,40}\b(what|for|which|how)\b|\bneeded (for|to)\b|\brequired for\b|\b(get|bring|drive) (the |his |her )?(co2|pco2|paco2|ph|po2|pao2|o2|sats?|spo2) (to|down to|up to|back to)\b`)
-	ifCore       = regexp.MustCompile(`\bif (the |his |her |their )?(co2|pco2|paco2|ph|po2|pao2)\b`)
-	settingAsk   = regexp.MustCompile(`\b(what|whats|how)\b.{0,20}\b(po2|pao2|co2|pco2|paco2|ph|sats?|spo2|o2)\b.{0,12}$`)
-	checkWords   = regexp.MustCompile(`^(is (this|it|that|he|she|pt)|am i right|agree|right)\b|\b(student|colleague|fellow|resident|intern|preceptee|orientee|learner|trainee|newbie|nurse|doc|doctor|attending|registrar|rn|md|rt|someone|they|he|she|my student|the student)\b[ :,-]*(says?|said|thinks?|thought|called|calls|call|reads?|claims?|wrote|writes|answers?|answered|put|calling|reckons?|labelled|labeled|charted|interpreted|believes?|told me)\b|\b(student|fellow|resident|intern|learner|trainee|orientee|preceptee)s?\s*:|\b(i|we|id|i'd|my|i am|im)\b *(would |also |just |am )?(say|says|said|think|thinks|thought|call|called|calling|read this|reckon|believe|interpret|vote|answer|guess|reading is|read is|take is|interpretation|impression)\b|\b(agree|correct|am i right|right|true or false|yes or no|do you agree|is that right|thoughts)\s*\?|\bis (this|it|that) (an? )?[a-z]`)
-	claimWord    = regexp.MustCompile(`\b(\w*acid(osis|otic|aemia|emia)|alkal(osis|otic|aemia|emia)|hyper\w*vent\w*|hypo\w*vent\w*|hypox\w*|hypercap\w*|hypercarb\w*|hypocap\w*|compensated|uncompensated|compensation|ards|t[12]rf|type (1|2|i|ii|one|two)|respiratory failure|resp failure|shunt|dead ?space|normal|mixed|acute on chronic|retaining|oxygenat\w+ (ok|fine|well|good)|ventilat\w+ (ok|fine|well|good))\b[^?]*\?`)
-	bareQuestion = regexp.MustCompile(`^(what'?s|whats|what is|how'?s|thoughts|interpret|read) (this|these|it|that|on this)\b`)
+	supposeWords = sift(`\bwhat if\b|\bwhat happens? (if|when|with|to)\b|\bwhat would happen\b|\bsuppose\b|\bif (we|i|you|he|she|they|the)\b|\bwhat would\b.{0,40}\b(if|with|at|on)\b|^if\b|\bhow about\b|\bwould (it|that) help if\b|\bwhatif\b`)
+	aimWords     = sift(`\b(what|which|how much|how many|how high|how low|whats the|what's the)\b.{0,40}\b(for|gets?|to get|gives?|needed|need|reach|reaches|brings?|makes?|hit|would get|will get|achieves?)\b|\b(target|goal|aim|aiming for|aim for|trying to get|want|wanting|shooting for|looking for)\b|\bneed(ed)?\b.{0,40}\b(what|for|which|how)\b|\bneeded (for|to)\b|\brequired for\b|\b(get|bring|drive) (the |his |her )?(co2|pco2|paco2|ph|po2|pao2|o2|sats?|spo2) (to|down to|up to|back to)\b`)
+	ifCore       = sift(`\bif (the |his |her |their )?(co2|pco2|paco2|ph|po2|pao2)\b`)
+	settingAsk   = sift(`\b(what|whats|how)\b.{0,20}\b(po2|pao2|co2|pco2|paco2|ph|sats?|spo2|o2)\b.{0,12}$`)
+	checkWords   = sift(`^(is (this|it|that|he|she|pt)|am i right|agree|right)\b|\b(student|colleague|fellow|resident|intern|preceptee|orientee|learner|trainee|newbie|nurse|doc|doctor|attending|registrar|rn|md|rt|someone|they|he|she|my student|the student)\b[ :,-]*(says?|said|thinks?|thought|called|calls|call|reads?|claims?|wrote|writes|answers?|answered|put|calling|reckons?|labelled|labeled|charted|interpreted|believes?|told me)\b|\b(student|fellow|resident|intern|learner|trainee|orientee|preceptee)s?\s*:|\b(i|we|id|i'd|my|i am|im)\b *(would |also |just |am )?(say|says|said|think|thinks|thought|call|called|calling|read this|reckon|believe|interpret|vote|answer|guess|reading is|read is|take is|interpretation|impression)\b|\b(agree|correct|am i right|right|true or false|yes or no|do you agree|is that right|thoughts)\s*\?|\bis (this|it|that) (an? )?[a-z]`)
+	claimWord    = sift(`\b(\w*acid(osis|otic|aemia|emia)|alkal(osis|otic|aemia|emia)|hyper\w*vent\w*|hypo\w*vent\w*|hypox\w*|hypercap\w*|hypercarb\w*|hypocap\w*|compensated|uncompensated|compensation|ards|t[12]rf|type (1|2|i|ii|one|two)|respiratory failure|resp failure|shunt|dead ?space|normal|mixed|acute on chronic|retaining|oxygenat\w+ (ok|fine|well|good)|ventilat\w+ (ok|fine|well|good))\b[^?]*\?`)
+	bareQuestion = sift(`^(what'?s|whats|what is|how'?s|thoughts|interpret|read) (this|these|it|that|on this)\b`)
 )
 
 // clauses parts a message with an aim or a what-if into the clause that holds
@@ -29,12 +28,17 @@ func (p *parser) clauses(t []token, s string) (intent Intent, clause, rest []tok
 	case p.line.Intent != IntentNone && p.line.Intent != IntentNow:
 		return IntentNone, nil, t
 	}
+	var g grams
+	g.read(s)
 	for _, try := range []struct {
-		words  *regexp.Regexp
+		words  *sieve
 		intent Intent
 	}{{ifCore, IntentAim}, {supposeWords, IntentSuppose}, {aimWords, IntentAim}, {settingAsk, IntentSuppose}} {
-		at := try.words.FindStringIndex(s)
-		if at == nil || len(s) > 2000 {
+		if len(s) > 2000 || !try.words.may(&g) {
+			continue
+		}
+		at := try.words.re.FindStringIndex(s)
+		if at == nil {
 			continue
 		}
 		from := 0
@@ -46,7 +50,7 @@ func (p *parser) clauses(t []token, s string) (intent Intent, clause, rest []tok
 			return try.intent, clause, rest
 		}
 	}
-	if p.isCheck(s) {
+	if isCheck(s, &g) {
 		p.line.Intent = IntentCheck
 	}
 	return IntentNone, nil, t
@@ -71,14 +75,14 @@ func (p *parser) fits(intent Intent, clause []token) bool {
 
 // isCheck says that the words around the gas claim something that is to be
 // judged.
-func (p *parser) isCheck(s string) bool {
+func isCheck(s string, g *grams) bool {
 	if len(s) > 2000 {
 		s = s[:2000]
 	}
-	if bareQuestion.MatchString(strings.TrimSpace(s)) && !claimWord.MatchString(s) {
+	if bareQuestion.in(strings.TrimSpace(s), g) && !claimWord.in(s, g) {
 		return false
 	}
-	return checkWords.MatchString(strings.TrimSpace(s)) || claimWord.MatchString(s)
+	return checkWords.in(strings.TrimSpace(s), g) || claimWord.in(s, g)
 }
 
 // cutClause takes the clause that starts at offset from: up to the last break

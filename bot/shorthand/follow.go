@@ -1,7 +1,6 @@
 package shorthand
 
 import (
-	"regexp"
 	"strings"
 
 	"galeward/physio"
@@ -9,15 +8,15 @@ import (
 
 var (
 	// correctionWords take the typed value back.
-	correctionWords = regexp.MustCompile(`\b(sorry|oops+|ooops|whoops|woops|correction|corrected value|typo|mistyped|mistype|misread|miskeyed|my bad|my mistake|i meant|meant|should be|should read|should have been|shouldve been|supposed to be|scratch that|fat finger\w*|not \d[\d.,]*|was actually|is actually|actually (was|is|it)|wrong (number|value|one|co2|ph|po2|fio2)|rather than|instead of \d)\b|^\s*\*`)
+	correctionWords = sift(`\b(sorry|oops+|ooops|whoops|woops|correction|corrected value|typo|mistyped|mistype|misread|miskeyed|my bad|my mistake|i meant|meant|should be|should read|should have been|shouldve been|supposed to be|scratch that|fat finger\w*|not \d[\d.,]*|was actually|is actually|actually (was|is|it)|wrong (number|value|one|co2|ph|po2|fio2)|rather than|instead of \d)\b|^\s*\*`)
 	// wasBlood takes the kind of blood back.
-	wasBlood = regexp.MustCompile(`\b(it|that|this|gas|sample|one)('s| is| was| were|s) (actually |really |a |an )*(venous|vbg|arterial|abg|capillary|cap|cbg|mixed venous|central venous|central)\b`)
+	wasBlood = sift(`\b(it|that|this|gas|sample|one)('s| is| was| were|s) (actually |really |a |an )*(venous|vbg|arterial|abg|capillary|cap|cbg|mixed venous|central venous|central)\b`)
 	// wasValue takes a labelled value back: "fio2 was 60".
-	wasValue = regexp.MustCompile(`\b(ph|p?a?co2|p?a?o2|hco3|bic|bicarb|be|sats?|spo2|fio2|rr|vt|peep|hb|rate)\s+was\s+[\d.]`)
+	wasValue = sift(`\b(ph|p?a?co2|p?a?o2|hco3|bic|bicarb|be|sats?|spo2|fio2|rr|vt|peep|hb|rate)\s+was\s+[\d.]`)
 	// laterGas make a whole gas a later one of the thread.
-	laterGas = regexp.MustCompile(`^\s*(now|recheck|repeat|repeated|rpt|later|after|following|post|same|still|update|latest|redo|f/u|followup|follow up|new gas|next gas|next|then)\b|\b(hr|hrs|hour|hours|min|mins|minutes|h) (later|post|after|since)\b|\bsame (settings?|vent settings|fio2|o2|oxygen|everything|device)\b|\bextubated\b|\bre-?(check|peat)\b`)
+	laterGas = sift(`^\s*(now|recheck|repeat|repeated|rpt|later|after|following|post|same|still|update|latest|redo|f/u|followup|follow up|new gas|next gas|next|then)\b|\b(hr|hrs|hour|hours|min|mins|minutes|h) (later|post|after|since)\b|\bsame (settings?|vent settings|fio2|o2|oxygen|everything|device)\b|\bextubated\b|\bre-?(check|peat)\b`)
 	// laterWords make a line with some values a later state of the thread.
-	laterWords = regexp.MustCompile(`\bnow\b|^\s*(now|recheck|repeat|repeated|rpt|later|after|following|post|same|still|update|latest|redo|f/u|followup|follow up|new gas|next gas|next|then)\b|\b(hr|hrs|hour|hours|min|mins|minutes|h) (later|post|after|since)\b|\bsame (settings?|vent settings|fio2|o2|oxygen|everything|device)\b|\b(down|up) (to|from)\b|\b(came|come|gone|went|dropped|fell|rose|climbed) (up|down|to)\b|\b(weaned|changed|increased|decreased|switched|moved|turned|bumped|titrated|dropped|stepped) (to|up|down|him|her|them|over)\b|\bextubated\b|\bnow\s*$|\bre-?(check|peat)\b|\bafter (peep|niv|bipap|change|neb|suction|prone|proning|increase|decrease|the|cpap|hfnc|extub\w*|intub\w*)\b`)
+	laterWords = sift(`\bnow\b|^\s*(now|recheck|repeat|repeated|rpt|later|after|following|post|same|still|update|latest|redo|f/u|followup|follow up|new gas|next gas|next|then)\b|\b(hr|hrs|hour|hours|min|mins|minutes|h) (later|post|after|since)\b|\bsame (settings?|vent settings|fio2|o2|oxygen|everything|device)\b|\b(down|up) (to|from)\b|\b(came|come|gone|went|dropped|fell|rose|climbed) (up|down|to)\b|\b(weaned|changed|increased|decreased|switched|moved|turned|bumped|titrated|dropped|stepped) (to|up|down|him|her|them|over)\b|\bextubated\b|\bnow\s*$|\bre-?(check|peat)\b|\bafter (peep|niv|bipap|change|neb|suction|prone|proning|increase|decrease|the|cpap|hfnc|extub\w*|intub\w*)\b`)
 )
 
 // follow says how a gas relates to the thread's last one.
@@ -30,11 +29,11 @@ func (p *parser) follow(g *Gas, t []token) Follow {
 		return FollowNow
 	case p.line.Intent == IntentAim || p.line.Intent == IntentSuppose || p.line.Intent == IntentCheck && whole:
 		return FollowNone
-	case correctionWords.MatchString(head) && (!whole || p.h.Earlier != nil && !strings.Contains(head, "\n")):
+	case correctionWords.in(head, &p.grams) && (!whole || p.h.Earlier != nil && !strings.Contains(head, "\n")):
 		return FollowCorrection
-	case !whole && (wasBlood.MatchString(head) || wasValue.MatchString(head)):
+	case !whole && (wasBlood.in(head, &p.grams) || wasValue.in(head, &p.grams)):
 		return FollowCorrection
-	case laterGas.MatchString(head) && !headIsIntubation(head), !whole && laterWords.MatchString(head):
+	case laterGas.in(head, &p.grams) && !afterEvent.in(head, &p.grams), !whole && laterWords.in(head, &p.grams):
 		return FollowNow
 	case !whole && p.h.Earlier != nil && p.line.Intent == IntentNone && !measuredAnew(s):
 		return FollowAddition
@@ -52,13 +51,9 @@ func head(s string) string {
 	return s
 }
 
-// headIsIntubation says that "post" or "after" names an event before the first
-// gas and no earlier gas.
-func headIsIntubation(s string) bool {
-	return afterEvent.MatchString(s)
-}
-
-var afterEvent = regexp.MustCompile(`^\s*(post|after|following)[ -]*(intub\w*|op\w*|arrest|rosc|cardiac|code|extub\w*|cpr|vf|surgery|procedure|ictal)`)
+// afterEvent says that "post" or "after" names an event before the first gas
+// and no earlier gas.
+var afterEvent = sift(`^\s*(post|after|following)[ -]*(intub\w*|op\w*|arrest|rosc|cardiac|code|extub\w*|cpr|vf|surgery|procedure|ictal)`)
 
 // measuredAnew says that the line holds new measurements rather than what was
 // left out before.

@@ -54,22 +54,24 @@ type parser struct {
 	h     Habits
 	typed string // folded, in lower case
 	rest  string // without the command word
+	grams grams  // of typed
 	line  Line
 	mixed bool
 }
 
 func (p *parser) parse() Line {
+	p.grams.read(p.typed)
 	if c, ok := p.released(); ok {
 		return Line{Kind: Released, Picked: c}
 	}
-	if arg, sentence, ok := houseRule(p.typed[len(lead.FindString(p.typed)):]); ok && (p.h.Addressed || !strings.HasPrefix(arg, "word ")) {
+	if arg, sentence, ok := houseRule(p.typed[lead(p.typed):], &p.grams); ok && (p.h.Addressed || !strings.HasPrefix(arg, "word ")) {
 		return Line{Kind: Command, Intent: IntentHouse, Argument: arg, Sentence: sentence}
 	}
 	p.line.Intent, p.rest = command(p.typed)
 	if p.namesGas() {
 		p.line.Intent, p.rest = IntentNone, p.typed
 	}
-	p.line.Declined = declined(p.typed)
+	p.line.Declined = declined(p.typed, &p.grams)
 	p.read()
 	return p.verdict()
 }
@@ -101,7 +103,7 @@ func (p *parser) read() {
 	p.line.List = list
 	for i := range parts {
 		parts[i].mixed, parts[i].claims = p.mixed, claims
-		parts[i].corrects = p.h.Addressed && correctionWords.MatchString(head(p.rest))
+		parts[i].corrects = p.h.Addressed && correctionWords.in(head(p.rest), &p.grams)
 		g := readGas(parts[i].t, p.h, parts[i])
 		p.line.Gases = append(p.line.Gases, g)
 	}

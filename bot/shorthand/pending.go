@@ -14,7 +14,7 @@ func (p *parser) released() (*Choice, bool) {
 	if q == nil || len(q.Choices) == 0 {
 		return nil, false
 	}
-	said := plainWord(p.typed[len(lead.FindString(p.typed)):])
+	said := plainWord(p.typed[lead(p.typed):])
 	if said == "" || len(strings.Fields(said)) > 5 {
 		return nil, false
 	}

@@ -1,0 +1,119 @@
+package shorthand
+
+// grams marks which pieces of one, two and three characters a text holds: one
+// bit for each, several pieces may share a bit. A piece whose bit is not set
+// does not occur.
+type grams [gramBits / 64]uint64
+
+const (
+	gramBits = 4096
+	// capital marks that a text holds a capital letter.
+	capital = "\x01"
+)
+
+// plain is the class of a character: capitals as small letters, any digit as
+// a zero, any blank as a space.
+func plain(c byte) byte {
+	switch {
+	case c >= 'A' && c <= 'Z':
+		return c + 'a' - 'A'
+	case isDigit(c):
+		return '0'
+	case c == '\t' || c == '\n' || c == '\r' || c == '\f' || c == '\v':
+		return ' '
+	}
+	return c
+}
+
+// plainText gives the classes of a text, blanks in a row as one.
+func plainText(s string) string {
+	out := make([]byte, 0, len(s))
+	for i := 0; i < len(s); i++ {
+		if c := plain(s[i]); c != ' ' || len(out) == 0 || out[len(out)-1] != ' ' {
+			out = append(out, c)
+		}
+	}
+	return string(out)
+}
+
+func gram1(a byte) uint16       { return gram(2<<24 | uint32(a)) }
+func gram2(a, b byte) uint16    { return gram(1<<24 | uint32(a)<<8 | uint32(b)) }
+func gram3(a, b, c byte) uint16 { return gram(uint32(a)<<16 | uint32(b)<<8 | uint32(c)) }
+
+// gram spreads the pieces over the bits by a multiplication (Knuth 1973).
+func gram(piece uint32) uint16 { return uint16(piece * 2654435761 >> 20) }
+
+func (g *grams) set(i uint16)      { g[i/64] |= 1 << (i % 64) }
+func (g *grams) has(i uint16) bool { return g[i/64]&(1<<(i%64)) != 0 }
+
+// read marks the pieces of s.
+func (g *grams) read(s string) {
+	var a, b byte // the two characters before, 0 for none
+	for i := 0; i < len(s); i++ {
+		if s[i] >= 'A' && s[i] <= 'Z' {
+			g.set(gram1(capital[0]))
+		}
+		c := plain(s[i])
+		if c == ' ' && b == ' ' {
+			continue
+		}
+		g.set(gram1(c))
+		if b != 0 {
+			g.set(gram2(b, c))
+		}
+		if a != 0 {
+			g.set(gram3(a, b, c))
+		}
+		a, b = b, c
+	}
+}
+
+// readMasked marks the pieces that s can hold after any part of it has been
+// replaced by the mask of a gas.
+func (g *grams) readMasked(s string) {
+	g.read(s)
+	g.read(gasMask)
+	g.set(gram3('s', ' ', 'g')) // one mask behind another
+	var b byte
+	for i := 0; i < len(s); i++ {
+		c := plain(s[i])
+		g.set(gram2(c, ' '))
+		g.set(gram2(' ', c))
+		g.set(gram3(c, ' ', 'g'))
+		g.set(gram3('s', ' ', c))
+		g.set(gram3(b, c, ' '))
+		g.set(gram3(' ', b, c))
+		b = c
+	}
+}
+
+// gramsOf lists the longest pieces that text is made of.
+func gramsOf(text string) member {
+	switch len(text) {
+	case 0:
+		return nil
+	case 1:
+		return member{gram1(text[0])}
+	case 2:
+		return member{gram2(text[0], text[1])}
+	}
+	out := make(member, 0, len(text)-2)
+	for i := 2; i < len(text); i++ {
+		out = append(out, gram3(text[i-2], text[i-1], text[i]))
+	}
+	return out
+}
+
+// holdsOne says that a member of the group may occur.
+func (g *grams) holdsOne(group []member) bool {
+next:
+	for _, m := range group {
+		for _, i := range m {
+			if !g.has(i) {
+				continue next
+			}
+		}
+		return true
+	}
+	return false
+}

@@ -112,7 +112,9 @@ INDICES = {
 }
 
 
-def curve(po2, ph, pco2):
+def saturation(v, po2):
+    """The curve at the pH of a sample, 7.40 and 40 mmHg where none was said."""
+    ph, pco2 = v.get("ph", 7.4), v.get("paco2", 40.0)
     shift = -0.88 * (ph - 7.4) + 0.048 * numpy.log(pco2 / 40)
     x = numpy.log(po2 * 0.133322387415 / 7) - shift
     return 1 / (1 + numpy.exp(-(1.8747 + x + (3.5 + shift) * numpy.tanh(0.5342857 * x))))
@@ -124,8 +126,8 @@ def content(v, sat, po2):
 
 def admixture(v):
     """Berggren's equation; the end-capillary blood at the alveolar PO2."""
-    best = content(v, curve(alveolar(v), v["ph"], v["paco2"]), alveolar(v))
-    arterial = content(v, v["sao2"] if "sao2" in v else curve(v["pao2"], v["ph"], v["paco2"]), v["pao2"])
+    best = content(v, saturation(v, alveolar(v)), alveolar(v))
+    arterial = content(v, v["sao2"] if "sao2" in v else saturation(v, v["pao2"]), v["pao2"])
     return (best - arterial) / (best - content(v, v["svo2"], v["pvo2"]))
 
 
@@ -136,13 +138,15 @@ def delta(v):
 
 # Derived numbers that a whole sample is needed for: the sample and how.
 SAMPLES = {
-    "sao2_calc": (lambda v: curve(v["pao2"], v["ph"], v["paco2"]),
-                  [dict(ph=7.31, paco2=55, pao2=68), dict(ph=7.1, paco2=80, pao2=44), dict(ph=7.48, paco2=30, pao2=95)]),
-    "cao2": (lambda v: content(v, v["sao2"] if "sao2" in v else curve(v["pao2"], v["ph"], v["paco2"]), v["pao2"]),
+    "sao2_calc": (lambda v: saturation(v, v["pao2"]),
+                  [dict(ph=7.31, paco2=55, pao2=68), dict(ph=7.1, paco2=80, pao2=44), dict(ph=7.48, paco2=30, pao2=95),
+                   dict(pao2=58), dict(paco2=62, pao2=58)]),
+    "cao2": (lambda v: content(v, v["sao2"] if "sao2" in v else saturation(v, v["pao2"]), v["pao2"]),
              [dict(ph=7.31, paco2=55, pao2=68, fio2=0.4, hb=12, sao2=0.91), dict(ph=7.36, paco2=48, pao2=52, fio2=0.5, hb=9)]),
     "shunt": (admixture,
               [dict(ph=7.31, paco2=55, pao2=68, fio2=0.4, pb=760, hb=12, sao2=0.92, svo2=0.65, pvo2=37),
                dict(ph=7.38, paco2=41, pao2=62, fio2=0.6, pb=760, hb=10, svo2=0.6, pvo2=34),
+               dict(paco2=41, pao2=62, fio2=0.6, pb=760, hb=10, svo2=0.6, pvo2=34),
                dict(ph=7.25, paco2=60, pao2=110, fio2=1.0, pb=760, hb=13, sao2=0.975, svo2=0.7, pvo2=43)]),
     "delta_ratio": (delta,
                     [dict(ph=7.18, paco2=28, hco3=10.1, na=140, cl=104, albumin=38), dict(ph=7.31, paco2=37, hco3=18.2, na=142, cl=100)]),

@@ -45,28 +45,28 @@ func (sc *scene) measuredShunt(g LungGas) bool {
 		po2 = po2At(sat, g.Shift)
 	}
 	measured := float64(g.SaO2) > 0
-	iv := propagate(func(v []float64) float64 { return berggren(g, measured, v) }, []Input{
-		Measured(PaO2, sc.v.Val(PaO2)), Measured(SaO2, float64(g.filled().SaO2)), Measured(SvO2, sat),
-		Measured(PvO2, po2), Measured(PaCO2, g.Gas.PaCO2.MmHg()), Measured(PHq, float64(g.Shift.PH)), sc.input(FiO2, sc.v.Val(FiO2)),
-	})
+	in := append(sc.curveInputs(), Measured(SaO2, float64(g.filled().SaO2)), Measured(SvO2, sat), Measured(PvO2, po2),
+		sc.input(FiO2, sc.v.Val(FiO2)))
+	iv := propagate(func(v []float64) float64 { return berggren(g, measured, v) }, in)
 	capillary := g.filled().capillary(g.alveolar())
 	sc.add("cco2", "mL/dL", point(capillary), Hb, FiO2, PB, PaCO2)
 	sc.add("shunt", "", iv, Hb, PaO2, SvO2)
 	return true
 }
 
-// berggren is the venous admixture of PaO2, SaO2, SvO2, PvO2, PaCO2, pH and
-// FiO2. A saturation that was not measured is the curve's, whatever v says.
+// berggren is the venous admixture of PaO2, pH, PaCO2, SaO2, SvO2, PvO2 and
+// FiO2. A saturation that was not measured is the curve's, whatever v says; a
+// pH that is not known is 0, the standard one.
 func berggren(g LungGas, measured bool, v []float64) float64 {
-	g.PaO2, g.SaO2 = MmHg(v[0]), 0
+	g.PaO2, g.Shift.PH, g.Gas.PaCO2, g.SaO2 = MmHg(v[0]), PH(v[1]), MmHg(v[2]), 0
 	if measured {
-		g.SaO2 = Fraction(v[1])
+		g.SaO2 = Fraction(v[3])
 	}
-	g.Gas.PaCO2, g.Shift.PH, g.Gas.FiO2 = MmHg(v[4]), PH(v[5]), Fraction(v[6])
+	g.Gas.FiO2 = Fraction(v[6])
 	g = g.filled()
 	capillary := g.capillary(g.alveolar())
 	arterial := g.content(v[0], float64(g.SaO2))
-	return shunt(capillary, min(arterial, capillary), g.content(v[3], v[2])) // Berggren 1942
+	return shunt(capillary, min(arterial, capillary), g.content(v[5], v[4])) // Berggren 1942
 }
 
 func (sc *scene) estimatedShuntRange(g LungGas) {

@@ -332,14 +332,16 @@ func (sc *scene) saturationOfPaO2() Interval {
 	return propagate(func(v []float64) float64 { return saturation(v[0], shiftOf(v[1], v[2])) }, sc.curveInputs())
 }
 
-// curveInputs are the inputs of the curve; a pH or PaCO2 that is not known is
-// exactly the standard one.
+// curveInputs are the inputs of the curve: PaO2, pH, PaCO2. A pH or PaCO2 that
+// is not known is exactly the standard one, which 0 stands for.
 func (sc *scene) curveInputs() []Input {
 	in := []Input{Measured(PaO2, sc.v.Val(PaO2)), Bounded(point(0)), Bounded(point(0))}
 	if ph := sc.a.Triple.PH; ph != 0 {
 		in[1] = Measured(PHq, ph)
 	}
-	if pco2 := sc.a.Triple.PaCO2; pco2 != 0 {
+	if pco2 := sc.v.Val(PaCO2); pco2 != 0 {
+		in[2] = Measured(PaCO2, pco2)
+	} else if pco2 = sc.a.Triple.PaCO2; pco2 != 0 {
 		in[2] = Measured(PaCO2, pco2)
 	}
 	return in

@@ -21,9 +21,9 @@ type rawValue struct {
 // raws are the raw core values of one gas.
 type raws map[physio.Quantity]*rawValue
 
-// candidate is one way to read the raw values.
+// candidate is one way to read the raw values. It does not hold the values:
+// many are weighed and few are used.
 type candidate struct {
-	v            physio.Values
 	co2KPa       bool
 	o2KPa        bool
 	order        [3]physio.Quantity // what the PaCO2, PaO2 and HCO3 places hold
@@ -51,7 +51,7 @@ var orders = [][3]physio.Quantity{
 
 // candidates lists the possible readings, the cheapest first.
 func (r raws) candidates(units Units, s surroundings) []candidate {
-	var all []candidate
+	all := make([]candidate, 0, 4*len(orders))
 	for i, order := range orders {
 		if i > 0 && !r.movable(order) {
 			continue
@@ -107,25 +107,31 @@ func (r raws) unitChoices(order [3]physio.Quantity, q physio.Quantity) []bool {
 	return []bool{false, true}
 }
 
+// values gives what a candidate reads.
+func (r raws) values(c *candidate) (v physio.Values) {
+	for _, q := range coreQuantities {
+		raw := r.place(c.order, q)
+		if raw == nil {
+			continue
+		}
+		x := raw.v
+		if q == physio.PaCO2 && c.co2KPa || q == physio.PaO2 && c.o2KPa {
+			x = physio.KPa(x).MmHg()
+		}
+		v.Set(q, x)
+	}
+	return v
+}
+
 // build makes one candidate and weighs it.
 func (r raws) build(order [3]physio.Quantity, co2KPa, o2KPa bool, units Units, s surroundings) candidate {
 	c := candidate{co2KPa: co2KPa, o2KPa: o2KPa, order: order}
-	for _, q := range coreQuantities {
-		v := r.place(order, q)
-		if v == nil {
-			continue
-		}
-		x := v.v
-		if q == physio.PaCO2 && co2KPa || q == physio.PaO2 && o2KPa {
-			x = physio.KPa(x).MmHg()
-		}
-		c.v.Set(q, x)
-	}
 	both := r[physio.PaCO2] != nil && r[physio.PaO2] != nil
 	c.mixed = both && co2KPa != o2KPa
 	house := units == KPa
 	c.unitsDiffer = r[physio.PaCO2] != nil && co2KPa != house || r[physio.PaO2] != nil && o2KPa != house
-	c.doubt = doubtOf(&c.v, s)
+	v := r.values(&c)
+	c.doubt = doubtOf(&v, s)
 	c.cost = c.doubt
 	if c.unitsDiffer {
 		c.cost++
@@ -155,8 +161,21 @@ func cheapest(all []candidate, keep func(*candidate) bool) *candidate {
 	return best
 }
 
+// reading is a candidate with its values.
+type reading struct {
+	*candidate
+	v physio.Values
+}
+
+func (r raws) reading(c *candidate) *reading {
+	if c == nil {
+		return nil
+	}
+	return &reading{candidate: c, v: r.values(c)}
+}
+
 // checkGap is how far the check digit is from pH and PaCO2.
-func (c *candidate) checkGap() (float64, bool) {
+func (c *reading) checkGap() (float64, bool) {
 	if !c.v.Has(physio.PHq, physio.PaCO2) || !c.v.Has(physio.HCO3) && !c.v.Has(physio.BE) {
 		return 0, false
 	}

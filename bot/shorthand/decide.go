@@ -34,8 +34,8 @@ func (d *decider) decide() {
 		return
 	}
 	all := d.raw.candidates(d.units, d.near)
-	kept := cheapest(all, func(c *candidate) bool { return !c.orderDiffers })
-	moved := cheapest(all, func(c *candidate) bool { return c.orderDiffers })
+	kept := d.raw.reading(cheapest(all, func(c *candidate) bool { return !c.orderDiffers }))
+	moved := d.raw.reading(cheapest(all, func(c *candidate) bool { return c.orderDiffers }))
 	if kept == nil || kept.doubt >= impossible && (moved == nil || moved.doubt >= impossible) {
 		d.dropBad(all)
 		return
@@ -50,7 +50,7 @@ func (d *decider) decide() {
 // swapFits says that another order is so much better that the typed one is
 // doubted: the check digit fits it, or without a check digit the typed one is
 // next to impossible.
-func (d *decider) swapFits(kept, moved *candidate) bool {
+func (d *decider) swapFits(kept, moved *reading) bool {
 	if kept.doubt >= impossible {
 		return moved.doubt < quiet
 	}
@@ -64,7 +64,7 @@ func (d *decider) swapFits(kept, moved *candidate) bool {
 }
 
 // askSwap leaves the places that the two readings differ in open.
-func (d *decider) askSwap(kept, moved *candidate) {
+func (d *decider) askSwap(kept, moved *reading) {
 	ask := Question{Code: AskSwap, Quantity: physio.PaCO2, Value: moved.v.Val(physio.PaCO2)}
 	if v := d.raw[physio.PaCO2]; v != nil {
 		ask.Typed = v.typed
@@ -97,8 +97,8 @@ func typedIn(kpa bool) Units {
 }
 
 // settleUnits uses the kept reading when its unit is beyond doubt, else asks.
-func (d *decider) settleUnits(all []candidate, kept *candidate) {
-	house := cheapest(all, func(c *candidate) bool { return !c.orderDiffers && !c.unitsDiffer })
+func (d *decider) settleUnits(all []candidate, kept *reading) {
+	house := d.raw.reading(cheapest(all, func(c *candidate) bool { return !c.orderDiffers && !c.unitsDiffer }))
 	d.gas.Typed = typedIn(kept.co2KPa && d.raw[physio.PaCO2] != nil || kept.o2KPa && d.raw[physio.PaO2] != nil)
 	switch rival := d.rival(all, kept, house); {
 	case rival != nil:
@@ -115,7 +115,7 @@ func (d *decider) settleUnits(all []candidate, kept *candidate) {
 // rival gives the reading in other units that can not be excluded: without a
 // check digit the house's own units are given up only when impossible, and
 // kept only when they are not next to impossible.
-func (d *decider) rival(all []candidate, kept, house *candidate) *candidate {
+func (d *decider) rival(all []candidate, kept, house *reading) *reading {
 	_, checked := kept.checkGap()
 	if house == nil || checked && d.raw[physio.PaO2] == nil {
 		return nil
@@ -129,14 +129,14 @@ func (d *decider) rival(all []candidate, kept, house *candidate) *candidate {
 	if checked || kept.doubt < 3 {
 		return nil
 	}
-	return cheapest(all, func(c *candidate) bool {
+	return d.raw.reading(cheapest(all, func(c *candidate) bool {
 		return !c.orderDiffers && c.unitsDiffer && !c.mixed && c.doubt < kept.doubt
-	})
+	}))
 }
 
 // sure says that the unit of a pressure was said or is the only possible one
 // without being next to its other reading by a slip of the decimal point.
-func (d *decider) sure(kept *candidate, q physio.Quantity, kpa bool) bool {
+func (d *decider) sure(kept *reading, q physio.Quantity, kpa bool) bool {
 	v := d.raw[q]
 	if v == nil || v.unit != "" {
 		return true
@@ -149,14 +149,14 @@ func (d *decider) sure(kept *candidate, q physio.Quantity, kpa bool) bool {
 }
 
 // askUnits asks kPa or mmHg for both pressures and keeps neither.
-func (d *decider) askUnits(a, b *candidate) {
+func (d *decider) askUnits(a, b *reading) {
 	ask := Question{Code: AskUnit, Quantity: physio.PaCO2}
 	if v := d.raw[physio.PaCO2]; v != nil {
 		ask.Typed = v.typed
 	} else {
 		ask.Quantity, ask.Typed = physio.PaO2, d.raw[physio.PaO2].typed
 	}
-	for _, c := range []*candidate{a, b} {
+	for _, c := range []*reading{a, b} {
 		word := string(MmHg)
 		if c.co2KPa || c.o2KPa && !c.mixed {
 			word = string(KPa)
@@ -179,7 +179,7 @@ func (d *decider) askUnits(a, b *candidate) {
 
 // askPaO2Unit asks about a PaO2 that is possible in one unit only, and not in
 // the one of the PaCO2: another unit, or a slip of the decimal point.
-func (d *decider) askPaO2Unit(kept *candidate) {
+func (d *decider) askPaO2Unit(kept *reading) {
 	v := d.raw[physio.PaO2]
 	ask := Question{Code: AskPaO2, Quantity: physio.PaO2, Typed: v.typed}
 	slip := v.v * 10
@@ -200,7 +200,7 @@ func (d *decider) askPaO2Unit(kept *candidate) {
 }
 
 // unitNotes says when pressures were read in another unit than the channel's.
-func (d *decider) unitNotes(kept *candidate) {
+func (d *decider) unitNotes(kept *reading) {
 	house := d.units == KPa
 	code := NoteReadKPa
 	if house {
@@ -225,7 +225,8 @@ func (d *decider) dropBad(all []candidate) {
 	if len(all) == 0 {
 		return
 	}
-	all[0].v.Each(func(q physio.Quantity, v float64) {
+	v := d.raw.values(&all[0])
+	v.Each(func(q physio.Quantity, v float64) {
 		if q.Possible(v) {
 			d.gas.Sample.Set(q, v)
 		}

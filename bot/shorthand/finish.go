@@ -99,10 +99,8 @@ func possibleChoices(all []Choice) []Choice {
 func (r *reader) venousDoubt(gas bool) {
 	s := r.sample()
 	o2, hasO2 := s.Get(physio.PaO2)
-	ask := Question{Code: AskVenous, Quantity: physio.PaO2, Choices: []Choice{
-		{Word: "arterial", Blood: physio.Arterial}, {Word: "venous", Blood: physio.Venous}}}
 	if s.Blood == physio.BloodUncertain && gas {
-		r.ask(ask)
+		r.askVenous()
 		return
 	}
 	if s.Blood != physio.BloodUnstated && s.Blood != physio.Arterial || r.newborn() || s.Circumstance&(physio.CyanoticHeart|physio.ECMO|physio.CPR) != 0 {
@@ -116,8 +114,13 @@ func (r *reader) venousDoubt(gas bool) {
 	finger, has := s.Get(physio.SpO2)
 	switch {
 	case ok && has && finger-blood > 0.12 && blood < 0.80:
-		r.ask(ask)
+		r.askVenous()
 	case hasO2 && o2 < 45 && s.Blood == physio.BloodUnstated && !(has && ok && math.Abs(finger-blood) <= 0.10):
-		r.ask(ask)
+		r.askVenous()
 	}
+}
+
+func (r *reader) askVenous() {
+	r.ask(Question{Code: AskVenous, Quantity: physio.PaO2, Choices: []Choice{
+		{Word: "arterial", Blood: physio.Arterial}, {Word: "venous", Blood: physio.Venous}}})
 }

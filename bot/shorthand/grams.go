@@ -6,7 +6,8 @@ package shorthand
 type grams [gramBits / 64]uint64
 
 const (
-	gramBits = 4096
+	gramWidth = 14
+	gramBits  = 1 << gramWidth
 	// capital marks that a text holds a capital letter.
 	capital = "\x01"
 )
@@ -40,8 +41,11 @@ func gram1(a byte) uint16       { return gram(2<<24 | uint32(a)) }
 func gram2(a, b byte) uint16    { return gram(1<<24 | uint32(a)<<8 | uint32(b)) }
 func gram3(a, b, c byte) uint16 { return gram(uint32(a)<<16 | uint32(b)<<8 | uint32(c)) }
 
+// gramRun is the piece of n digits in a row.
+func gramRun(n int) uint16 { return gram(3<<24 | uint32(n)) }
+
 // gram spreads the pieces over the bits by a multiplication (Knuth 1973).
-func gram(piece uint32) uint16 { return uint16(piece * 2654435761 >> 20) }
+func gram(piece uint32) uint16 { return uint16(piece * 2654435761 >> (32 - gramWidth)) }
 
 func (g *grams) set(i uint16)      { g[i/64] |= 1 << (i % 64) }
 func (g *grams) has(i uint16) bool { return g[i/64]&(1<<(i%64)) != 0 }
@@ -49,6 +53,7 @@ func (g *grams) has(i uint16) bool { return g[i/64]&(1<<(i%64)) != 0 }
 // read marks the pieces of s.
 func (g *grams) read(s string) {
 	var a, b byte // the two characters before, 0 for none
+	digits := 0
 	for i := 0; i < len(s); i++ {
 		if s[i] >= 'A' && s[i] <= 'Z' {
 			g.set(gram1(capital[0]))
@@ -58,6 +63,9 @@ func (g *grams) read(s string) {
 			continue
 		}
 		g.set(gram1(c))
+		if digits = digitsTo(digits, c); digits > 3 {
+			g.set(gramRun(digits))
+		}
 		if b != 0 {
 			g.set(gram2(b, c))
 		}
@@ -77,31 +85,46 @@ func (g *grams) readMasked(s string) {
 	var b byte
 	for i := 0; i < len(s); i++ {
 		c := plain(s[i])
-		g.set(gram2(c, ' '))
+		if !wordByte(c) { // a gas begins behind no letter or digit
+			g.set(gram2(c, ' '))
+			g.set(gram3(c, ' ', 'g'))
+			g.set(gram3(b, c, ' '))
+		}
 		g.set(gram2(' ', c))
-		g.set(gram3(c, ' ', 'g'))
 		g.set(gram3('s', ' ', c))
-		g.set(gram3(b, c, ' '))
 		g.set(gram3(' ', b, c))
 		b = c
 	}
 }
 
-// gramsOf lists the longest pieces that text is made of.
+// gramsOf lists the pieces that text is made of. A short text lists the
+// smaller ones too, since one bit alone may be set by another piece.
 func gramsOf(text string) member {
-	switch len(text) {
-	case 0:
-		return nil
-	case 1:
+	if len(text) == 1 {
 		return member{gram1(text[0])}
-	case 2:
-		return member{gram2(text[0], text[1])}
 	}
-	out := make(member, 0, len(text)-2)
-	for i := 2; i < len(text); i++ {
-		out = append(out, gram3(text[i-2], text[i-1], text[i]))
+	var out member
+	digits := 0
+	for i := 0; i < len(text); i++ {
+		if i > 1 {
+			out = append(out, gram3(text[i-2], text[i-1], text[i]))
+		}
+		if i > 0 && len(text) < 5 {
+			out = append(out, gram2(text[i-1], text[i]))
+		}
+		if digits = digitsTo(digits, text[i]); digits > 3 {
+			out = append(out, gramRun(digits))
+		}
 	}
 	return out
+}
+
+// digitsTo counts the digits in a row up to c.
+func digitsTo(before int, c byte) int {
+	if c == '0' {
+		return min(before+1, 9)
+	}
+	return 0
 }
 
 // holdsOne says that a member of the group may occur.

@@ -20,7 +20,7 @@ type lexer struct {
 // lex cuts s into tokens. Phrases of several words become one token, percent
 // signs join their number.
 func lex(s string) []token {
-	l := &lexer{s: s, gap: true}
+	l := &lexer{s: s, gap: true, out: make([]token, 0, len(s)/2+4)}
 	for l.i < len(l.s) {
 		l.next()
 	}

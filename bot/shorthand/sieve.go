@@ -6,45 +6,73 @@ import (
 	"sort"
 )
 
-// sieve is a pattern with what a text must hold before the pattern can match:
-// from every group one member at least. The groups are derived from the
-// pattern itself, so that they can never leave out a match; most lines hold
-// none of them, and the pattern, which is dear, is not tried.
+// sieve is a pattern with what a text must hold before the pattern can match.
+// That is derived from the pattern itself, so that it can never leave out a
+// match; most lines hold none of it, and the pattern, which is dear, is not
+// tried.
 type sieve struct {
-	re     *regexp.Regexp
-	groups [][]member
+	re *regexp.Regexp
+	// branches are the alternatives of the pattern.
+	branches []branch
 }
+
+// branch lists groups, each with a member that occurs in every match.
+type branch [][]member
 
 // member is a piece of text that may have to occur, as the grams it is made of.
 type member []uint16
 
-// sift compiles a pattern with its groups.
+// sift compiles a pattern with its branches.
 func sift(pattern string) *sieve {
 	s := &sieve{re: regexp.MustCompile(pattern)}
 	tree, err := syntax.Parse(pattern, syntax.Perl)
 	if err != nil {
-		return s
+		return &sieve{re: s.re, branches: []branch{nil}}
 	}
-	all := derive(tree.Simplify()).asGroups()
-	sort.SliceStable(all, func(a, b int) bool { return likeliness(all[a]) < likeliness(all[b]) })
-	for _, group := range all {
-		members := make([]member, 0, len(group))
-		for _, text := range group {
-			members = append(members, gramsOf(text))
-		}
-		s.groups = append(s.groups, members)
+	for _, part := range alternatives(tree.Simplify()) {
+		s.branches = append(s.branches, branchOf(derive(part).asGroups()))
 	}
 	return s
 }
 
+// alternatives are the parts of a pattern of which one matches. The parser
+// puts what all begin with, such as a word's edge, in front of them.
+func alternatives(re *syntax.Regexp) []*syntax.Regexp {
+	switch n := len(re.Sub); {
+	case re.Op == syntax.OpAlternate:
+		return re.Sub
+	case re.Op == syntax.OpConcat && n == 2 && re.Sub[0].Op == syntax.OpWordBoundary:
+		return alternatives(re.Sub[1])
+	}
+	return []*syntax.Regexp{re}
+}
+
+// branchOf puts the rarest group first.
+func branchOf(groups [][]string) branch {
+	sort.SliceStable(groups, func(a, b int) bool { return likeliness(groups[a]) < likeliness(groups[b]) })
+	var b branch
+	for _, group := range groups {
+		members := make([]member, 0, len(group))
+		for _, text := range group {
+			members = append(members, gramsOf(text))
+		}
+		b = append(b, members)
+	}
+	return b
+}
+
 // may says that a text with these grams may hold a match.
 func (s *sieve) may(g *grams) bool {
-	for _, group := range s.groups {
-		if !g.holdsOne(group) {
-			return false
+next:
+	for _, b := range s.branches {
+		for _, group := range b {
+			if !g.holdsOne(group) {
+				continue next
+			}
 		}
+		return true
 	}
-	return true
+	return false
 }
 
 // in says that the text, whose grams g holds, matches.

@@ -347,3 +347,33 @@ func assessIndex(s physio.Sample, key string) (physio.Index, bool) {
 	a := assess(s)
 	return a.Index(key)
 }
+
+// TestMechanisms: which mechanisms the numbers point to (Petersson and Glenny
+// 2014; the table of mechanisms is common practice).
+func TestMechanisms(t *testing.T) {
+	abg := func(pco2, po2, fio2 float64, more ...any) physio.Sample {
+		return gas(append([]any{physio.PHq, 7.36, physio.PaCO2, pco2, physio.PaO2, po2, physio.FiO2, fio2, physio.Age, 40}, more...)...)
+	}
+	for _, c := range []struct {
+		what string
+		s    physio.Sample
+		want []physio.Mechanism
+	}{
+		{"hypoventilation alone", abg(60, 66, 0.21), []physio.Mechanism{physio.MechHypoventilation}},
+		{"altitude alone", abg(31, 58, 0.21, physio.Altitude, 3350), []physio.Mechanism{physio.MechLowInspiredPO2}},
+		{"transfer alone", abg(38, 60, 0.21), []physio.Mechanism{physio.MechMismatchOrShunt}},
+		{"both", abg(60, 45, 0.30), []physio.Mechanism{physio.MechHypoventilation, physio.MechMismatchOrShunt}},
+		{"none", abg(40, 95, 0.21), nil},
+	} {
+		got := assess(c.s).Mechanism
+		if len(got) != len(c.want) {
+			t.Errorf("%s: %v, want %v", c.what, got, c.want)
+			continue
+		}
+		for i := range got {
+			if got[i] != c.want[i] {
+				t.Errorf("%s: %v, want %v", c.what, got, c.want)
+			}
+		}
+	}
+}

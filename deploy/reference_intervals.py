@@ -14,12 +14,12 @@ SPREADS = {
     "ph": (0.005, 0), "paco2": (0.74, 0.0185), "pao2": (0, 0.036), "hco3": (0, 0.022), "sao2": (0.005, 0), "spo2": (0.02, 0),
     "fio2": (0.005, 0), "etco2": (1, 0), "peco2": (1, 0), "vt": (0, 0.05), "ve": (0, 0.05), "rr": (1, 0), "pplat": (0.5, 0),
     "peep": (0.5, 0), "pip": (0.5, 0), "mpaw": (0.5, 0), "na": (0.7, 0), "k": (0.05, 0), "cl": (0.7, 0), "lactate": (0.1, 0.03),
-    "albumin": (0.8, 0), "pb": (1, 0), "weight": (0, 0.01), "phosphate": (0.03, 0), "pbw": (0, 0), "calcium": (0, 0), "magnesium": (0, 0),
+    "albumin": (0.8, 0), "pb": (1, 0), "weight": (0, 0.01), "phosphate": (0.03, 0), "pbw": (0, 0), "calcium": (0, 0.01), "magnesium": (0, 0.02),
     "hb": (0, 0.02), "svo2": (0.005, 0), "pvo2": (0, 0.036),
 }
 
-# Whole samples, which hold one another's inputs: a stated fraction of oxygen is
-# taken as it is there, and the pressure is exact where it was not measured.
+# Whole samples, which hold one another's inputs. The spread of a set fraction of
+# oxygen and of the pressure is lost there beside that of the others.
 EXACT = ("fio2", "pb")
 
 PATIENTS = {

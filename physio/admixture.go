@@ -8,12 +8,11 @@ func (sc *scene) admixture() {
 	if !sc.lungO2 || !sc.a.Oxygen.Known || sc.a.Oxygen.Estimated || !sc.v.Has(PaO2, PaCO2) || !sc.adultScale() || sc.dyshaemoglobin() {
 		return
 	}
-	gas := sc.lungGas()
-	if gas.alveolar() <= sc.v.Val(PaO2) {
+	if sc.lungGas(&sc.v).alveolar() <= sc.v.Val(PaO2) {
 		return
 	}
-	if !sc.measuredShunt(gas) && sc.a.Oxygen.FiO2.Value >= isoShuntFrom {
-		sc.estimatedShuntRange(gas)
+	if !sc.measuredShunt() && sc.a.Oxygen.FiO2.Value >= isoShuntFrom {
+		sc.estimatedShuntRange()
 	}
 }
 
@@ -21,58 +20,75 @@ func (sc *scene) admixture() {
 // with scatter of ventilation and perfusion (BJA 1994;72:515).
 const isoShuntFrom = 0.35
 
-func (sc *scene) lungGas() LungGas {
-	d := sc.a.Triple
+// lungGas is the gas of v. A measured saturation away from the curve is not of
+// this gas.
+func (sc *scene) lungGas(v *Values) LungGas {
 	g := LungGas{
-		Gas:  AlveolarGas{FiO2: Fraction(sc.a.Oxygen.FiO2.Value), PB: MmHg(sc.a.PB), PaCO2: MmHg(sc.v.Val(PaCO2))},
-		PaO2: MmHg(sc.v.Val(PaO2)), Hb: Haemoglobin(sc.v.Val(Hb)),
-		Shift: CurveShift{PH: PH(d.PH)},
+		Gas:  AlveolarGas{FiO2: Fraction(v.Val(FiO2)), PB: MmHg(v.Val(PB)), PaCO2: MmHg(v.Val(PaCO2))},
+		PaO2: MmHg(v.Val(PaO2)), Hb: Haemoglobin(v.Val(Hb)),
 	}
-	if s, ok := sc.v.Get(SaO2); ok && !sc.saturationMismatch() {
-		g.SaO2 = Fraction(s)
+	if sc.a.Triple.PH != 0 {
+		g.Shift.PH = PH(v.Val(PHq))
 	}
-	return g
+	if !sc.saturationMismatch() {
+		g.SaO2 = Fraction(v.Val(SaO2))
+	}
+	return g.filled()
+}
+
+// gasInputs are what a shunt is worked out from.
+func (sc *scene) gasInputs(more ...Quantity) []Quantity {
+	on := append([]Quantity{FiO2, PB, PaCO2, PaO2}, more...)
+	if sc.a.Triple.PH != 0 {
+		on = append(on, PHq)
+	}
+	for _, q := range []Quantity{Hb, SaO2} {
+		if sc.v.Has(q) {
+			on = append(on, q)
+		}
+	}
+	return on
 }
 
 // measuredShunt is Berggren's equation with the content of mixed venous blood.
-func (sc *scene) measuredShunt(g LungGas) bool {
+func (sc *scene) measuredShunt() bool {
 	if !sc.v.Has(Hb, SvO2) {
 		return false
 	}
-	sat := sc.v.Val(SvO2)
-	po2, ok := sc.v.Get(PvO2)
-	if !ok {
-		po2 = po2At(sat, g.Shift)
+	venous := []Quantity{SvO2}
+	if sc.v.Has(PvO2) {
+		venous = append(venous, PvO2)
 	}
-	measured := float64(g.SaO2) > 0
-	in := append(sc.curveInputs(), Measured(SaO2, float64(g.filled().SaO2)), Measured(SvO2, sat), Measured(PvO2, po2),
-		sc.input(FiO2, sc.v.Val(FiO2)))
-	iv := propagate(func(v []float64) float64 { return berggren(g, measured, v) }, in)
-	capillary := g.filled().capillary(g.alveolar())
-	sc.add("cco2", "mL/dL", point(capillary), Hb, FiO2, PB, PaCO2)
-	sc.add("shunt", "", iv, Hb, PaO2, SvO2)
+	sc.add("cco2", "mL/dL", sc.carry(func(v *Values, _ []float64) float64 {
+		g := sc.lungGas(v)
+		return g.capillary(g.alveolar())
+	}, sc.gasInputs()), Hb, FiO2, PB, PaCO2)
+	sc.add("shunt", "", sc.carry(func(v *Values, _ []float64) float64 {
+		return sc.shuntOf(v)
+	}, sc.gasInputs(venous...)), Hb, PaO2, SvO2)
 	return true
 }
 
-// berggren is the venous admixture of PaO2, pH, PaCO2, SaO2, SvO2, PvO2 and
-// FiO2. A saturation that was not measured is the curve's, whatever v says; a
-// pH that is not known is 0, the standard one.
-func berggren(g LungGas, measured bool, v []float64) float64 {
-	g.PaO2, g.Shift.PH, g.Gas.PaCO2, g.SaO2 = MmHg(v[0]), PH(v[1]), MmHg(v[2]), 0
-	if measured {
-		g.SaO2 = Fraction(v[3])
+// shuntOf is the venous admixture of v. A tension of mixed venous blood that was
+// not measured is the curve's.
+func (sc *scene) shuntOf(v *Values) float64 {
+	g, sat := sc.lungGas(v), v.Val(SvO2)
+	po2, ok := v.Get(PvO2)
+	if !ok {
+		po2 = po2At(sat, g.Shift)
 	}
-	g.Gas.FiO2 = Fraction(v[6])
-	g = g.filled()
 	capillary := g.capillary(g.alveolar())
-	arterial := g.content(v[0], float64(g.SaO2))
-	return shunt(capillary, min(arterial, capillary), g.content(v[5], v[4])) // Berggren 1942
+	arterial := g.content(g.PaO2.MmHg(), float64(g.SaO2))
+	return shunt(capillary, min(arterial, capillary), g.content(po2, sat)) // Berggren 1942
 }
 
-func (sc *scene) estimatedShuntRange(g LungGas) {
-	g.Difference = DifferenceHealthy
-	low := shuntFromGas(g)
-	g.Difference = DifferenceICU
-	high := shuntFromGas(g)
-	sc.add("shunt_estimated", "", Interval{Value: (low + high) / 2, Low: low, High: high}, PaO2, FiO2, PB, PaCO2)
+func (sc *scene) estimatedShuntRange() {
+	iv := sc.carryBand(func(v *Values) Span {
+		g := sc.lungGas(v)
+		g.Difference = DifferenceHealthy
+		low := shuntFromGas(g)
+		g.Difference = DifferenceICU
+		return Span{low, shuntFromGas(g)}
+	}, middleOf, sc.gasInputs()...)
+	sc.add("shunt_estimated", "", iv, PaO2, FiO2, PB, PaCO2)
 }

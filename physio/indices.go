@@ -170,7 +170,7 @@ func (sc *scene) indices() {
 		if !v.Has(d.in...) || !d.when(sc) {
 			continue
 		}
-		sc.derive(d, &v)
+		sc.derive(d)
 	}
 	sc.needs()
 	sc.bands()
@@ -181,13 +181,10 @@ func (sc *scene) indices() {
 // usualIndices is room for the indices of a usual gas.
 const usualIndices = 20
 
-// derive carries one row of the table out.
-func (sc *scene) derive(d *derivation, v *Values) {
-	in := make([]Input, len(d.in))
-	for i, q := range d.in {
-		in[i] = sc.input(q, v.Val(q))
-	}
-	sc.add(d.key, d.unit, propagate(d.f, in), d.in...)
+// derive carries one row of the table out, by the readings that its inputs were
+// worked out from where they were.
+func (sc *scene) derive(d *derivation) {
+	sc.add(d.key, d.unit, sc.carryInputs(d.f, d.in), d.in...)
 }
 
 // add notes an index whose numbers are ordinary.
@@ -195,14 +192,6 @@ func (sc *scene) add(key, unit string, iv Interval, in ...Quantity) {
 	if finite(iv.Value) && finite(iv.Low) && finite(iv.High) {
 		sc.a.Indices = append(sc.a.Indices, Index{Key: key, Interval: iv, Unit: unit, Inputs: in})
 	}
-}
-
-// input is a quantity with the spread it brings into a formula.
-func (sc *scene) input(q Quantity, v float64) Input {
-	if q == FiO2 && sc.a.Oxygen.Known {
-		return Bounded(sc.a.Oxygen.FiO2)
-	}
-	return Measured(q, v)
 }
 
 // given takes over derived numbers that were measured or typed as such.
@@ -219,40 +208,48 @@ func (sc *scene) needs() {
 	if !adultRules(sc) {
 		return
 	}
-	d, r := sc.a.Triple, sc.bloodRanges()
-	anchor := r.Anchor
-	acute := acuteHCO3(d.PaCO2, anchor)
-	span := func(low, high float64) Interval { return Interval{Value: (low + high) / 2, Low: low, High: high} }
-	chronic := chronicHypercapniaHCO3(d.PaCO2, anchor)
-	if d.PaCO2 < anchor.PaCO2 {
-		c := chronicHypocapniaHCO3(d.PaCO2, anchor)
-		chronic = Span{c - hypocapniaBand, c + hypocapniaBand}
-	}
-	sc.add("expected_hco3_acute", "mmol/L", span(acute-acuteTolerance, acute+acuteTolerance), PaCO2)
-	sc.add("expected_hco3_chronic", "mmol/L", span(chronic.Low, chronic.High), PaCO2)
-	sc.add("expected_ph_acute", "", point(phAtPCO2(anchor.SBE, d.PaCO2)), PaCO2)
-	low, high := phFrom(d.PaCO2, chronic.Low), phFrom(d.PaCO2, chronic.High)
-	sc.add("expected_ph_chronic", "", span(low, high), PaCO2)
+	d, anchor := sc.a.Triple, sc.bloodRanges().Anchor
+	acute := func(v *Values) Span { return bandAround(acuteHCO3(v.Val(PaCO2), anchor), acuteTolerance) }
+	chronic := func(v *Values) Span { return chronicHCO3(v.Val(PaCO2), anchor) }
+	sc.add("expected_hco3_acute", "mmol/L", sc.carryBand(acute, middleOf, PaCO2), PaCO2)
+	sc.add("expected_hco3_chronic", "mmol/L", sc.carryBand(chronic, middleOf, PaCO2), PaCO2)
+	sc.add("expected_ph_acute", "", sc.carry(func(v *Values, _ []float64) float64 {
+		return phAtPCO2(anchor.SBE, v.Val(PaCO2))
+	}, []Quantity{PaCO2}), PaCO2)
+	sc.add("expected_ph_chronic", "", sc.carryBand(func(v *Values) Span {
+		b := chronic(v)
+		return Span{phFrom(v.Val(PaCO2), b.Low), phFrom(v.Val(PaCO2), b.High)}
+	}, middleOf, PaCO2), PaCO2)
 	t := sc.tripleOf(d)
 	switch p := classify(t).Primary; p {
 	case MetabolicAcidosis:
-		n := t.acidosisNeed()
-		sc.add("expected_paco2", "mmHg", span(n.Low, n.High), PHq, HCO3)
+		sc.add("expected_paco2", "mmHg", centred(t.acidosisNeed()), PHq, HCO3)
 	case MetabolicAlkalosis:
-		n := t.alkalosisNeed()
-		sc.add("expected_paco2", "mmHg", span(n.Low, n.High), HCO3)
+		sc.add("expected_paco2", "mmHg", centred(t.alkalosisNeed()), HCO3)
 	}
 }
+
+// chronicHCO3 is the band of the chronic response on either side of the anchor.
+func chronicHCO3(pco2 float64, from Anchor) Span {
+	if pco2 < from.PaCO2 {
+		return bandAround(chronicHypocapniaHCO3(pco2, from), hypocapniaBand)
+	}
+	return chronicHypercapniaHCO3(pco2, from)
+}
+
+func bandAround(v, tolerance float64) Span { return Span{v - tolerance, v + tolerance} }
+
+// centred is a band as an interval with its value in the middle.
+func centred(b Span) Interval { return Interval{Value: (b.Low + b.High) / 2, Low: b.Low, High: b.High} }
 
 // bands adds the expected A-a on air, the PaO2 of a healthy lung at this
 // PaCO2, and the delta ratio.
 func (sc *scene) bands() {
 	if onAir(sc) && sc.adultScale() && sc.a.Population != Child {
-		b := sc.expectedAA()
-		sc.add("aa_expected", "mmHg", Interval{Value: (b.Low + b.High) / 2, Low: b.Low, High: b.High}, Age)
+		sc.add("aa_expected", "mmHg", centred(sc.expectedAA()), Age)
 	}
-	if pa, ok := sc.a.Index("pao2_alveolar"); ok && sc.lungO2 && sc.v.Has(PaCO2) && sc.adultScale() {
-		sc.a.Oxygenation.HealthyPaO2 = sc.healthyPaO2(pa)
+	if _, ok := sc.a.Index("pao2_alveolar"); ok && sc.lungO2 && sc.v.Has(PaCO2) && sc.adultScale() {
+		sc.a.Oxygenation.HealthyPaO2 = sc.healthyPaO2()
 		sc.add("pao2_expected_at_paco2", "mmHg", sc.a.Oxygenation.HealthyPaO2, PaCO2, FiO2, PB)
 	}
 	sc.deltaRatio()
@@ -261,24 +258,21 @@ func (sc *scene) bands() {
 // deltaRatio compares the gap with the fall of bicarbonate, which is in both:
 // they err together.
 func (sc *scene) deltaRatio() {
-	anchor, hco3 := sc.a.Ranges.Anchor.HCO3, sc.a.Triple.HCO3
-	in := []Input{Measured(Na, sc.v.Val(Na)), Measured(Cl, sc.v.Val(Cl)), Measured(HCO3, hco3)}
-	gap, ok := sc.a.Index("anion_gap_corrected")
-	if ok {
-		in = append(in, Measured(Albumin, sc.v.Val(Albumin)))
-	} else if gap, ok = sc.a.Index("anion_gap"); !ok {
+	gap, corrected := sc.a.Index("anion_gap_corrected")
+	if !corrected {
+		gap, _ = sc.a.Index("anion_gap")
+	}
+	anchor := sc.a.Ranges.Anchor.HCO3
+	if gap.Value < gapHigh || anchor-sc.a.Triple.HCO3 < deltaSmallestFall {
 		return
 	}
-	if gap.Value < gapHigh || anchor-hco3 < deltaSmallestFall {
-		return
-	}
-	sc.add("delta_ratio", "", propagate(func(v []float64) float64 {
-		rise := anionGap(v[0], v[1], v[2]) - gapUsual
-		if len(v) > 3 {
-			rise += albuminCorrection(v[3], float64(AlbuminTexts))
+	sc.add("delta_ratio", "", sc.carry(func(v *Values, _ []float64) float64 {
+		rise := anionGap(v.Val(Na), v.Val(Cl), v.Val(HCO3)) - gapUsual
+		if corrected {
+			rise += albuminCorrection(v.Val(Albumin), float64(AlbuminTexts))
 		}
-		return deltaRatio(rise, anchor-v[2])
-	}, in), Na, Cl, HCO3)
+		return deltaRatio(rise, anchor-v.Val(HCO3))
+	}, gap.Inputs), Na, Cl, HCO3)
 }
 
 // adultScale says that adult expectations of PaO2 hold.
@@ -304,13 +298,19 @@ const (
 
 // healthyPaO2 is the PaO2 that a healthy lung would have: the alveolar PO2
 // less the expected A-a on air, or times a healthy a/A on oxygen.
-func (sc *scene) healthyPaO2(pa Index) Interval {
+func (sc *scene) healthyPaO2() Interval {
+	alveolar := func(v *Values) float64 { return aboutPA(v.Val(FiO2), v.Val(PB), v.Val(PaCO2)) }
 	if onAir(sc) {
 		b := sc.expectedAA()
-		low, high := pa.Value-b.High, pa.Value-b.Low
-		return Interval{Value: (low + high) / 2, Low: low, High: high}
+		return sc.carryBand(func(v *Values) Span {
+			pa := alveolar(v)
+			return Span{pa - b.High, pa - b.Low}
+		}, middleOf, FiO2, PB, PaCO2)
 	}
-	return Interval{Value: aaEfficientRatio * pa.Value, Low: aaEfficientRatio * pa.Low, High: healthyRatioHigh * pa.High}
+	return sc.carryBand(func(v *Values) Span {
+		pa := alveolar(v)
+		return Span{aaEfficientRatio * pa, healthyRatioHigh * pa}
+	}, 0, FiO2, PB, PaCO2)
 }
 
 // healthyRatioHigh is the upper end of a healthy a/A, from memory.
@@ -329,40 +329,47 @@ func (sc *scene) contents() {
 
 // saturationOfPaO2 is the saturation at this PaO2, pH and PaCO2.
 func (sc *scene) saturationOfPaO2() Interval {
-	return propagate(func(v []float64) float64 { return saturation(v[0], shiftOf(v[1], v[2])) }, sc.curveInputs())
+	return sc.carry(func(v *Values, _ []float64) float64 { return sc.curveAt(v) }, sc.curveInputs())
 }
 
-// curveInputs are the inputs of the curve: PaO2, pH, PaCO2. A pH or PaCO2 that
-// is not known is exactly the standard one, which 0 stands for.
-func (sc *scene) curveInputs() []Input {
-	in := []Input{Measured(PaO2, sc.v.Val(PaO2)), Bounded(point(0)), Bounded(point(0))}
-	if ph := sc.a.Triple.PH; ph != 0 {
-		in[1] = Measured(PHq, ph)
+// curveInputs are the inputs of the curve that are known: a pH or PaCO2 that is
+// not is exactly the standard one.
+func (sc *scene) curveInputs(more ...Quantity) []Quantity {
+	on := append(more, PaO2)
+	if sc.a.Triple.PH != 0 {
+		on = append(on, PHq)
 	}
-	if pco2 := sc.v.Val(PaCO2); pco2 != 0 {
-		in[2] = Measured(PaCO2, pco2)
-	} else if pco2 = sc.a.Triple.PaCO2; pco2 != 0 {
-		in[2] = Measured(PaCO2, pco2)
+	if sc.v.Has(PaCO2) || sc.a.Triple.PaCO2 != 0 {
+		on = append(on, PaCO2)
 	}
-	return in
+	return on
 }
 
-func shiftOf(ph, pco2 float64) CurveShift { return CurveShift{PH: PH(ph), PaCO2: MmHg(pco2)} }
+// curveAt is the saturation of the curve for v.
+func (sc *scene) curveAt(v *Values) float64 {
+	at := CurveShift{PaCO2: MmHg(v.Val(PaCO2))}
+	if sc.a.Triple.PH != 0 {
+		at.PH = PH(v.Val(PHq))
+	}
+	return saturation(v.Val(PaO2), at)
+}
 
-// arterialContent adds CaO2: a measured saturation first, with the fractions
-// of dyshaemoglobin taken off, else the one of the curve.
+// arterialContent adds CaO2: a measured saturation first, else the one of the
+// curve.
 func (sc *scene) arterialContent() {
 	if !sc.v.Has(Hb, PaO2) || !sc.lungO2 {
 		return
 	}
-	in := append(sc.curveInputs(), Measured(Hb, sc.v.Val(Hb)))
-	content := func(v []float64) float64 {
-		return BindingFunctional.content(v[3], saturation(v[0], shiftOf(v[1], v[2])), v[0])
+	if sc.v.Has(SaO2) {
+		sc.addContent(func(v *Values) float64 { return v.Val(SaO2) }, []Quantity{Hb, PaO2, SaO2})
+		return
 	}
-	if sat, ok := sc.v.Get(SaO2); ok {
-		in = append(in, Measured(SaO2, sat))
-		content = func(v []float64) float64 { return BindingFunctional.content(v[3], v[4], v[0]) }
-	}
-	iv := propagate(content, in)
+	sc.addContent(sc.curveAt, sc.curveInputs(Hb))
+}
+
+func (sc *scene) addContent(sat func(*Values) float64, on []Quantity) {
+	iv := sc.carry(func(v *Values, _ []float64) float64 {
+		return BindingFunctional.content(v.Val(Hb), sat(v), v.Val(PaO2))
+	}, on)
 	sc.add("cao2", "mL/dL", iv, Hb, SaO2, PaO2)
 }

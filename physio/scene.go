@@ -7,6 +7,8 @@ type scene struct {
 	set Setting
 	v   Values // the sample's values, with what was worked out
 	a   *Assessment
+	// made is what volumes worked out, for carry.
+	made []completion
 	// lung is true when the sample may speak of the lung: arterial blood, or
 	// capillary blood for CO2, and no circuit that exchanges gas for it.
 	lungCO2, lungO2 bool
@@ -127,24 +129,12 @@ func (sc *scene) oxygen() {
 
 // volumes completes minute volume, tidal volume and predicted weight.
 func (sc *scene) volumes() {
-	v := &sc.v
-	rate, known := v.Get(RR)
-	if !known {
-		if rate, known = v.Get(RRSet); known {
-			v.Set(RR, rate)
-		}
+	sc.complete(RR, func(v *Values) float64 { return v.Val(RRSet) }, RRSet)
+	if sex := sc.s.Sex; sex != SexUnstated && sc.adultSized() {
+		sc.complete(PBW, func(v *Values) float64 { return predictedWeight(sex, v.Val(Height)) }, Height)
 	}
-	if !v.Has(PBW) && v.Has(Height) && sc.s.Sex != SexUnstated && sc.adultSized() {
-		if w, err := PredictedWeight(sc.s.Sex, Centimetres(v.Val(Height))); err == nil {
-			v.Set(PBW, float64(w))
-		}
-	}
-	if !v.Has(VT) && v.Has(VTPerKg, PBW) {
-		v.Set(VT, v.Val(VTPerKg)*v.Val(PBW))
-	}
-	if !v.Has(VE) && v.Has(VT) && known {
-		v.Set(VE, v.Val(VT)*rate/1000)
-	}
+	sc.complete(VT, func(v *Values) float64 { return v.Val(VTPerKg) * v.Val(PBW) }, VTPerKg, PBW)
+	sc.complete(VE, func(v *Values) float64 { return minuteVolume(v.Val(VT), v.Val(RR)) }, VT, RR)
 }
 
 func (sc *scene) adultSized() bool {

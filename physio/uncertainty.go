@@ -4,13 +4,19 @@ import "math"
 
 // How uncertainty is carried.
 //
-// Every input of a formula comes with a range: a measured number with the 95 %
-// range of a repeat sample (Measured), a fraction of oxygen from a mask with the
-// bounds of its spread (Bounded). Each input in turn is moved to its two ends
-// with the others at their values; what that does to the result is collected
-// separately for the low and the high side, and the parts of one side are added
-// in quadrature, because the inputs err independently. Bounds of a device are
-// used as they are, not turned into a spread first.
+// Every input of a formula comes with a range: a reading with the 95 % range of
+// a repeat sample (Measured), a fraction of oxygen from a mask with the bounds
+// it lies somewhere between, each place as likely (Bounded). The inputs err
+// independently. First each input alone is moved from its middle to its two
+// ends, which tells how far it moves the result to either side. Then, for each
+// side, all inputs are moved together, each by its share of the root of the sum
+// of squares of those movements, and the formula at that point is the end. For
+// a sum that is the movements added in quadrature; for a ratio of uncertain
+// numbers it also holds what they do to each other. It is the most probable
+// point of first-order reliability (Hasofer and Lind 1974), found in one step.
+//
+// The ends agree with those of 100,000 draws of the same inputs within 5 % of
+// the width for every index: see TestIntervalsAgainstDraws.
 
 // imprecision is the standard deviation of one reading on a repeat sample: the
 // larger of an absolute part, in the canonical unit, and a part of the value.
@@ -64,6 +70,8 @@ var imprecisions = [quantityCount]imprecision{
 	Weight:    {rel: 0.01},
 	Height:    {abs: 1},
 	Phosphate: {abs: 0.03},
+	Calcium:   {rel: 0.01},
+	Magnesium: {rel: 0.02},
 }
 
 // coverage is the number of standard deviations on each side of a reading that
@@ -71,7 +79,11 @@ var imprecisions = [quantityCount]imprecision{
 const coverage = 1.96
 
 // Input is one input of a formula with the range it may truly lie in.
-type Input struct{ Interval }
+type Input struct {
+	Interval
+	// bounded says that the range is one of bounds, not of repeat readings.
+	bounded bool
+}
 
 // Measured gives a measured value with the range in which 95 % of repeat
 // samples from the same patient at the same time would lie, cut off at what is
@@ -79,35 +91,106 @@ type Input struct{ Interval }
 func Measured(q Quantity, v float64) Input {
 	sd := max(imprecisions[q].abs, imprecisions[q].rel*math.Abs(v))
 	info := &quantities[q]
-	return Input{Interval{
+	return Input{Interval: Interval{
 		Value: v,
 		Low:   min(v, max(info.Low, v-coverage*sd)),
 		High:  max(v, min(info.High, v+coverage*sd)),
 	}}
 }
 
-// Bounded gives an input whose range is known as such, a fraction of oxygen
-// from a mask or an index worked out before.
-func Bounded(iv Interval) Input { return Input{iv} }
+// Bounded gives an input that lies somewhere between the ends of iv: a fraction
+// of oxygen from a mask, or the place in a published band.
+func Bounded(iv Interval) Input { return Input{Interval: iv, bounded: true} }
+
+// boundedPart is how much of the way to its bounds an input is moved that lies
+// anywhere between them. Alone, 95 % of it lies within 0.95 of the way; among
+// readings that spread more it counts by its standard deviation, 1.96/sqrt 3 =
+// 1.13 of the way. This one number is within 3 % of the width from one case to
+// the other.
+const boundedPart = 0.975
+
+// middle is what half of the readings lie below: of bounds their middle, of a
+// reading the value, also where one side is cut off.
+func (in Input) middle() float64 {
+	if in.bounded {
+		return (in.Low + in.High) / 2
+	}
+	return in.Value
+}
 
 // propagate carries the inputs through f by the method above.
 func propagate(f func([]float64) float64, in []Input) Interval {
-	x := make([]float64, len(in))
+	x := make([]float64, 2*len(in))
 	for i := range in {
 		x[i] = in[i].Value
 	}
-	v := f(x)
-	var down, up float64
-	for i := range in {
-		x[i] = in[i].Low
-		atLow := f(x)
-		x[i] = in[i].High
-		atHigh := f(x)
-		x[i] = in[i].Value
-		down += square(min(0, atLow-v, atHigh-v))
-		up += square(max(0, atLow-v, atHigh-v))
+	p := probe{f: f, in: in, x: x[:len(in)], moved: x[len(in):], effect: make([]effect, len(in))}
+	value := f(p.x)
+	p.effects()
+	low, high := p.end(-1), p.end(1)
+	return Interval{Value: value, Low: min(value, low), High: max(value, high)}
+}
+
+// probe is one formula with its inputs and what moving each of them does.
+type probe struct {
+	f        func([]float64) float64
+	in       []Input
+	x, moved []float64 // the inputs at their middles, and moved together
+	middle   float64   // the result with every input at its middle
+	effect   []effect  // of each input alone
+}
+
+// effect is by how much the two ends of an input change the result.
+type effect struct{ low, high float64 }
+
+// effects moves each input alone to its ends.
+func (p *probe) effects() {
+	for i := range p.in {
+		p.x[i] = p.in[i].middle()
 	}
-	return Interval{Value: v, Low: v - math.Sqrt(down), High: v + math.Sqrt(up)}
+	p.middle = p.f(p.x)
+	for i, in := range p.in {
+		if in.Low == in.High {
+			continue
+		}
+		m := p.x[i]
+		p.x[i] = in.Low
+		p.effect[i].low = p.f(p.x) - p.middle
+		p.x[i] = in.High
+		p.effect[i].high = p.f(p.x) - p.middle
+		p.x[i] = m
+	}
+}
+
+// reach is how far input i alone moves the result to a side, and by which end.
+func (p *probe) reach(i int, side float64) (far, end float64) {
+	low, high := side*p.effect[i].low, side*p.effect[i].high
+	if low > high {
+		return max(0, low), p.in[i].Low
+	}
+	return max(0, high), p.in[i].High
+}
+
+// end gives one end of the result: side is 1 for the high one, -1 for the low.
+func (p *probe) end(side float64) float64 {
+	var squares float64
+	for i := range p.in {
+		far, _ := p.reach(i, side)
+		squares += square(far)
+	}
+	if squares == 0 {
+		return p.middle
+	}
+	whole := math.Sqrt(squares)
+	for i := range p.in {
+		far, end := p.reach(i, side)
+		share := far / whole
+		if p.in[i].bounded {
+			share *= boundedPart
+		}
+		p.moved[i] = p.x[i] + share*(end-p.x[i])
+	}
+	return p.f(p.moved)
 }
 
 func square(x float64) float64 { return x * x }

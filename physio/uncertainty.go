@@ -126,6 +126,7 @@ func propagate(f func([]float64) float64, in []Input) Interval {
 	}
 	p := probe{f: f, in: in, x: x[:len(in)], moved: x[len(in):], effect: make([]effect, len(in))}
 	value := f(p.x)
+	p.centre(value)
 	p.effects()
 	low, high := p.end(-1), p.end(1)
 	return Interval{Value: value, Low: min(value, low), High: max(value, high)}
@@ -143,12 +144,22 @@ type probe struct {
 // effect is by how much the two ends of an input change the result.
 type effect struct{ low, high float64 }
 
+// centre moves every input to its middle, where most stand already.
+func (p *probe) centre(value float64) {
+	p.middle = value
+	moved := false
+	for i := range p.in {
+		m := p.in[i].middle()
+		moved = moved || m != p.x[i]
+		p.x[i] = m
+	}
+	if moved {
+		p.middle = p.f(p.x)
+	}
+}
+
 // effects moves each input alone to its ends.
 func (p *probe) effects() {
-	for i := range p.in {
-		p.x[i] = p.in[i].middle()
-	}
-	p.middle = p.f(p.x)
 	for i, in := range p.in {
 		if in.Low == in.High {
 			continue

@@ -165,6 +165,9 @@ func (c *composer) echoWords() []string {
 			out = append(out, w.word)
 		}
 	}
+	if u := c.gas.UsualPaCO2; u > 0 {
+		out = append(out, "usual PaCO2 "+c.n.pressure(u))
+	}
 	if t := c.gas.Target; t != nil {
 		out = append(out, "target "+wholePercent(t.Low)+"-"+wholePercent(t.High)+" %")
 	}

@@ -169,6 +169,9 @@ func inheritPatient(g, before *shorthand.Gas) {
 	if g.Target == nil {
 		g.Target = before.Target
 	}
+	if g.UsualPaCO2 == 0 {
+		g.UsualPaCO2 = before.UsualPaCO2
+	}
 	g.Sample.Circumstance |= before.Sample.Circumstance &^ (physio.JustChanged | physio.CPR)
 }
 
@@ -204,6 +207,9 @@ func (t *turn) complete(c *composer, last memory.Entry) {
 	}
 	if add.Target != nil {
 		g.Target = add.Target
+	}
+	if add.UsualPaCO2 > 0 {
+		g.UsualPaCO2 = add.UsualPaCO2
 	}
 	g.Notes = append(append([]shorthand.Note(nil), g.Notes...), add.Notes...)
 	g.Questions = add.Questions

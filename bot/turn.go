@@ -253,11 +253,15 @@ func (t *turn) withdraw() {
 	t.finish("forget", r)
 }
 
-// settingFor is the house's setting with a target said in the line.
+// settingFor is the house's setting with the target and the usual PaCO2 that
+// the line says.
 func (t *turn) settingFor(g *shorthand.Gas) physio.Setting {
 	set := t.v.House.Setting()
 	if g.Target != nil {
 		set.Target = g.Target
+	}
+	if g.UsualPaCO2 > 0 {
+		set.UsualPaCO2 = g.UsualPaCO2
 	}
 	return set
 }

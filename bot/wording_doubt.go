@@ -46,6 +46,10 @@ var noteTemplates = map[shorthand.NoteCode]string{
 	shorthand.NoteHighFlowPair: "Read {t} as {q} {v}.",
 	shorthand.NoteMeanAirway:   "Read MAP {t} as mean airway pressure.",
 	shorthand.NoteSign:         "Read the base deficit {t} as BE {v}.",
+	shorthand.NoteFlowPerKg:    "Read {t} per kg as {v}.",
+	shorthand.NoteBareHeight:   "Read {t} as height in cm.",
+	shorthand.NoteOrderRead:    "The order was read by what fits: check the values above.",
+	shorthand.NoteNotRead:      "Not read: {t}.",
 }
 
 // questionTemplates are the questions about what was typed.
@@ -86,6 +90,9 @@ var questionTemplates = map[shorthand.QuestionCode]string{
 	shorthand.AskHeight:      "Height {t}: which was meant?",
 	shorthand.AskMetresSex:   "Is m metres or male? Sex is needed for the predicted weight.",
 	shorthand.AskMAP:         "MAP {t}: mean airway or mean arterial pressure?",
+	shorthand.AskOrder:       "The pH does not stand first: which value is which?",
+	shorthand.AskIPAP:        "IPAP {t} is below EPAP {v}: which way round?",
+	shorthand.AskFlowPerKg:   "{t} L/kg/min: how many kg, or how many L/min in all?",
 	shorthand.AskTempCorr:    "Are the values corrected to {v}?",
 }
 

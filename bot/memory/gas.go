@@ -31,6 +31,7 @@ type gasDoc struct {
 	Bed          string            `json:"bed,omitempty"`
 	Time         string            `json:"time,omitempty"`
 	Target       *physio.Target    `json:"target,omitempty"`
+	UsualPaCO2   float64           `json:"usual_paco2,omitempty"`
 	Typed        shorthand.Units   `json:"typed,omitempty"`
 	Notes        []noteDoc         `json:"notes,omitempty"`
 	Questions    []questionDoc     `json:"questions,omitempty"`
@@ -163,7 +164,8 @@ func encodeGas(g *shorthand.Gas) (json.RawMessage, error) {
 	d := gasDoc{
 		Values: valuesDoc(s.Values), Blood: s.Blood, Site: s.Site, Device: s.Device, DeviceTaken: s.DeviceTaken, Mode: s.Mode,
 		Sex: s.Sex, Population: s.Population, Trimester: s.Trimester, Circumstance: circumstanceNames(s.Circumstance),
-		Follow: follows[g.Follow], Bed: g.Bed, Time: g.Time, Target: g.Target, Typed: g.Typed,
+		Follow: follows[g.Follow], Bed: g.Bed, Time: g.Time, Target: g.Target, UsualPaCO2: g.UsualPaCO2,
+		Typed: g.Typed,
 	}
 	for _, n := range g.Notes {
 		d.Notes = append(d.Notes, noteDoc{n.Code, quantityDoc(n.Quantity), n.Typed, n.Value})
@@ -180,7 +182,7 @@ func decodeGas(raw json.RawMessage) (g shorthand.Gas, err error) {
 	if err = json.Unmarshal(raw, &d); err != nil {
 		return g, err
 	}
-	g = shorthand.Gas{Bed: d.Bed, Time: d.Time, Target: d.Target, Typed: d.Typed}
+	g = shorthand.Gas{Bed: d.Bed, Time: d.Time, Target: d.Target, UsualPaCO2: d.UsualPaCO2, Typed: d.Typed}
 	g.Sample = physio.Sample{
 		Values: physio.Values(d.Values), Blood: d.Blood, Site: d.Site, Device: d.Device, DeviceTaken: d.DeviceTaken, Mode: d.Mode,
 		Sex: d.Sex, Population: d.Population, Trimester: d.Trimester,

@@ -25,6 +25,7 @@ func (r *reader) finish() {
 		s.Blood = physio.NoBlood
 	}
 	r.deviceByPressures()
+	r.pressuresTurned()
 	r.venousDoubt(gas)
 	if v, ok := s.Get(physio.Temp); ok && gas && math.Abs(v-37) >= 2 && !s.Circumstance.Has(physio.TempCorrected) {
 		r.ask(Question{Code: AskTempCorr, Quantity: physio.Temp, Value: v, Choices: []Choice{
@@ -46,6 +47,21 @@ func (r *reader) deviceByPressures() {
 	case s.Has(physio.CPAP):
 		s.Device = physio.CPAPDevice
 	}
+}
+
+// pressuresTurned asks which way round an IPAP below the EPAP was meant.
+func (r *reader) pressuresTurned() {
+	s := r.sample()
+	i, e := s.Val(physio.IPAP), s.Val(physio.EPAP)
+	if !s.Has(physio.IPAP, physio.EPAP) || i >= e {
+		return
+	}
+	s.Drop(physio.IPAP, physio.EPAP)
+	turned, typed := choose(physio.IPAP, e), choose(physio.IPAP, i)
+	turned.Set.Set(physio.EPAP, i)
+	typed.Set.Set(physio.EPAP, e)
+	turned.Word, typed.Word = "IPAP "+number(e)+"/EPAP "+number(i), "as typed"
+	r.ask(Question{Code: AskIPAP, Quantity: physio.IPAP, Typed: number(i), Value: e, Choices: []Choice{turned, typed}})
 }
 
 // guard is the last wall: whatever way a number came, an impossible value is

@@ -191,7 +191,7 @@ func (l *lexer) fourDigits(at int) bool {
 		return false
 	}
 	rest := strings.TrimLeft(l.s[l.i:min(len(l.s), l.i+8)], " ")
-	for _, u := range []string{"m ", "ml", "ft", "feet", "met", "mmhg", "g", "cc"} {
+	for _, u := range []string{"m", "ml", "ft", "feet", "met", "mmhg", "g", "cc"} {
 		if after, ok := strings.CutPrefix(rest+" ", u); ok && (after == "" || !isLetter(after[0])) {
 			return false
 		}

@@ -128,6 +128,9 @@ type Gas struct {
 	Time   string // "06:00", or a weekday word, as said
 	// Target is a saturation target said in the line.
 	Target *physio.Target
+	// UsualPaCO2 is the patient's own usual PaCO2 in mmHg, 0 when not said. It
+	// is no value of this gas.
+	UsualPaCO2 float64
 	// Typed is the pressure unit the gas was read in.
 	Typed Units
 	// Notes are readings that were not plain and are said.

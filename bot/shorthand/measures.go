@@ -20,11 +20,16 @@ func (r *reader) unitAfter(i int) (string, int) {
 			return uMLKg, 2
 		}
 	}
+	dash := 0 // "45-year-old"
+	if j+1 < len(r.t) && r.t[j].sep("-") && r.t[j].glued && r.t[j+1].glued && r.t[j+1].e.ofAge() {
+		dash = 1
+	}
+	j += dash
 	if j >= len(r.t) || r.t[j].kind != tokWord || r.t[j].line != r.t[i].line {
 		return "", 0
 	}
 	t := &r.t[j]
-	if t.s == "m" && (t.glued || r.t[i].v >= 300 && r.t[i].decimals == 0 && r.altitudeBefore(i) || r.t[i].decimals > 0 && r.t[i].v > 1 && r.t[i].v < 2.5) {
+	if t.s == "m" && (t.glued || r.metresHigh(i) || r.t[i].decimals > 0 && r.t[i].v > 1 && r.t[i].v < 2.5) {
 		return uMetre, 1
 	}
 	if t.s == "f" && t.glued && r.t[i].v > 80 {
@@ -33,16 +38,28 @@ func (r *reader) unitAfter(i int) (string, int) {
 	if t.e == nil || t.e.sense != senseUnit {
 		return "", 0
 	}
-	if len(t.s) == 1 && t.s != "l" && !t.glued && t.s != "g" && t.s != "c" && t.s != "h" {
+	if len(t.s) == 1 && t.s != "l" && !t.glued && t.s != "g" && t.s != "c" && t.s != "h" && t.s != "y" {
 		return "", 0
 	}
-	return t.e.unit, 1
+	return t.e.unit, 1 + dash
 }
 
-// altitudeBefore says that the number stands behind the word altitude.
-func (r *reader) altitudeBefore(i int) bool {
-	q, ok := labelDirectlyBefore(r.t, i)
-	return ok && q == physio.Altitude
+// ofAge says that a word is a unit of age.
+func (e *entry) ofAge() bool {
+	return e != nil && (e.unit == uYear || e.unit == uMonth || e.unit == uWeek || e.unit == uDay)
+}
+
+// metresHigh says that the m behind the number at i is metres: nobody is so
+// old or so tall, and no other word owns the number.
+func (r *reader) metresHigh(i int) bool {
+	t := &r.t[i]
+	if t.decimals > 0 || t.v < 300 || t.v > 9000 || t.sign != 0 || r.joined(i) {
+		return false
+	}
+	if q, ok := labelDirectlyBefore(r.t, i); ok {
+		return q == physio.Altitude
+	}
+	return i == 0 || !r.t[i-1].is(senseDevice) && !r.t[i-1].word("x")
 }
 
 // take marks the number at i and its unit as used.
@@ -69,7 +86,50 @@ func (r *reader) measures() {
 		}
 		r.byUnit(i, u, n)
 	}
+	r.heightBesideSex()
 	r.letterSex()
+}
+
+// heightBesideSex reads a bare number beside the sex of an adult as the height
+// in cm: no age, weight or rate is typed there with three digits. It is said.
+func (r *reader) heightBesideSex() {
+	if r.sample().Has(physio.Height) || !r.adult() {
+		return
+	}
+	for i := range r.t {
+		s := &r.t[i]
+		if s.kind != tokWord || !(s.s == "m" || s.s == "f" || s.e != nil && s.e.sex != "") {
+			continue
+		}
+		for _, j := range []int{i + 1, i - 1} {
+			if !r.bareHeight(j) || j < i && len(s.s) == 1 {
+				continue
+			}
+			r.take(j, 0)
+			r.sample().Set(physio.Height, r.t[j].v)
+			r.note(NoteBareHeight, physio.Height, r.t[j].typed(), r.t[j].v)
+			if len(s.s) == 1 && r.sample().Sex == "" {
+				s.used = true
+				r.sample().Sex = physio.Sex(s.s)
+			}
+			return
+		}
+	}
+}
+
+// bareHeight says that the number at j can be a height in cm and belongs to
+// nothing else.
+func (r *reader) bareHeight(j int) bool {
+	if j < 0 || j >= len(r.t) {
+		return false
+	}
+	t := &r.t[j]
+	u, _ := r.unitAfter(j)
+	if !t.free() || t.sign != 0 || t.than != 0 || t.percent || t.decimals > 0 || t.v < 120 || t.v > 210 || u != "" {
+		return false
+	}
+	behindSex := j > 0 && (r.t[j-1].word("f") || r.t[j-1].word("m"))
+	return !r.joined(j) && !r.joinedAhead(j) && (behindSex || !r.labelled(j)) && !r.gasStart(j)
 }
 
 // labelled says that a label stands directly before the number.
@@ -301,7 +361,7 @@ func (r *reader) letterSex() {
 		if t.s == "m" && i > 0 && r.t[i-1].kind == tokNumber && r.t[i-1].decimals > 0 && r.t[i-1].v < 2.6 {
 			continue // metres
 		}
-		if t.s == "m" && i > 0 && r.t[i-1].kind == tokNumber && r.t[i-1].v >= 250 && r.altitudeBefore(i-1) {
+		if t.s == "m" && i > 0 && r.t[i-1].kind == tokNumber && r.metresHigh(i-1) {
 			continue
 		}
 		t.used = true

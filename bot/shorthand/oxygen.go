@@ -52,6 +52,10 @@ func (r *reader) readOxygen() {
 // litres reads a flow.
 func (r *reader) litres(i int) {
 	u, n := r.unitAfter(i)
+	if u == uLPMKg {
+		r.flowPerKg(i, n)
+		return
+	}
 	if u != uLitre && u != uLPM {
 		return
 	}
@@ -70,6 +74,24 @@ func (r *reader) litres(i int) {
 		return
 	}
 	r.oxygen = append(r.oxygen, saying{at: i, flow: v, hasFlow: true})
+}
+
+// flowPerKg reads a flow per kg of weight. Without a weight it is no flow yet,
+// and asked.
+func (r *reader) flowPerKg(i, n int) {
+	r.take(i, n)
+	t := &r.t[i]
+	kg, ok := r.sample().Get(physio.Weight)
+	if !ok && r.h.Earlier != nil {
+		kg, ok = r.h.Earlier.Get(physio.Weight)
+	}
+	flow := math.Round(t.v*kg*10) / 10
+	if !ok || !physio.OxygenFlow.Possible(flow) {
+		r.ask(Question{Code: AskFlowPerKg, Quantity: physio.OxygenFlow, Typed: t.typed()})
+		return
+	}
+	r.oxygen = append(r.oxygen, saying{at: i, flow: flow, hasFlow: true})
+	r.note(NoteFlowPerKg, physio.OxygenFlow, t.typed(), flow)
 }
 
 // part reads the number at i, which may end a fraction: 1/2 L, 1 1/2 L.

@@ -130,6 +130,7 @@ const mostGases = 100
 func (p *parser) relate(parts []segment, t []token) {
 	gases := p.line.Gases
 	shareCord(gases)
+	shareUsual(gases, p.line.List)
 	if len(gases) == 2 {
 		if pair, ok := venousPair(&gases[0], &gases[1]); ok {
 			p.line.Gases = []Gas{pair}
@@ -211,7 +212,7 @@ func (p *parser) worth(g *Gas) bool {
 		return true
 	case p.command():
 		return false
-	case p.h.Addressed && coreDoubt(g.Questions):
+	case p.h.Addressed && (coreDoubt(g.Questions) || p.h.Earlier != nil && g.UsualPaCO2 > 0):
 		return true
 	case p.h.Earlier != nil && p.h.Addressed:
 		return said || g.Follow != FollowNone && (s.Blood != "" || s.Device != "" || s.Population != "" || s.Circumstance != 0) || s.Blood != "" && s.Blood != physio.NoBlood || s.Device != "" || g.Target != nil
@@ -260,7 +261,9 @@ func together(s *physio.Sample) bool {
 	})
 	switch {
 	case s.Has(physio.SpO2):
-		return oxygen || count >= 2
+		return oxygen || count >= 2 || s.Circumstance&(physio.SmokeOrCO|physio.MetHbCause) != 0
+	case s.Has(physio.EtCO2) && s.Circumstance&(physio.CPR|physio.PostArrest|physio.ECMO|physio.BrainInjury|physio.Shock) != 0:
+		return true // what such a value means hangs on the circumstance
 	case s.Has(physio.EtCO2), s.Has(physio.TcCO2), s.Has(physio.PaCO2), s.Has(physio.PaO2):
 		return count >= 2 || oxygen
 	case s.Has(physio.VT):

@@ -46,6 +46,7 @@ func readGas(t []token, h Habits, o segment) Gas {
 	r.targets()
 	r.marks()
 	r.said()
+	r.usual()
 	r.measures()
 	r.modes()
 	r.postfix()

@@ -96,6 +96,9 @@ func gasText(g *Gas) string {
 	add("bed:", g.Bed)
 	add("at:", g.Time)
 	add("follow:", g.Follow)
+	if g.UsualPaCO2 > 0 {
+		out = append(out, fmt.Sprintf("usual:%.4g", g.UsualPaCO2))
+	}
 	if g.Target != nil {
 		out = append(out, fmt.Sprintf("keep:%.4g-%.4g", g.Target.Low, g.Target.High))
 	}

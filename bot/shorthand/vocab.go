@@ -75,7 +75,7 @@ func buildVocabulary() (map[string]*entry, map[string]int) {
 var compounds = []struct{ typed, word string }{
 	{"mmol/liter", "mmol/l"}, {"mmol/litre", "mmol/l"}, {"mmol/l", "mmol/l"}, {"meq/l", "mmol/l"},
 	{"nmol/l", "nmol/l"}, {"litres/min", "l/min"}, {"liters/min", "l/min"}, {"lt/min", "l/min"},
-	{"l/min", "l/min"}, {"l/m", "l/min"}, {"ml/kg", "ml/kg"}, {"cc/kg", "ml/kg"}, {"mg/dl", "mg/dl"},
+	{"l/kg/min", "l/kg"}, {"l/min/kg", "l/kg"}, {"lpm/kg", "l/kg"}, {"l/kg", "l/kg"}, {"l/min", "l/min"}, {"l/m", "l/min"}, {"ml/kg", "ml/kg"}, {"cc/kg", "ml/kg"}, {"mg/dl", "mg/dl"},
 	{"g/dl", "g/dl"}, {"gm/dl", "g/dl"}, {"g/l", "g/l"}, {"gr/dl", "g/dl"},
 	{"p/f", "pf"}, {"s/f", "sf"}, {"a/a", "aa"}, {"a-a", "aa"}, {"vd/vt", "vdvt"}, {"i:e", "ie"},
 	{"y/o", "yo"}, {"n/c", "nc"}, {"r/a", "ra"}, {"v/q", "vq"}, {"f/vt", "rsbi"}, {"s/p", "post"},

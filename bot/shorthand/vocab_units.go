@@ -9,6 +9,7 @@ const (
 	uPercent = "%"
 	uLitre   = "l" // litres, or litres a minute behind a flow
 	uLPM     = "l/min"
+	uLPMKg   = "l/kg" // litres a minute for each kg
 	uML      = "ml"
 	uMLKg    = "ml/kg"
 	uKg      = "kg"
@@ -43,6 +44,7 @@ var unitRows = []row{
 	{unit(uPercent), "percent, pct, per cent, prozent, procent, perc, pc o2"},
 	{unit(uLPM), "lpm, l/min, litres per minute, liters per minute, l per min, litres a minute, liters a minute, lmin, liters per min, litres per min, lt min, slpm, lpms, ltrs per min"},
 	{unit(uLitre), "l, liters, litres, liter, litre, ltr, ltrs, lt, lts"},
+	{unit(uLPMKg), "l/kg, l per kg, l kg, lpm per kg, lpm kg, l kg min, l per kg per min, litres per kg, liters per kg"},
 	{unit(uML), "ml, mls, cc, ccs, milliliters, millilitres"},
 	{unit(uMLKg), "per kg, per kilo, ml/kg, mlkg, cc/kg, ml per kg, mls/kg, ml kg, mls per kg"},
 	{unit(uKg), "kg, kgs, kilo, kilos, kilogram, kilograms"},

@@ -76,7 +76,10 @@ type PressureKnown struct {
 // not one reduced to sea level as weather reports print it.
 func BarometricPressure(k PressureKnown) (Pressure, PressureSource, error) {
 	for _, g := range [...]given{{q: PB, v: k.Measured.MmHg()}, {q: PB, v: k.House.MmHg()}, {q: Altitude, v: float64(k.Altitude)}} {
-		if err := check(g); g.v != 0 && err != nil {
+		if g.v == 0 {
+			continue
+		}
+		if err := check(g); err != nil {
 			return 0, "", err
 		}
 	}

@@ -10,6 +10,7 @@ import (
 var (
 	supposeWords = sift(`\bwhat if\b|\bwhat happens? (if|when|with|to)\b|\bwhat would happen\b|\bsuppose\b|\bif (we|i|you|he|she|they|the)\b|\bwhat would\b.{0,40}\b(if|with|at|on)\b|^if\b|\bhow about\b|\bwould (it|that) help if\b|\bwhatif\b`)
 	aimWords     = sift(`\b(what|which|how much|how many|how high|how low|whats the|what's the)\b.{0,40}\b(for|gets?|to get|gives?|needed|need|reach|reaches|brings?|makes?|hit|would get|will get|achieves?)\b|\b(target|goal|aim|aiming for|aim for|trying to get|want|wanting|shooting for|looking for)\b|\bneed(ed)?\b.{0,40}\b(what|for|which|how)\b|\bneeded (for|to)\b|\brequired for\b|\b(get|bring|drive) (the |his |her )?(co2|pco2|paco2|ph|po2|pao2|o2|sats?|spo2) (to|down to|up to|back to)\b`)
+	andAt        = sift(`[,.;?!\n] *(and|then|so) (at|with|if|on) [^?]{1,40}\?`)
 	ifCore       = sift(`\bif (the |his |her |their )?(co2|pco2|paco2|ph|po2|pao2)\b`)
 	settingAsk   = sift(`\b(what|whats|how)\b.{0,20}\b(po2|pao2|co2|pco2|paco2|ph|sats?|spo2|o2)\b.{0,12}$`)
 	checkWords   = sift(`^(is (this|it|that|he|she|pt)|am i right|agree|right)\b|\b(student|colleague|fellow|resident|intern|preceptee|orientee|learner|trainee|newbie|nurse|doc|doctor|attending|registrar|rn|md|rt|someone|they|he|she|my student|the student)\b[ :,-]*(says?|said|thinks?|thought|called|calls|call|reads?|claims?|wrote|writes|answers?|answered|put|calling|reckons?|labelled|labeled|charted|interpreted|believes?|told me)\b|\b(student|fellow|resident|intern|learner|trainee|orientee|preceptee)s?\s*:|\b(i|we|id|i'd|my|i am|im)\b *(would |also |just |am )?(say|says|said|think|thinks|thought|call|called|calling|read this|reckon|believe|interpret|vote|answer|guess|reading is|read is|take is|interpretation|impression)\b|\b(agree|correct|am i right|right|true or false|yes or no|do you agree|is that right|thoughts)\s*\?|\bis (this|it|that) (an? )?[a-z]`)
@@ -30,10 +31,13 @@ func (p *parser) clauses(t []token, s string) (intent Intent, clause, rest []tok
 	}
 	var g grams
 	g.read(s)
+	if p.supposes(s, &g, t) {
+		return IntentSuppose, t, nil
+	}
 	for _, try := range []struct {
 		words  *sieve
 		intent Intent
-	}{{ifCore, IntentAim}, {supposeWords, IntentSuppose}, {aimWords, IntentAim}, {settingAsk, IntentSuppose}} {
+	}{{andAt, IntentSuppose}, {ifCore, IntentAim}, {supposeWords, IntentSuppose}, {aimWords, IntentAim}, {settingAsk, IntentSuppose}} {
 		if len(s) > 2000 || !try.words.may(&g) {
 			continue
 		}

@@ -104,6 +104,12 @@ func (d *decider) settleUnits(all []candidate, kept *reading) {
 	case rival != nil:
 		d.askUnits(kept, rival)
 		return
+	case d.highInKPa(kept):
+		if d.oxygenOpen() {
+			d.askHighPaO2(kept)
+			return
+		}
+		kept.useMmHg(d.raw)
 	case kept.mixed && !d.sure(kept, physio.PaO2, kept.o2KPa):
 		d.askPaO2Unit(kept)
 		return

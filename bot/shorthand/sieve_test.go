@@ -10,7 +10,7 @@ import (
 // sieves are all patterns that are tried behind a sieve.
 func sieves() []*sieve {
 	all := append([]*sieve{title, namedAs, lastFirst, twoNames, initials, dotted, bedName, ptName, picture, asksOxygen,
-		supposeWords, aimWords, ifCore, settingAsk, checkWords, claimWord, bareQuestion,
+		supposeWords, leadsSuppose, ifAlone, asksValue, andAt, aimWords, ifCore, settingAsk, checkWords, claimWord, bareQuestion,
 		correctionWords, wasBlood, wasValue, laterGas, laterWords, afterEvent}, identifiers...)
 	for _, d := range declines {
 		all = append(all, d.words)

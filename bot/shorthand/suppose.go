@@ -1,0 +1,80 @@
+package shorthand
+
+import (
+	"math"
+	"strings"
+
+	"galeward/physio"
+)
+
+var (
+	// leadsSuppose are words that lead a what-if of a thread: "and at co2 50?".
+	leadsSuppose = sift(`^\s*(?:(?:and|so|then|but|ok|okay|hmm|now|or)[ ,]+)*(?:at|with|if|on|say|saying|assuming|assume|for|supposing|imagine|in case|what about|how about|what with|what at|let'?s say|were)\b`)
+	// ifAlone is an if that asks for no other value by name.
+	ifAlone   = sift(`^\s*(?:(?:and|so|then|but|ok|okay|hmm|or)[ ,]+)*(?:if|say|assuming|supposing|imagine)\b`)
+	asksValue = sift(`\b(what|whats|which|how)\b`)
+)
+
+// supposes says that a line of a thread, without a gas of its own, asks what
+// would be rather than tells what is.
+func (p *parser) supposes(s string, g *grams, t []token) bool {
+	if p.h.Earlier == nil || len(s) > 200 || correctionWords.in(s, g) || holdsGas(t) {
+		return false
+	}
+	asks := strings.HasSuffix(strings.TrimRight(s, " !\n"), "?")
+	led := leadsSuppose.in(s, g)
+	if !asks && !(ifAlone.in(s, g) && !asksValue.in(s, g)) {
+		return false
+	}
+	if asksValue.in(s, g) && !led {
+		return false
+	}
+	v := p.clauseValues(t)
+	if v.Empty() || p.answersOxygen(&v) {
+		return false
+	}
+	return led || bareValue(t) && p.differs(&v)
+}
+
+// holdsGas says that the tokens hold a whole gas, not only a labelled pH.
+func holdsGas(t []token) bool {
+	for _, c := range coreStarts(t) {
+		if isGas(t, c) {
+			return true
+		}
+	}
+	return false
+}
+
+// answersOxygen says that only oxygen is said, and the gas before has none:
+// "on 40%?" then completes it.
+func (p *parser) answersOxygen(v *physio.Values) bool {
+	e := p.h.Earlier
+	if e.Has(physio.FiO2) || e.Has(physio.OxygenFlow) || e.Device == physio.Air {
+		return false
+	}
+	only := true
+	v.Each(func(q physio.Quantity, _ float64) { only = only && (q == physio.FiO2 || q == physio.OxygenFlow) })
+	return only
+}
+
+// differs says that the gas before holds another value of one of these.
+func (p *parser) differs(v *physio.Values) bool {
+	found := false
+	v.Each(func(q physio.Quantity, x float64) {
+		have, ok := p.h.Earlier.Get(q)
+		found = found || ok && math.Abs(have-x) > 1e-9
+	})
+	return found
+}
+
+// bareValue says that the line holds nothing but labels, numbers and units.
+func bareValue(t []token) bool {
+	for i := range t {
+		x := &t[i]
+		if x.kind == tokWord && !x.is(senseLabel) && !x.is(senseUnit) && !x.is(senseFiller) && !x.is(senseDevice) {
+			return false
+		}
+	}
+	return true
+}

@@ -64,6 +64,9 @@ func (p *parser) parse() Line {
 	if c, ok := p.released(); ok {
 		return Line{Kind: Released, Picked: c}
 	}
+	if rest, ok := houseCommand(p.typed); ok {
+		return p.houseLine(rest)
+	}
 	if arg, sentence, ok := houseRule(p.typed[lead(p.typed):], &p.grams); ok && (p.h.Addressed || !strings.HasPrefix(arg, "word ")) {
 		return Line{Kind: Command, Intent: IntentHouse, Argument: arg, Sentence: sentence}
 	}

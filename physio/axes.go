@@ -182,7 +182,7 @@ func (sc *scene) oxyhaemoglobin(s Interval) Interval {
 	if !sc.dyshaemoglobin() {
 		return s
 	}
-	left := 1 - sc.v.Val(COHb) - sc.v.Val(MetHb)
+	left := max(0, 1-sc.v.Val(COHb)-sc.v.Val(MetHb))
 	return Interval{Value: s.Value * left, Low: s.Low * left, High: s.High * left}
 }
 
@@ -312,7 +312,7 @@ func (sc *scene) oxygenationEfficiency() {
 	o := &sc.a.Oxygenation
 	aa, hasAA := sc.a.Index("aa")
 	switch {
-	case hasAA && aa.Value < aaImpossible:
+	case hasAA && aa.Value < aaImpossible, sc.aboveAlveolar():
 		// A PaO2 above the alveolar one: the inputs can not be right.
 	case hasAA:
 		sc.efficiencyFromGas(aa)

@@ -164,13 +164,27 @@ func (sc *scene) venousBlood() bool {
 // aboveAlveolar: a PaO2 that this oxygen and PaCO2 can not give.
 func (sc *scene) aboveAlveolar() bool {
 	aa, ok := sc.a.Index("aa")
-	if !ok {
-		return false
-	}
-	if sc.a.Oxygen.Estimated {
+	switch {
+	case !ok:
+		return sc.aboveNoRoom()
+	case sc.a.Oxygen.Estimated:
 		return aa.High < aaImpossible
 	}
 	return aa.Value < aaImpossible
+}
+
+// aboveNoRoom: the inputs leave so little alveolar oxygen that no difference is
+// told, and the PaO2 lies above it.
+func (sc *scene) aboveNoRoom() bool {
+	o := sc.a.Oxygen
+	if !sc.lungO2 || !o.Known || !sc.v.Has(PaCO2, PaO2) {
+		return false
+	}
+	f := o.FiO2.Value
+	if o.Estimated {
+		f = o.FiO2.High
+	}
+	return aboutPA(f, sc.a.PB, sc.v.Val(PaCO2))-sc.v.Val(PaO2) < aaImpossible
 }
 
 // venousPossible: a PO2 that venous blood also has, with nothing to settle it.

@@ -63,7 +63,7 @@ func venturiSpread(mark float64) Interval {
 	if mark > 0.40 {
 		low = 0.10
 	}
-	return Interval{Value: mark, Low: max(airFraction, mark-low), High: min(1, mark+high)}
+	return Interval{Value: mark, Low: min(mark, max(airFraction, mark-low)), High: min(1, mark+high)}
 }
 
 const (
@@ -83,8 +83,8 @@ func (s OxygenSupply) highFlow(set float64) Interval {
 	if s.Flow == 0 || float64(s.Flow) >= demand || !adultOxygen(s.Population) {
 		return Interval{Value: set, Low: set, High: set}
 	}
-	low := diluted(set, float64(s.Flow), demand)
-	return Interval{Value: (low + set) / 2, Low: low, High: set}
+	mixed := diluted(set, float64(s.Flow), demand)
+	return Interval{Value: (mixed + set) / 2, Low: min(mixed, set), High: max(mixed, set)}
 }
 
 func diluted(set, flow, demand float64) float64 {
@@ -144,7 +144,7 @@ func (s OxygenSupply) cannula() (Interval, bool, error) {
 // the 0.30 to 0.48 measured at one flow with different patterns of breathing.
 func cannulaFiO2(flow float64) Interval {
 	mid, half := 0.20+0.04*flow, 0.02+0.015*flow // common practice; the spread is ours
-	return Interval{Value: mid, Low: max(airFraction, mid-half), High: mid + half}
+	return Interval{Value: max(airFraction, mid), Low: max(airFraction, mid-half), High: mid + half}
 }
 
 // CannulaRule is a rule of thumb for the nasal cannula: Base + PerLitre x flow.

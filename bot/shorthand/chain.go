@@ -63,6 +63,9 @@ func (r *reader) phAfter(i, k int) bool {
 
 // chain reads the unlabelled values of the gas by the channel's order.
 func (r *reader) chain() {
+	if r.looseGas() {
+		return
+	}
 	start := r.chainStart()
 	slot := 0
 	switch {

@@ -246,7 +246,7 @@ func (p *parser) command() bool {
 func coreDoubt(qs []Question) bool {
 	for _, q := range qs {
 		switch q.Code {
-		case AskPH, AskSwap, AskUnit, AskTwoNumbers, AskSecondGroup:
+		case AskPH, AskOrder, AskSwap, AskUnit, AskTwoNumbers, AskSecondGroup:
 			return true
 		}
 	}

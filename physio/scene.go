@@ -18,7 +18,7 @@ type scene struct {
 }
 
 func newScene(s Sample, set Setting) *scene {
-	sc := &scene{s: s, set: set, v: s.Values, a: &Assessment{Sample: s}}
+	sc := &scene{s: s, set: set, v: possible(s.Values), a: &Assessment{Sample: s}}
 	sc.population()
 	sc.blood()
 	sc.pressure()
@@ -30,6 +30,18 @@ func newScene(s Sample, set Setting) *scene {
 		sc.lungO2 = false
 	}
 	return sc
+}
+
+// possible leaves out what can be of no patient, and what is no number: it is
+// missing, like a value that was not given.
+func possible(v Values) Values {
+	out := v
+	v.Each(func(q Quantity, x float64) {
+		if !q.Possible(x) {
+			out.Drop(q)
+		}
+	})
+	return out
 }
 
 func (sc *scene) population() {

@@ -7,6 +7,7 @@ import (
 	"errors"
 	"fmt"
 	"log/slog"
+	"runtime/debug"
 	"time"
 
 	"galeward/bot/memory"
@@ -59,34 +60,23 @@ func New(o Options) *Bot {
 
 // Answer answers one event without delivering anything; memory is read and
 // written as for a delivered one. It never panics.
-func (b *Bot) Answer(ctx context.Context, e Event) (answer Answer) {
-	defer b.rescue(&answer)
-	t, err := b.begin(ctx, e)
-	if t == nil || err != nil {
-		return b.trouble(err)
-	}
-	t.work()
-	if t.keeps {
-		if err := b.memory.Save(ctx, t.v); err != nil {
-			b.log.Error("save", "error", err.Error())
-		}
-	}
-	return t.answer
+func (b *Bot) Answer(ctx context.Context, e Event) Answer {
+	t, answer := b.answerSafely(ctx, e)
+	b.save(ctx, t)
+	return answer
 }
 
-// rescue turns a panic into an answer of ours.
-func (b *Bot) rescue(answer *Answer) {
-	if p := recover(); p != nil {
-		*answer = b.trouble(fmt.Errorf("panic: %v", p))
-	}
+// panicked makes an answer of a fault in our own code. The value of a panic may
+// hold what was typed: only its type is logged.
+func (b *Bot) panicked(p any) Answer {
+	return b.trouble(fmt.Errorf("panic of type %T: %s", p, debug.Stack()))
 }
 
-// trouble is an error of ours: one sentence with an id, the cause only in the
-// log. A nil error (an event that was already taken) is silence.
+func silence() Answer { return Answer{Machine: Machine{V: MachineVersion, Kind: "silence"}} }
+
+// trouble is an error of ours: one sentence with an id, to the asker alone, the
+// cause only in the log.
 func (b *Bot) trouble(err error) Answer {
-	if err == nil {
-		return Answer{Machine: Machine{V: MachineVersion, Kind: "silence"}}
-	}
 	id := newID()
 	b.log.Error("trouble", "id", id, "error", err.Error())
 	text := fmt.Sprintf(troubleText, id)
@@ -96,7 +86,7 @@ func (b *Bot) trouble(err error) Answer {
 	}
 	var r reply.Reply
 	r.Add(reply.Notice, text)
-	return Answer{Reply: r, Machine: Machine{V: MachineVersion, Kind: "trouble", Text: r.Text()}}
+	return Answer{Reply: r, Private: true, Machine: Machine{V: MachineVersion, Kind: "trouble", Text: r.Text()}}
 }
 
 func newID() string {

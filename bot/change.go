@@ -43,8 +43,7 @@ func (c *composer) changeSentence(when string, t *turn) string {
 		parts = append(parts, q.Info().Symbol+" "+c.n.pressure(before)+" to "+c.n.pressure(now)+c.spreadWord(q, before, now))
 	}
 	if now, ok := c.a.Index("pf"); ok {
-		old := physio.Assess(t.before.Sample, t.settingFor(t.before))
-		if before, had := old.Index("pf"); had {
+		if before, had := t.assess(t.before).Index("pf"); had {
 			parts = append(parts, "P/F "+c.n.about(before.Value)+" to "+c.n.about(now.Value)+c.ratioSpread(before, now))
 		}
 	}

@@ -22,6 +22,8 @@ type composer struct {
 	notices []string
 	// question is the one question, nil for none.
 	question *asked
+	// replaces is the gas in whose place this one stands, nil for a new one.
+	replaces *kin
 	// brief is the step of brevity, 0 for the whole answer.
 	brief int
 }
@@ -77,7 +79,7 @@ func (c *composer) layout() reply.Reply {
 	if c.question != nil {
 		r.Add(reply.Question, c.question.text)
 		for _, choice := range c.question.choices {
-			r.Buttons = append(r.Buttons, reply.Button{Label: choice, Token: choice})
+			r.Buttons = append(r.Buttons, reply.Button{Label: choice})
 		}
 	}
 	return r

@@ -246,11 +246,16 @@ func TestIdentifiersLeaveNothingBehind(t *testing.T) {
 	}
 }
 
-func TestADeliveryThatFailsIsNoPanic(t *testing.T) {
+func TestAfterADeliveryThatFailedTheNoticeIsStillDue(t *testing.T) {
 	r := newRoom()
 	r.fail = errors.New("platform down")
 	r.handle(typed("m1", "7.28/58/62/27 40%"))
 	if r.count() != 0 {
-		t.Error("delivered")
+		t.Fatal("delivered")
+	}
+	r.fail = nil
+	r.handle(typed("m2", "7.31/54/66/27 40%"))
+	if text := r.last(t).Reply.Text(); !strings.Contains(text, "aid for trained staff") {
+		t.Errorf("the notice went with the answer that was never seen:\n%s", text)
 	}
 }

@@ -15,9 +15,7 @@ import (
 func (t *turn) several() {
 	cs := make([]*composer, len(t.line.Gases))
 	for i := range t.line.Gases {
-		g := t.line.Gases[i]
-		a := physio.Assess(settled(&g), t.settingFor(&g))
-		cs[i] = &composer{gas: &g, a: &a, n: numbers{t.v.House.Units}}
+		cs[i] = t.composer(&t.line.Gases[i])
 	}
 	kind := "trend"
 	shown := append([]*composer(nil), cs...)
@@ -37,6 +35,7 @@ func (t *turn) several() {
 	if question != nil {
 		r.Add(reply.Question, question.Text)
 	}
+	t.stand(&r)
 	t.finish(kind, r)
 	t.answer.Machine.Question = question
 	for _, c := range cs {
@@ -50,8 +49,10 @@ func (t *turn) keepSeveral(cs []*composer) {
 	for _, c := range cs {
 		entries = append(entries, memory.Entry{Message: t.e.Message, At: t.now(), Gas: *c.gas})
 	}
-	t.v.Put(entries...)
-	t.keeps = true
+	if t.e.Message != "" && !t.v.Degraded {
+		t.v.Put(entries...)
+		t.keeps = true
+	}
 }
 
 // askOnce is the one question of a list: a doubt about what was typed first,
@@ -63,11 +64,19 @@ func askOnce(cs []*composer) *MachineQuestion {
 				continue
 			}
 			if q := c.chooseQuestion(); q != nil {
-				return &MachineQuestion{ID: q.id, Text: c.label(i) + ": " + q.text, Choices: q.choices}
+				return &MachineQuestion{ID: q.id, Text: c.label(i) + ": " + q.text + c.answerHint(q), Choices: q.choices}
 			}
 		}
 	}
 	return nil
+}
+
+// answerHint shows how the question about one gas of a list is answered.
+func (c *composer) answerHint(q *asked) string {
+	if c.gas.Bed == "" || len(q.choices) == 0 {
+		return ""
+	}
+	return " Answer with the bed: bed " + c.gas.Bed + " " + q.choices[0]
 }
 
 func (c *composer) label(i int) string {

@@ -19,18 +19,21 @@ func (t *turn) reading() {
 	gas := t.line.Gases[0]
 	c := &composer{gas: &gas, n: numbers{t.v.House.Units}}
 	c.notices = t.notices()
-	last, hasLast := t.last()
-	switch {
-	case gas.Follow == shorthand.FollowNone:
-	case !hasLast && gas.Sample.Values.Empty():
-		t.parentless()
+	if gas.Follow == shorthand.FollowNone {
+		t.deliverReading(c)
 		return
-	case !hasLast:
-		c.question = &asked{id: askParent, text: askParentText}
+	}
+	parent, which := t.parent(gas.Bed)
+	switch {
+	case which != nil && (which.id == askBed || gas.Sample.Values.Empty()):
+		t.askWhich(which)
+		return
+	case which != nil:
+		c.question = which
 	case gas.Follow == shorthand.FollowNow && measured(&gas.Sample):
-		t.inherit(c, last)
+		t.inherit(c, parent.Entry)
 	default:
-		t.complete(c, last)
+		t.complete(c, parent)
 	}
 	t.deliverReading(c)
 }
@@ -48,18 +51,29 @@ func measured(s *physio.Sample) bool {
 
 // deliverReading assesses, composes and remembers.
 func (t *turn) deliverReading(c *composer) {
-	a := physio.Assess(settled(c.gas), t.settingFor(c.gas))
-	c.a = &a
+	c.a = t.assess(c.gas)
 	if c.gas.Follow == shorthand.FollowNow && c.change != "" {
 		c.change = c.changeSentence(c.change, t)
 	}
 	r := c.compose()
+	t.keep(c, &r)
+	t.stand(&r)
 	t.answer.Machine = c.machine(r)
+	t.answer.Reply = r
+}
+
+// assess assesses what a reading leaves standing, in the house's setting.
+func (t *turn) assess(g *shorthand.Gas) *physio.Assessment {
+	a := physio.Assess(settled(g), t.settingFor(g))
+	return &a
+}
+
+// stand adds the standing notice to a user's first reading.
+func (t *turn) stand(r *reply.Reply) {
 	if t.v.FirstTime && t.e.User != "" {
 		r.Add(reply.Standing, standingNotice)
+		t.stood = true
 	}
-	t.answer.Reply = r
-	t.keep(c)
 }
 
 // settled is the half of a reading that a doubt leaves standing: where the
@@ -76,15 +90,6 @@ func settled(g *shorthand.Gas) physio.Sample {
 		}
 	}
 	return s
-}
-
-// keep remembers the gas and the question that it left open.
-func (t *turn) keep(c *composer) {
-	t.keeps = true
-	t.v.Put(memory.Entry{Message: t.e.Message, At: t.now(), Gas: *c.gas})
-	if c.question != nil && c.question.from != nil {
-		t.v.Ask(*c.question.from, t.e.Message)
-	}
 }
 
 func (t *turn) now() time.Time {
@@ -186,10 +191,9 @@ func agoWords(d time.Duration) string {
 	return plain(d.Hours(), 0) + " h ago"
 }
 
-// complete adds to the last gas or corrects it: the result stands in its place
-// and the earlier reading is void.
-func (t *turn) complete(c *composer, last memory.Entry) {
-	g := last.Gas
+// complete adds to a gas or corrects it: the result stands in its place.
+func (t *turn) complete(c *composer, parent kin) {
+	g := parent.Gas
 	add := c.gas
 	oxygenSaid := add.Sample.Has(physio.FiO2) || add.Sample.Device != physio.DeviceUnstated
 	if oxygenSaid && !add.Sample.Has(physio.FiO2) {
@@ -212,13 +216,12 @@ func (t *turn) complete(c *composer, last memory.Entry) {
 		g.UsualPaCO2 = add.UsualPaCO2
 	}
 	g.Notes = append(append([]shorthand.Note(nil), g.Notes...), add.Notes...)
-	g.Questions = add.Questions
+	g.Questions = append(openDoubts(&g, add), add.Questions...)
 	g.Follow = shorthand.FollowAddition
 	if add.Follow == shorthand.FollowCorrection {
 		c.notices = append(c.notices, earlierVoid)
 	}
-	t.v.Void(last.Message)
-	*c.gas = g
+	*c.gas, c.replaces = g, &parent
 }
 
 // replacedSettings names the settings that an addition puts in place of others:
@@ -254,50 +257,4 @@ func mergeWords(s, add *physio.Sample) {
 		s.Population, s.Trimester = add.Population, add.Trimester
 	}
 	s.Circumstance |= add.Circumstance
-}
-
-// released applies the choice that answered the open question.
-func (t *turn) released() {
-	_, message := t.v.Thread().Pending()
-	var parent memory.Entry
-	for _, e := range t.v.Thread().Entries() {
-		if e.Message == message && !e.Void {
-			parent = e
-		}
-	}
-	if parent.Message == "" || t.line.Picked == nil {
-		t.unclear()
-		return
-	}
-	g := parent.Gas
-	p := t.line.Picked
-	g.Sample.Drop(p.Drop...)
-	g.Sample.Values.Merge(&p.Set)
-	if p.Blood != physio.BloodUnstated {
-		g.Sample.Blood = p.Blood
-	}
-	if p.Device != physio.DeviceUnstated {
-		g.Sample.Device, g.Sample.DeviceTaken = p.Device, false
-	}
-	g.Questions = dropAnswered(g.Questions)
-	t.v.Void(parent.Message)
-	t.deliverReading(&composer{gas: &g, n: numbers{t.v.House.Units}, notices: t.notices()})
-}
-
-// dropAnswered takes the first question away: it is the one that was asked.
-func dropAnswered(qs []shorthand.Question) []shorthand.Question {
-	if len(qs) == 0 {
-		return nil
-	}
-	return append([]shorthand.Question(nil), qs[1:]...)
-}
-
-// readAgain shows the last gas once more, with the notices before it.
-func (t *turn) readAgain(last memory.Entry) {
-	g := last.Gas
-	a := physio.Assess(g.Sample, t.settingFor(&g))
-	c := &composer{gas: &g, a: &a, n: numbers{t.v.House.Units}}
-	c.notices = t.notices()
-	r := c.compose()
-	t.answer.Reply, t.answer.Machine = r, c.machine(r)
 }

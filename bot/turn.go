@@ -23,22 +23,22 @@ type turn struct {
 	keeps bool
 	// before is the gas that a follow-up follows, nil for none.
 	before *shorthand.Gas
+	// stood is true when the answer carries the standing notice.
+	stood bool
 	// amends is the post that the answer replaces, "" for a new one.
 	amends Ref
 }
 
 // begin loads what is remembered and claims the event. It returns nil when the
-// event was already taken.
+// event was already taken; with an error, a turn of which only the claim can be
+// saved.
 func (b *Bot) begin(ctx context.Context, e Event) (*turn, error) {
 	v, err := b.memory.Load(ctx, memory.Call{
 		Where: whereOf(e.Where), Delivery: e.Delivery, User: e.User, Message: e.Message,
 		Opens: e.Where.Thread == "" && e.Can.Has(CanThread),
 	})
-	if v == nil {
+	if v == nil || v.Claim == memory.Duplicate {
 		return nil, err
-	}
-	if v.Claim == memory.Duplicate {
-		return nil, nil
 	}
 	return &turn{b: b, ctx: ctx, e: e, v: v}, err
 }
@@ -47,8 +47,10 @@ func whereOf(p Place) memory.Where {
 	return memory.Where{Platform: p.Platform, Workspace: p.Workspace, Channel: p.Channel, Thread: p.Thread}
 }
 
-// work answers the event.
+// work answers the event. Where the rules are not known, the answer is private:
+// too private can be put right, the reverse not.
 func (t *turn) work() {
+	t.answer.Private = t.e.Private || t.v.House.Private || t.v.Degraded && !t.v.Known
 	switch t.e.Kind {
 	case Deleted:
 		t.deleted()
@@ -57,7 +59,8 @@ func (t *turn) work() {
 		t.edited()
 		return
 	case Pressed:
-		t.e.Text = t.e.Token
+		t.pressed()
+		return
 	case Shortcut:
 		if t.e.About != nil {
 			t.e.Text = t.e.About.Text
@@ -73,7 +76,6 @@ func (t *turn) typed() {
 		return
 	}
 	t.line = t.parse()
-	t.answer.Private = t.answer.Private || t.e.Private || t.v.House.Private
 	switch t.line.Kind {
 	case shorthand.Refusal:
 		t.refuse()
@@ -133,18 +135,6 @@ func (t *turn) habits() shorthand.Habits {
 	return h
 }
 
-// last is the last gas of the thread that holds, unless the event edits it.
-func (t *turn) last() (memory.Entry, bool) {
-	entries := t.v.Thread().Entries()
-	for i := len(entries) - 1; i >= 0; i-- {
-		e := entries[i]
-		if !e.Void && (t.e.Kind != Edited || e.Message != t.e.Message) {
-			return e, true
-		}
-	}
-	return memory.Entry{}, false
-}
-
 func (t *turn) refuse() {
 	var r reply.Reply
 	r.Add(reply.Notice, refusalText[t.line.Refused])
@@ -174,24 +164,18 @@ func (t *turn) command() {
 
 // parentless answers a command that needs a gas and has none.
 func (t *turn) parentless() {
-	last, ok := t.last()
 	if list := laterLists[t.line.Intent]; list != "" {
 		var r reply.Reply
 		r.Add(reply.Notice, list)
 		t.finish(string(t.line.Intent), r)
 		return
 	}
-	if !ok {
-		var r reply.Reply
-		for _, n := range t.notices() {
-			r.Add(reply.Notice, n)
-		}
-		r.Add(reply.Question, askParentText)
-		t.finish("question", r)
-		t.answer.Machine.Question = &MachineQuestion{ID: askParent, Text: askParentText}
+	parent, which := t.parent(t.bedSaid())
+	if which != nil {
+		t.askWhich(which)
 		return
 	}
-	t.readAgain(last)
+	t.readAgain(parent)
 }
 
 // laterLists answers commands about beds, which this version does not keep.
@@ -209,14 +193,30 @@ var laterWork = map[shorthand.Intent]string{
 	shorthand.IntentCheck:   "Claims are not judged one by one by this version: the reading to hold them against.",
 }
 
-// forget takes the thread's gases away.
+// forget takes the thread's gases away, and says so only once the store has
+// done it.
 func (t *turn) forget() {
-	n := len(t.v.Thread().Entries())
+	n := 0
+	for _, e := range t.v.Thread().Entries() {
+		if !e.Void {
+			n++
+		}
+	}
 	t.v.Forget()
-	t.keeps = true
+	if err := t.b.write(t.ctx, t); err != nil {
+		t.says("forget", notForgotten)
+		return
+	}
 	var r reply.Reply
 	r.Add(reply.Headline, fmt.Sprintf("Forgotten: %d gases of this thread", n))
 	t.finish("forget", r)
+}
+
+// says answers in one sentence.
+func (t *turn) says(kind, text string) {
+	var r reply.Reply
+	r.Add(reply.Notice, text)
+	t.finish(kind, r)
 }
 
 // edited reads the changed question and replaces its answer.
@@ -227,7 +227,7 @@ func (t *turn) edited() {
 	}
 	t.typed()
 	if t.line.Kind != shorthand.Reading && len(before) > 0 {
-		t.v.Remove(t.e.Message)
+		t.v.Drop(t.e.Message) // the rest of a thread stays
 		t.keeps = true
 		if t.answer.Reply.Empty() {
 			t.withdraw()
@@ -244,14 +244,12 @@ func (t *turn) deleted() {
 	t.amends = Ref(before[0].Post)
 	t.v.Remove(t.e.Message)
 	t.keeps = true
-	t.withdraw()
+	if t.amends != "" {
+		t.withdraw()
+	}
 }
 
-func (t *turn) withdraw() {
-	var r reply.Reply
-	r.Add(reply.Notice, withdrawn)
-	t.finish("forget", r)
-}
+func (t *turn) withdraw() { t.says("forget", withdrawn) }
 
 // settingFor is the house's setting with the target and the usual PaCO2 that
 // the line says.

@@ -40,18 +40,17 @@ var whyUsual = []string{"expected_ph_acute", "expected_paco2", "vd_vt", "vent_ra
 // why shows formula, inputs, cut-off and source behind the last answer, worked
 // out again from the stored numbers.
 func (t *turn) why() {
-	last, ok := t.last()
-	if !ok {
-		t.parentless()
+	parent, which := t.parent(t.bedSaid())
+	if which != nil {
+		t.askWhich(which)
 		return
 	}
-	g := last.Gas
-	a := physio.Assess(g.Sample, t.settingFor(&g))
-	c := &composer{gas: &g, a: &a, n: numbers{t.v.House.Units}}
+	c := t.composer(&parent.Gas)
+	a := c.a
 	var r reply.Reply
 	switch {
 	case strings.Contains(t.line.Argument, "criteri"), strings.Contains(t.line.Argument, "ards"):
-		for _, line := range criteriaLines(&a) {
+		for _, line := range criteriaLines(a) {
 			r.Add(reply.Item, line)
 		}
 	case strings.Contains(t.line.Argument, "caution"):

@@ -18,6 +18,7 @@ const (
 	storeDown      = "The store does not answer: read with the last known house rules; this gas is not remembered."
 	storeDownBlank = "The store does not answer: read with default rules; this gas is not remembered."
 	storeFull      = "The store takes no more writes: this gas is not remembered."
+	notForgotten   = "The store does not answer: nothing was forgotten."
 	withdrawn      = "The question was taken away: this answer no longer holds."
 	earlierVoid    = "The earlier reading is void."
 	hintGas        = "No gas was read there. An example: "

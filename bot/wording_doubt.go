@@ -49,6 +49,7 @@ var noteTemplates = map[shorthand.NoteCode]string{
 	shorthand.NoteFlowPerKg:    "Read {t} per kg as {v}.",
 	shorthand.NoteBareHeight:   "Read {t} as height in cm.",
 	shorthand.NoteOrderRead:    "The order was read by what fits: check the values above.",
+	shorthand.NoteRangeLow:     "Of {t} the lower end is used.",
 	shorthand.NoteNotRead:      "Not read: {t}.",
 }
 
@@ -108,6 +109,9 @@ const (
 	askPaO2Text    = "Which PaO2 or SpO2?"
 	askParent      = "which_gas"
 	askParentText  = "Which gas does this follow?"
+	askBed         = "which_bed"
+	askGasText     = "Several gases came together: which one? Type it again with all its values."
+	closedText     = "That question is closed: it was answered, or its gas was replaced."
 	askHeight      = "height_and_sex"
 	askHeightText  = "Height and sex?"
 	askCOHb        = "cohb"

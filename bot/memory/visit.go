@@ -130,6 +130,14 @@ func (v *Visit) Remove(message string) {
 	})
 }
 
+// Drop takes a message's gases away, and nothing else.
+func (v *Visit) Drop(message string) {
+	v.edit(func(p *paper) { p.thread.remove(message) })
+}
+
+// Abandon takes back every change: Save will only mark the claim as done.
+func (v *Visit) Abandon() { v.edits, v.FirstTime = nil, false }
+
 // Ask leaves a question open, about what a message brought.
 func (v *Visit) Ask(q shorthand.Question, message string) {
 	q = cleanQuestion(q)

@@ -43,8 +43,11 @@ func (r *reader) looseGas() bool {
 	if !ok {
 		return false
 	}
-	all := r.assignments(&c)
 	plain := r.plainDoubt(&c)
+	if !c.tied && plain < sameDoubt {
+		return false
+	}
+	all := r.assignments(&c)
 	var good []assignment
 	for _, a := range all {
 		if a.cost < plausibleDoubt && a.cost-all[0].cost < sameDoubt {

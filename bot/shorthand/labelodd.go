@@ -145,6 +145,9 @@ func (r *reader) labelsBehind() {
 		if t.used || !t.is(senseLabel) || !n.free() || n.line != t.line || r.joined(i-1) || r.joinedAhead(i-1) || i-1 <= r.last && i-1 >= r.first && r.first >= 0 {
 			continue
 		}
+		if n.percent && t.e.q.Info().Unit != "fraction" {
+			continue
+		}
 		if _, ahead := r.numberAfter(i); ahead || t.e.q == physio.PHq {
 			continue
 		}

@@ -130,7 +130,9 @@ func (r *reader) label(i int) {
 		return
 	}
 	if j+2 < len(r.t) && r.t[j+1].word("or") && r.t[j+2].kind == tokNumber {
-		r.t[j].taken, r.t[j+2].taken = true, true // "peep 5 or 8": no value
+		r.t[i].used, r.t[j].taken, r.t[j+2].taken = true, true, true // "peep 5 or 8": no value
+		r.note(NoteNotRead, r.t[i].e.q, r.t[j].typed(), r.t[j].v)
+		r.note(NoteNotRead, r.t[i].e.q, r.t[j+2].typed(), r.t[j+2].v)
 		return
 	}
 	if r.t[i].e.q == physio.PHq && r.t[j].kind == tokNumber && r.t[i].s != hydrogenWord && !phLike(r.t[j].v) && j > i+1 {

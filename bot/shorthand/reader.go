@@ -63,6 +63,7 @@ func readGas(t []token, h Habits, o segment) Gas {
 	if o.corrects {
 		r.lonePH()
 	}
+	r.notRead()
 	r.finish()
 	return r.g
 }
@@ -326,6 +327,7 @@ func (r *reader) swallow(i int) {
 			return
 		case t.kind == tokNumber && !r.gasStart(j):
 			t.taken = true
+			r.tubeDepth(i, j)
 			if j+2 >= len(r.t) || !r.t[j+1].sep("/:-") || r.t[j+2].kind != tokNumber || r.gasStart(j+2) {
 				return
 			}
@@ -333,6 +335,17 @@ func (r *reader) swallow(i int) {
 		default:
 			r.swallowBefore(i)
 			return
+		}
+	}
+}
+
+// tubeDepth takes the depth behind the size of a tube: "ett 7.5 @ 22", "7.5
+// ett at 23".
+func (r *reader) tubeDepth(i, j int) {
+	switch r.t[i].s {
+	case "ett", "tube", "trach", "size", "sz":
+		if j+2 < len(r.t) && (r.t[j+1].sep("@") || r.t[j+1].word("at")) && r.t[j+2].free() && r.t[j].v < 10 && !r.gasStart(j+2) {
+			r.t[j+2].taken = true
 		}
 	}
 }

@@ -76,7 +76,8 @@ func (a *Adapter) Ready() error {
 func (a *Adapter) Way() bot.Way { return &way{a: a} }
 
 // Shutdown takes no more events, waits for what is in flight (at most 20 s, and
-// no longer than ctx), and leaves no goroutine and no connection behind.
+// no longer than ctx), and leaves no goroutine and no connection behind. Answers
+// that are cut short then have a moment more to save what they did.
 func (a *Adapter) Shutdown(ctx context.Context) error {
 	ctx, cancel := context.WithTimeout(ctx, drainTime)
 	defer cancel()
@@ -85,7 +86,7 @@ func (a *Adapter) Shutdown(ctx context.Context) error {
 	a.side.Wait()
 	a.client.CloseIdleConnections()
 	if err != nil {
-		return fmt.Errorf("slack: %d answers were not finished: %w", a.pool.Held(), err)
+		return fmt.Errorf("slack: answers were not finished: %w", err)
 	}
 	return nil
 }

@@ -2,11 +2,17 @@ package transport
 
 import (
 	"context"
+	"fmt"
 	"sync"
+	"time"
 )
 
-// Task is one piece of work. Its context ends when a drain runs out of time.
+// Task is one piece of work. Its context ends when a drain runs out of time;
+// then it has graceTime left to save what it did.
 type Task func(ctx context.Context)
+
+// graceTime is how long Drain waits for tasks that it told to stop.
+const graceTime = 2 * time.Second
 
 // Pool runs tasks on a bounded number of goroutines. Tasks of one lane run one
 // after the other in the order in which they came, so that an edit never
@@ -33,7 +39,8 @@ type Pool struct {
 // NewPool returns a pool of at most workers goroutines that holds at most
 // limit tasks, waiting and running, and perLane of them in one lane, so that one
 // noisy channel can not shut the others out. caught, if not nil, hears of the
-// value of a panic; the pool goes on.
+// value of a panic, which may quote what was typed: log its type alone. The pool
+// goes on.
 func NewPool(workers, limit, perLane int, caught func(value any)) *Pool {
 	ctx, stop := context.WithCancel(context.Background())
 	return &Pool{workers: workers, limit: limit, perLane: perLane, caught: caught,
@@ -73,7 +80,9 @@ func (p *Pool) Held() int {
 }
 
 // Drain takes no more work and waits for what was taken. When ctx ends first,
-// the contexts of the tasks are cancelled and ctx's error is returned.
+// tasks that wait are left, the contexts of those that run are cancelled, and
+// Drain gives them up to graceTime to return. Its error then wraps ctx's error
+// and tells how many tasks were left or cut short.
 func (p *Pool) Drain(ctx context.Context) error {
 	p.mu.Lock()
 	p.closed = true
@@ -85,8 +94,25 @@ func (p *Pool) Drain(ctx context.Context) error {
 	case <-done:
 		return nil
 	case <-ctx.Done():
-		return ctx.Err()
 	}
+	cut := p.cut()
+	if cut == 0 { // the last one ended in this very moment
+		return nil
+	}
+	select {
+	case <-done:
+	case <-time.After(graceTime):
+	}
+	return fmt.Errorf("%d tasks did not finish in time: %w", cut, ctx.Err())
+}
+
+// cut tells running tasks to stop, keeps waiting ones from being begun, and
+// gives how many there were of both.
+func (p *Pool) cut() int {
+	p.mu.Lock()
+	defer p.mu.Unlock()
+	p.stop()
+	return p.held
 }
 
 func (p *Pool) loop() {
@@ -103,7 +129,7 @@ func (p *Pool) loop() {
 func (p *Pool) next() (string, Task) {
 	p.mu.Lock()
 	defer p.mu.Unlock()
-	if len(p.ready) == 0 {
+	if len(p.ready) == 0 || p.ctx.Err() != nil {
 		p.running--
 		return "", nil
 	}

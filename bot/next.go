@@ -34,6 +34,9 @@ func (c *composer) nextPH() string {
 		return ""
 	}
 	to, name := c.a.Ranges.PaCO2High, ""
+	if v := c.a.Ventilation; v.RangeHouse {
+		to, name = v.Range.High, " (the end of this channel's range)"
+	}
 	if ab.Course == physio.AcuteOnChronic && ab.UsualPaCO2.High > to {
 		to = (ab.UsualPaCO2.Low + ab.UsualPaCO2.High) / 2
 		name = " (the usual one that HCO3 points to: about " + c.n.between(ab.UsualPaCO2.Low, ab.UsualPaCO2.High) + ")"

@@ -74,11 +74,17 @@ func (c *composer) adequateCO2() string {
 	if c.a.AcidBase.Need == physio.Beyond && c.a.AcidBase.Primary == physio.MetabolicAlkalosis {
 		return level + fmt.Sprintf(", but PaCO2 is below what this alkalosis expects (%s %s).", c.needSpan(), c.n.unit())
 	}
+	if c.a.Ventilation.RangeHouse && !c.a.Ventilation.Borderline {
+		level += " (" + c.rangeWords() + ")"
+	}
 	return level + "."
 }
 
 // rangeWords names the range that PaCO2 is judged by.
 func (c *composer) rangeWords() string {
+	if v := c.a.Ventilation; v.RangeHouse {
+		return "this channel's " + c.n.between(v.Range.Low, v.Range.High) + " " + c.n.unit()
+	}
 	r := c.a.Ranges
 	return "range " + c.n.between(r.PaCO2Low, r.PaCO2High) + " " + c.n.unit()
 }
@@ -111,10 +117,10 @@ func (c *composer) highCO2() string {
 func (c *composer) limitWords() string {
 	for _, q := range c.a.Critical {
 		if q == physio.PaCO2 {
-			return " (critical limit " + c.n.about(c.a.CriticalLimits.PaCO2High) + ")"
+			return " (critical limit " + c.n.about(c.a.CriticalLimits.PaCO2High) + " " + c.n.unit() + ")"
 		}
 	}
-	if c.a.Ventilation.Borderline || !plainAdult(c.a) {
+	if c.a.Ventilation.Borderline || c.a.Ventilation.RangeHouse || !plainAdult(c.a) {
 		return " (" + c.rangeWords() + ")"
 	}
 	return ""
@@ -139,12 +145,17 @@ func (c *composer) lowCO2() string {
 	if c.a.Ventilation.Borderline {
 		level += ", borderline"
 	}
-	level += " (" + c.n.between(c.a.Ranges.PaCO2Low, c.a.Ranges.PaCO2High) + ")."
+	level += " (" + c.lowRangeWords() + ")."
 	low := c.a.Oxygenation.Scale == physio.DegreeMild || c.a.Oxygenation.Scale == physio.DegreeModerate || c.a.Oxygenation.Scale == physio.DegreeSevere
 	if low || c.a.Oxygenation.Efficiency == physio.Poor {
 		level += " Low oxygen can drive it; a later rise into the range is then no recovery by itself."
 	}
 	return level
+}
+
+// lowRangeWords names the range of a PaCO2 that is called below it.
+func (c *composer) lowRangeWords() string {
+	return strings.TrimPrefix(c.rangeWords(), "range ")
 }
 
 func (c *composer) unknownCO2() string {

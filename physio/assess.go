@@ -74,10 +74,7 @@ func (sc *scene) gap(t triple) {
 
 func (sc *scene) critical() {
 	a := sc.a
-	limits := defaultCritical
-	if a.Population == Newborn || a.Population == Preterm {
-		limits = newbornCritical
-	}
+	limits := DefaultCritical(a.Population)
 	if a.Blood == Cord {
 		limits = cordCritical
 	} else if sc.set.Critical != nil {

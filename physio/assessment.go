@@ -84,6 +84,11 @@ type Ventilation struct {
 	Screen bool
 	// PaCO2 is the interval of a repeat sample, mmHg; zero when unknown.
 	PaCO2 Interval
+	// Range is the span in mmHg that the PaCO2 was held against; zero when it
+	// was not. RangeHouse says that it is the house's own and not the
+	// population's.
+	Range      Span
+	RangeHouse bool
 	// Pattern says "high, chronic pattern": PaCO2 above its range with pH in
 	// range and bicarbonate in the chronic band.
 	ChronicPattern bool

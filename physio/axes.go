@@ -27,8 +27,9 @@ func (sc *scene) levelOf(pco2 float64) {
 	v, r, ab := &sc.a.Ventilation, sc.a.Ranges, sc.a.AcidBase
 	low, high := r.PaCO2Low, r.PaCO2High
 	if t := sc.set.TargetPaCO2; t != nil {
-		low, high = t.Low, t.High
+		low, high, v.RangeHouse = t.Low, t.High, true
 	}
+	v.Range = Span{Low: low, High: high}
 	v.PaCO2 = propagate(func(x []float64) float64 { return x[0] }, []Input{Measured(PaCO2, pco2)})
 	v.Borderline = crosses(v.PaCO2, low) || crosses(v.PaCO2, high)
 	switch {

@@ -75,6 +75,15 @@ var cordCritical = CriticalLimits{PHLow: 7.00}
 // list of nurseries calls from 7.25; both call above a PaCO2 of 70.
 var newbornCritical = CriticalLimits{PHLow: 7.20, PHHigh: 7.60, PaCO2High: 70}
 
+// DefaultCritical gives the critical limits of a population for which a house
+// has set none. A zero field is no limit: newborns have none of PaO2.
+func DefaultCritical(p Population) CriticalLimits {
+	if p == Newborn || p == Preterm {
+		return newbornCritical
+	}
+	return defaultCritical
+}
+
 // Acid-base tolerances.
 const (
 	acuteTolerance    = 2.0  // mmol/L round the acute response: course

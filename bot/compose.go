@@ -22,6 +22,10 @@ type composer struct {
 	notices []string
 	// question is the one question, nil for none.
 	question *asked
+	// said tells what was asked in this thread before, nil for nothing.
+	said func(shorthand.QuestionCode) bool
+	// unsaid is a question that stays open without being asked again.
+	unsaid *asked
 	// replaces is the gas in whose place this one stands, nil for a new one.
 	replaces *kin
 	// brief is the step of brevity, 0 for the whole answer.
@@ -59,7 +63,7 @@ const (
 // layout composes the answer in its fixed order.
 func (c *composer) layout() reply.Reply {
 	var r reply.Reply
-	c.question = c.chooseQuestion()
+	c.question = c.askedOnce(c.chooseQuestion())
 	r.Add(reply.Headline, c.headline())
 	if c.criticalFirst() {
 		r.Add(reply.Critical, criticalNotice)

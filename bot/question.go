@@ -24,6 +24,16 @@ func (c *composer) chooseQuestion() *asked {
 	return c.assessedQuestion()
 }
 
+// askedOnce holds a question back that a follow-up would ask again. A doubt
+// about what was typed is asked until it is answered.
+func (c *composer) askedOnce(q *asked) *asked {
+	if q == nil || q.from == nil || c.said == nil || len(c.gas.Questions) > 0 || !c.said(q.from.Code) {
+		return q
+	}
+	c.unsaid = q
+	return nil
+}
+
 func (c *composer) typedQuestion(q *shorthand.Question) *asked {
 	choices := make([]string, len(q.Choices))
 	for i, choice := range q.Choices {

@@ -52,6 +52,9 @@ func measured(s *physio.Sample) bool {
 // deliverReading assesses, composes and remembers.
 func (t *turn) deliverReading(c *composer) {
 	c.a = t.assess(c.gas)
+	if c.gas.Follow != shorthand.FollowNone {
+		c.said = t.v.Thread().Asked
+	}
 	if c.gas.Follow == shorthand.FollowNow && c.change != "" {
 		c.change = c.changeSentence(c.change, t)
 	}

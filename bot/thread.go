@@ -19,14 +19,14 @@ type kin struct {
 // answered in one word.
 func (k *kin) listed() bool { return k != nil && k.of > 1 }
 
-// gases lists the thread's gases that hold, unless the event edits them.
+// gases lists the thread's gases but those that the event edits.
 func (t *turn) gases() []kin {
 	var found []kin
 	place := map[string]int{}
 	for _, e := range t.v.Thread().Entries() {
 		at := place[e.Message]
 		place[e.Message]++
-		if !e.Void && (t.e.Kind != Edited || e.Message != t.e.Message) {
+		if t.e.Kind != Edited || e.Message != t.e.Message {
 			found = append(found, kin{Entry: e, at: at})
 		}
 	}
@@ -36,7 +36,7 @@ func (t *turn) gases() []kin {
 	return found
 }
 
-// last is the last gas of the thread that holds.
+// last is the last of them.
 func (t *turn) last() (kin, bool) {
 	all := t.gases()
 	if len(all) == 0 {
@@ -120,7 +120,11 @@ func (t *turn) keep(c *composer, r *reply.Reply) {
 	if c.replaces != nil {
 		message = c.replaces.Message
 	}
-	open := c.question != nil && c.question.from != nil && !c.replaces.listed()
+	question := c.question
+	if question == nil {
+		question = c.unsaid
+	}
+	open := question != nil && question.from != nil && !c.replaces.listed()
 	kept := message != "" && !t.v.Degraded && !t.v.Full
 	if !kept || !open {
 		r.Buttons = nil
@@ -139,9 +143,9 @@ func (t *turn) keep(c *composer, r *reply.Reply) {
 	if !open {
 		return
 	}
-	t.v.Ask(*c.question.from, message)
+	t.v.Ask(*question.from, message)
 	for i := range r.Buttons {
-		r.Buttons[i].Token = buttonToken(message, c.question, r.Buttons[i].Label)
+		r.Buttons[i].Token = buttonToken(message, question, r.Buttons[i].Label)
 	}
 }
 

@@ -153,3 +153,16 @@ func (c cancelling) Deliver(ctx context.Context, p bot.Post) (bot.Ref, error) {
 	defer c.cancel()
 	return c.hall.Deliver(ctx, p)
 }
+
+func TestAFollowUpDoesNotAskTheSameAgain(t *testing.T) {
+	r := newRoom()
+	if text := r.say("m1", "7.28/58/62/27").Reply.Text(); !strings.Contains(text, "?") {
+		t.Fatalf("the oxygen was not asked for:\n%s", text)
+	}
+	if text := r.say("m2", "now 7.33/49/70").Reply.Text(); strings.Contains(text, "?") {
+		t.Errorf("the oxygen was asked for twice:\n%s", text)
+	}
+	if text := r.say("m3", "room air").Reply.Text(); !strings.Contains(text, "PaCO2 49") || !strings.Contains(text, "air") {
+		t.Errorf("the question that was not repeated can not be answered:\n%s", text)
+	}
+}

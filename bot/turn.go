@@ -196,12 +196,7 @@ var laterWork = map[shorthand.Intent]string{
 // forget takes the thread's gases away, and says so only once the store has
 // done it.
 func (t *turn) forget() {
-	n := 0
-	for _, e := range t.v.Thread().Entries() {
-		if !e.Void {
-			n++
-		}
-	}
+	n := len(t.v.Thread().Entries())
 	t.v.Forget()
 	if err := t.b.write(t.ctx, t); err != nil {
 		t.says("forget", notForgotten)

@@ -35,7 +35,6 @@ type entryDoc struct {
 	Post    string          `json:"post,omitempty"`
 	At      time.Time       `json:"at"`
 	Until   time.Time       `json:"until"`
-	Void    bool            `json:"void,omitempty"`
 	Gas     json.RawMessage `json:"gas"`
 }
 
@@ -106,7 +105,7 @@ func decodeEntry(raw json.RawMessage) (*held, error) {
 		return nil, err
 	}
 	gas, err := decodeGas(d.Gas)
-	return &held{Entry: Entry{Message: d.Message, Post: d.Post, At: d.At, Gas: gas, Void: d.Void}, until: d.Until}, err
+	return &held{Entry: Entry{Message: d.Message, Post: d.Post, At: d.At, Gas: gas}, until: d.Until}, err
 }
 
 // encode writes the entry for the store, once.
@@ -118,7 +117,7 @@ func (e *held) encode() (err error) {
 	if err != nil {
 		return err
 	}
-	e.raw, err = json.Marshal(&entryDoc{Message: e.Message, Post: e.Post, At: e.At.UTC(), Until: e.until.UTC(), Void: e.Void, Gas: gas})
+	e.raw, err = json.Marshal(&entryDoc{Message: e.Message, Post: e.Post, At: e.At.UTC(), Until: e.until.UTC(), Gas: gas})
 	return err
 }
 

@@ -101,16 +101,3 @@ func (m *Memory) reread(ctx context.Context, v *Visit) error {
 	}
 	return m.merge(v, papers, items)
 }
-
-// ForgetThread takes a thread out of the store, or outside a thread what the
-// user's own lines left.
-func (m *Memory) ForgetThread(ctx context.Context, where Where, user string) error {
-	v := m.visit(Call{Where: where, User: user})
-	key := v.docs[0].key
-	m.threads.drop(v.partition + "\n" + key)
-	if key == "" {
-		return nil
-	}
-	_, err := m.guard.Do(ctx, v.partition, store.Op{Key: key, Delete: true})
-	return err
-}

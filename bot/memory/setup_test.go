@@ -162,7 +162,7 @@ func reading(t *testing.T, m *Memory, c Call, paco2 float64) *Visit {
 	return v
 }
 
-// paco2s are the PaCO2 of a thread's gases, in order, void ones in brackets.
+// paco2s are the PaCO2 of a thread's gases, in order.
 func paco2s(t *Thread) string {
 	s := ""
 	for i, e := range t.Entries() {
@@ -170,11 +170,7 @@ func paco2s(t *Thread) string {
 			s += " "
 		}
 		v, _ := e.Gas.Sample.Get(physio.PaCO2)
-		if e.Void {
-			s += fmt.Sprintf("(%g)", v)
-		} else {
-			s += fmt.Sprintf("%g", v)
-		}
+		s += fmt.Sprintf("%g", v)
 	}
 	return s
 }

@@ -21,8 +21,6 @@ type Entry struct {
 	At time.Time
 	// Gas is what was read.
 	Gas shorthand.Gas
-	// Void says that a later line replaced the gas.
-	Void bool
 }
 
 // The most that one thread keeps: the oldest messages go first.
@@ -51,24 +49,13 @@ type Thread struct {
 	flat    string // of a thread under a message: the key of the other copy
 }
 
-// Entries lists the gases in the order in which they were typed, void ones
-// included.
+// Entries lists the gases in the order in which they were typed.
 func (t *Thread) Entries() []Entry {
 	all := make([]Entry, len(t.entries))
 	for i := range t.entries {
 		all[i] = t.entries[i].Entry
 	}
 	return all
-}
-
-// Last gives the last gas that is not void.
-func (t *Thread) Last() (Entry, bool) {
-	for i := len(t.entries) - 1; i >= 0; i-- {
-		if !t.entries[i].Void {
-			return t.entries[i].Entry, true
-		}
-	}
-	return Entry{}, false
 }
 
 // ByMessage gives the gases that a message brought, none when it is not

@@ -21,18 +21,11 @@ func TestThreadRemembersInOrder(t *testing.T) {
 	}
 	v := load(t, r.process(), inThread("top", "m9"))
 	expect(t, "gases", paco2s(v.Thread()), "50 51 52")
-	last, ok := v.Thread().Last()
+	last := v.Thread().Entries()[2]
 	expect(t, "last", last.Message, "m2")
-	expect(t, "there is a last", ok, true)
 	expect(t, "its answer", last.Post, "post-m2")
 	expect(t, "its time", last.At, base.Add(2*time.Minute))
-	v.Void("m2")
-	expect(t, "with a void gas", paco2s(v.Thread()), "50 51 (52)")
-	last, _ = v.Thread().Last()
-	expect(t, "last that is not void", last.Message, "m1")
 	expect(t, "another thread", paco2s(load(t, m, inThread("other", "m8")).Thread()), "")
-	_, ok = new(Thread).Last()
-	expect(t, "last of an empty thread", ok, false)
 }
 
 func TestOldestMessagesGoFirst(t *testing.T) {
@@ -50,8 +43,8 @@ func TestOldestMessagesGoFirst(t *testing.T) {
 	}
 	v.Put(beds...)
 	expect(t, "gases of one long list", len(v.Thread().Entries()), mostEntries)
-	last, _ := v.Thread().Last()
-	paco2, _ := last.Gas.Sample.Get(physio.PaCO2)
+	all := v.Thread().Entries()
+	paco2, _ := all[len(all)-1].Gas.Sample.Get(physio.PaCO2)
 	expect(t, "last of the list", paco2, 89)
 	expect(t, "found by message", len(v.ByMessage("list")), mostEntries)
 }
@@ -102,9 +95,9 @@ func TestRememberedThreadIsNotStale(t *testing.T) {
 	expect(t, "gases", paco2s(reading(t, a, inThread("top", "m3"), 70).Thread()), "50 60 70")
 	where := ward
 	where.Thread = "top"
-	if err := b.ForgetThread(ctx, where, ""); err != nil {
-		t.Fatal(err)
-	}
+	gone := load(t, b, Call{Where: where, Delivery: "gone", Message: "gone"})
+	gone.Forget()
+	save(t, b, gone)
 	expect(t, "after another process forgot it", paco2s(load(t, a, inThread("top", "m4")).Thread()), "")
 }
 
@@ -137,7 +130,6 @@ func TestAnswerOpensAThread(t *testing.T) {
 	expect(t, "inside the thread", paco2s(reply.Thread()), "50")
 	q, of := reply.Thread().Pending()
 	expect(t, "question is found inside", q != nil && q.Code == "which_oxygen" && of == "m1", true)
-	reply.Settle()
 	reply.Put(gas("m2", 60))
 	save(t, m, reply)
 	expect(t, "outside", paco2s(load(t, m, call("m3")).Thread()), "50")
@@ -239,6 +231,24 @@ func TestFlatChannelAsksAnewForANewCase(t *testing.T) {
 	expect(t, "asked, after a new case", v.Thread().Asked("which_oxygen"), false)
 }
 
+// Drop takes one message's gases, Remove the whole thread under it; Abandon
+// leaves only the claim to be written.
+func TestDropAndAbandon(t *testing.T) {
+	r := newRig()
+	m := r.process()
+	reading(t, m, inThread("m0", "m0"), 50)
+	reading(t, m, inThread("m0", "m1"), 60)
+	v := load(t, m, inThread("m0", "m2"))
+	v.Drop("m0")
+	v.Abandon()
+	save(t, m, v)
+	expect(t, "abandoned", paco2s(load(t, r.process(), inThread("m0", "m3")).Thread()), "50 60")
+	v = load(t, m, inThread("m0", "m4"))
+	v.Drop("m0")
+	save(t, m, v)
+	expect(t, "dropped", paco2s(load(t, r.process(), inThread("m0", "m5")).Thread()), "60")
+}
+
 func TestForget(t *testing.T) {
 	r := newRig()
 	m := r.process()
@@ -248,19 +258,14 @@ func TestForget(t *testing.T) {
 	v.Forget()
 	save(t, m, v)
 	expect(t, "own lines", paco2s(load(t, m, call("m4")).Thread()), "")
-	where := ward
-	where.Thread = "top"
-	if err := m.ForgetThread(ctx, where, "U1"); err != nil {
-		t.Fatal(err)
-	}
+	v = load(t, m, inThread("top", "m6"))
+	v.Forget()
+	save(t, m, v)
 	expect(t, "thread", paco2s(load(t, m, inThread("top", "m5")).Thread()), "")
 	for key := range r.tap.wrote {
 		if strings.Contains(key, "thread/") || strings.Contains(key, "flat/") {
 			t.Errorf("%q still stands in the store", key)
 		}
-	}
-	if err := m.ForgetThread(ctx, ward, ""); err != nil {
-		t.Errorf("forgetting nobody's lines: %v", err)
 	}
 }
 
@@ -271,7 +276,6 @@ func TestTwoProcessesWriteOneThread(t *testing.T) {
 	r.add(time.Second)
 	va, vb := load(t, a, inThread("top", "m1")), load(t, b, inThread("top", "m2"))
 	va.Put(gas("m1", 50))
-	va.Void("m0")
 	vb.Put(gas("m2", 60))
 	vb.Ask(shorthand.Question{Code: "venous"}, "m2")
 	save(t, a, va)
@@ -279,7 +283,7 @@ func TestTwoProcessesWriteOneThread(t *testing.T) {
 	save(t, b, vb)
 	expect(t, "round trips of a save with a conflict", r.tap.count()-before, 2)
 	v := load(t, r.process(), inThread("top", "m3"))
-	expect(t, "gases of both", paco2s(v.Thread()), "(40) 50 60")
+	expect(t, "gases of both", paco2s(v.Thread()), "40 50 60")
 	q, _ := v.Thread().Pending()
 	expect(t, "question of one", q != nil, true)
 }

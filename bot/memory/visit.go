@@ -108,11 +108,6 @@ func (v *Visit) Put(entries ...Entry) {
 	})
 }
 
-// Void marks the gases of a message as replaced by a later line.
-func (v *Visit) Void(message string) {
-	v.edit(func(p *paper) { p.thread.each(message, func(e *held) { e.Void = true }) })
-}
-
 // Posted notes where the answer to a message stands.
 func (v *Visit) Posted(message, post string) {
 	v.edit(func(p *paper) { p.thread.each(message, func(e *held) { e.Post = post }) })
@@ -146,11 +141,6 @@ func (v *Visit) Ask(q shorthand.Question, message string) {
 			p.thread.ask(q, message)
 		}
 	})
-}
-
-// Settle closes the open question.
-func (v *Visit) Settle() {
-	v.edit(func(p *paper) { p.thread.pending, p.thread.of = nil, "" })
 }
 
 // Forget empties the thread; outside a thread, what this user's lines left.

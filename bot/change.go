@@ -7,21 +7,6 @@ import (
 	"galeward/physio"
 )
 
-// repeatSpread is the change between two samples beyond which it is not the
-// scatter of repeat samples: PaCO2 2.1 mmHg, PaO2 9.1 mmHg or 10 %, pH 0.03
-// (Mallat 2015; Thorson 1983).
-func repeatSpread(q physio.Quantity, v float64) float64 {
-	switch q {
-	case physio.PaCO2:
-		return max(2.06, 0.051*v)
-	case physio.PaO2:
-		return max(9.1, 0.10*v)
-	case physio.PHq:
-		return 0.03
-	}
-	return 0
-}
-
 // changeSentence splits the change since the gas before by axis: the values,
 // and whether each is beyond the spread of repeat samples.
 func (c *composer) changeSentence(when string, t *turn) string {
@@ -54,14 +39,14 @@ func (c *composer) changeSentence(when string, t *turn) string {
 }
 
 func (c *composer) spreadWord(q physio.Quantity, before, now float64) string {
-	if math.Abs(now-before) <= repeatSpread(q, before) {
+	if math.Abs(now-before) <= physio.RepeatSpread(q, before) {
 		return " (inside the spread of repeat samples)"
 	}
 	return ""
 }
 
 func (c *composer) ratioSpread(before, now physio.Index) string {
-	if math.Abs(now.Value-before.Value) <= 0.10*before.Value {
+	if math.Abs(now.Value-before.Value) <= physio.RatioSpread*before.Value {
 		return " (inside the spread)"
 	}
 	return ""

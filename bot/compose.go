@@ -277,9 +277,9 @@ func (c *composer) levelWord() string {
 		switch {
 		case o.Scale == physio.DegreeUnknown:
 			return "can't say"
-		case pao2 < 45:
+		case pao2 < physio.CriticallyLowPaO2:
 			return "critically low"
-		case pao2 < 60 || o.Saturation.Value > 0 && o.Saturation.Value < 0.895 && o.Scale != physio.DegreeSevere:
+		case pao2 < physio.LowPaO2 || o.Saturation.Value > 0 && o.Saturation.Value < physio.LowSaturation && o.Scale != physio.DegreeSevere:
 			return "low" // also where acidosis moves the saturation below 90 %
 		}
 	}

@@ -103,6 +103,9 @@ func (c *composer) machineAxes(m *Machine) {
 func (c *composer) machineIndices() map[string]MachineIndex {
 	out := make(map[string]MachineIndex, len(c.a.Indices))
 	for _, ix := range c.a.Indices {
+		if !finite(ix.Value, ix.Low, ix.High) {
+			continue // absent things are left out
+		}
 		out[ix.Key] = MachineIndex{
 			Value: machineNumber(ix.Value), Low: machineNumber(ix.Low), High: machineNumber(ix.High), Unit: ix.Unit,
 		}

@@ -42,7 +42,7 @@ func (c *composer) nextPH() string {
 		name = " (the usual one that HCO3 points to: about " + c.n.between(ab.UsualPaCO2.Low, ab.UsualPaCO2.High) + ")"
 	}
 	sbe, ok := c.a.Index("sbe")
-	if !ok || d.PaCO2-to < smallestNext {
+	if !ok || d.PaCO2-to < physio.SmallestChange {
 		return ""
 	}
 	ph, err := physio.PHAtPCO2(physio.MmolL(sbe.Value), physio.MmHg(to))
@@ -55,10 +55,6 @@ func (c *composer) nextPH() string {
 	}
 	return text + "."
 }
-
-// smallestNext is the change of PaCO2, mmHg, below which a next pH is not told:
-// it would be inside the spread of repeat samples.
-const smallestNext = 3.0
 
 // stepDown are the fractions of oxygen at which a next PaO2 is told.
 var stepDown = []float64{0.80, 0.60, 0.40, 0.28}

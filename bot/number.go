@@ -152,9 +152,18 @@ func ratio(v float64) string {
 // machineNumber rounds a number of the machine form to six digits, so that
 // 0.4 is not written as 0.40000000000000002.
 func machineNumber(v float64) float64 {
-	if v == 0 || math.IsNaN(v) || math.IsInf(v, 0) {
+	if v == 0 || !finite(v) {
 		return 0
 	}
 	scale := math.Pow(10, 5-math.Floor(math.Log10(math.Abs(v))))
 	return math.Round(v*scale) / scale
+}
+
+func finite(vs ...float64) bool {
+	for _, v := range vs {
+		if math.IsNaN(v) || math.IsInf(v, 0) {
+			return false
+		}
+	}
+	return true
 }

@@ -2,6 +2,7 @@ package bot
 
 import (
 	"fmt"
+	"math"
 	"strings"
 
 	"galeward/physio"
@@ -337,7 +338,7 @@ func (c *composer) metabolicProcess(p physio.Process, first bool) string {
 		word = "also " + word
 	}
 	sbe, ok := c.a.Index("sbe")
-	if !ok || !first || sbe.Value > -2 && sbe.Value < 2 {
+	if !ok || !first || math.Abs(sbe.Value) < physio.SaidSBE {
 		return word
 	}
 	return word + ", SBE " + signed(sbe.Value) + " mmol/L"

@@ -129,7 +129,7 @@ func (c *composer) aboveUsual() string {
 
 // expectedWhy names what explains a low PaO2.
 func (c *composer) expectedWhy() string {
-	if c.a.Altitude >= 1000 {
+	if c.a.Altitude >= physio.SaidAltitude {
 		return "altitude"
 	}
 	return "age"
@@ -148,9 +148,9 @@ func (c *composer) borderlineO2() string {
 // deviation of a repeat of its cut-off.
 func (c *composer) atEdge() bool {
 	if pao2, ok := c.gas.Sample.Get(physio.PaO2); ok && c.a.Oxygenation.SaturationSource != physio.SpO2 {
-		return pao2 < 83
+		return pao2 < physio.NearAdequatePaO2
 	}
-	return c.a.Oxygenation.Saturation.Value < 0.965
+	return c.a.Oxygenation.Saturation.Value < physio.NearAdequateSaturation
 }
 
 func (c *composer) saturationWords() string {
@@ -165,10 +165,10 @@ func (c *composer) saturationWords() string {
 	case physio.SpO2:
 		return "SpO2 " + s
 	}
-	if co, met := c.gas.Sample.Val(physio.COHb), c.gas.Sample.Val(physio.MetHb); co > 0.10 || met > 0.015 {
+	if co, met := c.gas.Sample.Val(physio.COHb), c.gas.Sample.Val(physio.MetHb); co > physio.SaidCOHb || met > physio.SaidMetHb {
 		return "oxyhaemoglobin at most about " + s
 	}
-	if ph, ok := c.gas.Sample.Get(physio.PHq); ok && (ph < 7.35 || ph > 7.45) {
+	if ph, ok := c.gas.Sample.Get(physio.PHq); ok && (ph < physio.SaidPHLow || ph > physio.SaidPHHigh) {
 		return "SaO2 about " + s + " at this pH"
 	}
 	return "SaO2 about " + s
@@ -203,7 +203,7 @@ func (c *composer) oxygenEfficiency() string {
 		switch {
 		case !c.a.Oxygen.Known:
 			return "Efficiency: can't say without the oxygen."
-		case o.SaturationSource == physio.SpO2 && o.Saturation.Value > 0.97:
+		case o.SaturationSource == physio.SpO2 && o.Saturation.Value > physio.SpO2Ceiling:
 			return "Efficiency: can't say above SpO2 97 %."
 		case o.SaturationSource == physio.SpO2:
 			return "Efficiency: can't say without a PaO2."
@@ -249,7 +249,7 @@ func (c *composer) transferPhrase() string {
 func (c *composer) healthyAtPaCO2() string {
 	h := c.a.Oxygenation.HealthyPaO2
 	p, ok := c.gas.Sample.Get(physio.PaCO2)
-	if !ok || h.Value <= 0 || p <= 50 || !c.gas.Sample.Has(physio.PaO2) {
+	if !ok || h.Value <= 0 || p <= physio.SaidHealthyPaCO2 || !c.gas.Sample.Has(physio.PaO2) {
 		return ""
 	}
 	return "A healthy lung at this PaCO2: PaO2 about " + c.n.about(h.Value) + "."

@@ -114,7 +114,7 @@ func (r *reader) lookBack(c *looseChain) {
 		if r.t[i].line != r.t[c.ph].line {
 			break
 		}
-		tie := r.t[i].sep("/|\\,")
+		tie := r.t[i].sep("/|\\,-")
 		if tie {
 			i--
 		}
@@ -129,7 +129,7 @@ func (r *reader) lookBack(c *looseChain) {
 
 func (r *reader) lookAhead(c *looseChain) {
 	for i := c.ph + 1; i < len(r.t) && len(c.others) < 5; i++ {
-		tie := r.t[i].sep("/|\\,")
+		tie := r.t[i].sep("/|\\,-")
 		if tie {
 			i++
 		}

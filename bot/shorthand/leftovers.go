@@ -139,7 +139,7 @@ func (r *reader) secondGroup() {
 		return
 	}
 	for i := range r.t {
-		if !r.t[i].free() || r.joined(i) || i <= r.last && i >= r.first {
+		if !r.t[i].free() || r.joined(i) || r.dateLike(i) || i <= r.last && i >= r.first {
 			continue
 		}
 		n, slashes := chainAhead(r.t, i)

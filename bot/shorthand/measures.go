@@ -81,7 +81,7 @@ func (r *reader) measures() {
 			r.ofGestation(i)
 			continue
 		}
-		if r.labelled(i) {
+		if r.labelled(i) && !(bodyUnit(u) && r.t[i-1].is(senseLabel) && r.t[i-1].e.weak) {
 			continue
 		}
 		r.byUnit(i, u, n)
@@ -101,8 +101,8 @@ func (r *reader) heightBesideSex() {
 		if s.kind != tokWord || !(s.s == "m" || s.s == "f" || s.e != nil && s.e.sex != "") {
 			continue
 		}
-		for _, j := range []int{i + 1, i - 1} {
-			if !r.bareHeight(j) || j < i && len(s.s) == 1 {
+		for _, j := range []int{i + 1, i + 2, i - 1} {
+			if !r.bareHeight(j) || j < i && len(s.s) == 1 || j > i+1 && !r.t[i+1].sep(",:") {
 				continue
 			}
 			r.take(j, 0)
@@ -130,6 +130,16 @@ func (r *reader) bareHeight(j int) bool {
 	}
 	behindSex := j > 0 && (r.t[j-1].word("f") || r.t[j-1].word("m"))
 	return !r.joined(j) && !r.joinedAhead(j) && (behindSex || !r.labelled(j)) && !r.gasStart(j)
+}
+
+// bodyUnit says that a unit is one of age, weight or height: a letter in front
+// of such a number is the sex and no label.
+func bodyUnit(u string) bool {
+	switch u {
+	case uKg, uPound, uCm, uInch, uYear, uMonth:
+		return true
+	}
+	return false
 }
 
 // labelled says that a label stands directly before the number.

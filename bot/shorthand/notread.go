@@ -1,6 +1,10 @@
 package shorthand
 
-import "galeward/physio"
+import (
+	"math"
+
+	"galeward/physio"
+)
 
 // mostRead is above every value of a gas: a longer number is not repeated.
 const mostRead = 2000
@@ -21,7 +25,7 @@ func (r *reader) notRead() {
 
 // owned says that the number at i belongs to something that is no value.
 func (r *reader) owned(i int) bool {
-	if r.unknownBehind(i) || r.dateLike(i) {
+	if r.unknownBehind(i) || r.dateLike(i) || r.tubeLike(i) {
 		return true
 	}
 	for j := i - 1; j >= 0 && j >= i-4 && r.t[j].line == r.t[i].line; j-- {
@@ -49,6 +53,21 @@ func (r *reader) unknownBehind(i int) bool {
 		return false
 	case t.e == nil, t.e.sense == senseWord, t.e.sense == senseSwallow, t.e.sense == senseTime, t.e.sense == senseUnit:
 		return true
+	}
+	return false
+}
+
+// tubeLike says that the number is part of the size and the depth of a tube:
+// "7.5/22", "7.0 @ 21".
+func (r *reader) tubeLike(i int) bool {
+	for _, j := range []int{i, i - 2} {
+		if j < 0 || j+2 >= len(r.t) || !r.t[j+1].sep("/@-") || r.t[j].kind != tokNumber || r.t[j+2].kind != tokNumber {
+			continue
+		}
+		size, depth := r.t[j].v, r.t[j+2].v
+		if size >= 2 && size < 10 && 2*size == math.Trunc(2*size) && depth >= 6 && depth <= 28 {
+			return true
+		}
 	}
 	return false
 }

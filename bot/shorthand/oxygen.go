@@ -87,6 +87,11 @@ func (r *reader) flowPerKg(i, n int) {
 	}
 	flow := math.Round(t.v*kg*10) / 10
 	if !ok || !physio.OxygenFlow.Possible(flow) {
+		for j := range r.t {
+			if u, _ := r.unitAfter(j); r.t[j].kind == tokNumber && (u == uLitre || u == uLPM) {
+				return // the whole flow stands beside it
+			}
+		}
 		r.ask(Question{Code: AskFlowPerKg, Quantity: physio.OxygenFlow, Typed: t.typed()})
 		return
 	}

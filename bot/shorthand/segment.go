@@ -70,6 +70,9 @@ func coreStarts(t []token) []span {
 			i = end - 1
 		case gasStart(t, i):
 			n, _ := chainAhead(t, i)
+			if len(found) > 0 && n == 2 && t[i].decimals == 1 {
+				continue // behind a gas, rather a tube: "7.5/22"
+			}
 			end := advance(t, i, n)
 			if end <= i {
 				end = i + 1

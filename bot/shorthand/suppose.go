@@ -9,7 +9,7 @@ import (
 
 var (
 	// leadsSuppose are words that lead a what-if of a thread: "and at co2 50?".
-	leadsSuppose = sift(`^\s*(?:(?:and|so|then|but|ok|okay|hmm|now|or)[ ,]+)*(?:at|with|if|on|say|saying|assuming|assume|for|supposing|imagine|in case|what about|how about|what with|what at|let'?s say|were)\b`)
+	leadsSuppose = sift(`^\s*(?:(?:and|so|then|but|ok|okay|hmm|now|or)[ ,]+)*(?:at|with|if|on|say|saying|assuming|assume|for|supposing|imagine|in case|what about|how about|what with|what at|let'?s say|were|would|could|can (?:we|i|you)|maybe|perhaps|try|trying)\b`)
 	// ifAlone is an if that asks for no other value by name.
 	ifAlone   = sift(`^\s*(?:(?:and|so|then|but|ok|okay|hmm|or)[ ,]+)*(?:if|say|assuming|supposing|imagine)\b`)
 	asksValue = sift(`\b(what|whats|which|how)\b`)
@@ -33,7 +33,7 @@ func (p *parser) supposes(s string, g *grams, t []token) bool {
 	if v.Empty() || p.answersOxygen(&v) {
 		return false
 	}
-	return led || bareValue(t) && p.differs(&v)
+	return led || bareValue(t) && (p.differs(&v) || setByStaff(&v))
 }
 
 // holdsGas says that the tokens hold a whole gas, not only a labelled pH.
@@ -68,11 +68,36 @@ func (p *parser) differs(v *physio.Values) bool {
 	return found
 }
 
+// setByStaff says that only settings are said, which staff chooses: with a
+// question mark they are a choice, not a state.
+func setByStaff(v *physio.Values) bool {
+	all := true
+	v.Each(func(q physio.Quantity, _ float64) {
+		switch q {
+		case physio.RR, physio.RRSet, physio.VT, physio.VTPerKg, physio.VE, physio.PEEP, physio.PS, physio.PC, physio.IPAP,
+			physio.EPAP, physio.CPAP, physio.FiO2, physio.OxygenFlow, physio.PHigh, physio.PLow, physio.THigh, physio.TLow:
+		default:
+			all = false
+		}
+	})
+	return all
+}
+
+// joins says that a word may stand beside a bare what-if: "and co2 45?", "rate
+// 28 instead?".
+func joins(w string) bool {
+	switch w {
+	case "and", "so", "then", "but", "or", "ok", "okay", "instead", "rather", "enough", "help", "better":
+		return true
+	}
+	return false
+}
+
 // bareValue says that the line holds nothing but labels, numbers and units.
 func bareValue(t []token) bool {
 	for i := range t {
 		x := &t[i]
-		if x.kind == tokWord && !x.is(senseLabel) && !x.is(senseUnit) && !x.is(senseFiller) && !x.is(senseDevice) {
+		if x.kind == tokWord && !x.is(senseLabel) && !x.is(senseUnit) && !x.is(senseFiller) && !x.is(senseDevice) && !joins(x.s) {
 			return false
 		}
 	}

@@ -9,6 +9,7 @@ func (r *reader) usual() {
 		switch {
 		case r.usualWord(i) && !r.t[i].used:
 			r.usualAt(i)
+			r.usualOxygen(i)
 		case r.t[i].is(senseLabel) && !r.t[i].used && r.t[i].e.q == physio.PaCO2:
 			r.usualBehind(i)
 		}
@@ -107,13 +108,49 @@ func (r *reader) bareUsual(i, j int) bool {
 	t := &r.t[j]
 	u, _ := r.unitAfter(j)
 	labelled := r.t[i].word("known") || r.t[i].word("chronic") || r.t[i].word("runs")
-	if labelled || t.percent || t.sign != 0 || u != "" && u != uMmHg && u != uKPa || len(coreStarts(r.t)) == 0 || r.joinedAhead(j) {
+	if labelled || t.percent || t.sign != 0 || u != "" && u != uMmHg && u != uKPa || !r.hasPaCO2() || r.joinedAhead(j) {
 		return false
 	}
 	if u == uKPa || r.h.Units == KPa && u == "" {
 		return t.v >= 5.5 && t.v <= 12
 	}
 	return t.v >= 42 && t.v <= 84 && t.decimals == 0
+}
+
+// hasPaCO2 says that a PaCO2 of today stands in the line or in the thread.
+func (r *reader) hasPaCO2() bool {
+	if r.h.Earlier != nil && r.h.Earlier.Has(physio.PaCO2) || len(coreStarts(r.t)) > 0 {
+		return true
+	}
+	for i := range r.t {
+		if r.t[i].is(senseLabel) && r.t[i].e.q == physio.PaCO2 {
+			return true
+		}
+	}
+	return false
+}
+
+// usualOxygen leaves out the oxygen that a patient usually has, when the line
+// says today's too: "normally on 2L, 28% now".
+func (r *reader) usualOxygen(i int) {
+	j := i + 1
+	for j < len(r.t) && j <= i+4 && (r.t[j].is(senseFiller) || r.t[j].word("has") || r.t[j].word("uses") || r.verbOfState(j)) {
+		j++
+	}
+	if j <= i+1 || j >= len(r.t) || !r.t[j].free() || !r.oxygenUnit(j) {
+		return
+	}
+	for k := range r.t {
+		if k != j && (r.t[k].free() && r.oxygenUnit(k) || r.t[k].is(senseAir)) {
+			r.t[j].taken = true
+			return
+		}
+	}
+}
+
+func (r *reader) oxygenUnit(j int) bool {
+	u, _ := r.unitAfter(j)
+	return u == uLitre || u == uLPM || u == uPercent
 }
 
 // Edges of what is believed as a usual PaCO2, in mmHg: below, the number is
@@ -130,7 +167,7 @@ func (r *reader) keepUsual(j, label int) {
 	u, n := r.unitAfter(j)
 	unit, _ := r.pressureUnit(physio.EtCO2, t, u)
 	f := formOf(physio.EtCO2, t, unit, true)
-	if f.v < leastUsual || f.v > mostUsual {
+	if f.v < leastUsual || f.v > mostUsual || j+1 < len(r.t) && r.t[j+1].word("s") { // "high 50s"
 		t.taken = true
 		return
 	}

@@ -51,7 +51,7 @@ var unitRows = []row{
 	{unit(uGram), "g, gm, gms, gram, grams, gr"},
 	{unit(uPound), "lb, lbs, pounds, pound"},
 	{unit(uCm), "cm, cms, centimetres, centimeters"},
-	{unit(uMetre), "metres, meters, metre, meter, mtr, mts"},
+	{unit(uMetre), "metres, meters, metre, meter, mtr, mts, masl, m asl, m above sea level, metres above sea level, meters above sea level"},
 	{unit(uInch), "in, inches, inch, ins"},
 	{unit(uFoot), "ft, feet, foot"},
 	{unit(uMmolL), "mmol/l, mmol, meq, mmoll, meql, mmol l, meq l"},

@@ -63,7 +63,7 @@ var risings = []rising{
 	{name: "SpO2 against a target", q: physio.SpO2, steps: []string{"below", "inside", "above"}, others: anyPopulation, word: against,
 		set: physio.Setting{Target: &physio.Target{Low: 0.88, High: 0.92}}},
 	{name: "FiO2 at a PaO2, on oxygen", q: physio.FiO2, steps: costs, from: 0.25, to: 1, word: transfer, others: func(t *rapid.T) physio.Sample {
-		return gas(physio.PaO2, rapid.Float64Range(60, 85).Draw(t, "pao2"), physio.PaCO2, rapid.Float64Range(30, 48).Draw(t, "paco2"))
+		return gas(physio.PaO2, rapid.Float64Range(60, 110).Draw(t, "pao2"), physio.PaCO2, rapid.Float64Range(30, 48).Draw(t, "paco2"))
 	}},
 	{name: "VE", q: physio.VE, steps: costs, others: only(physio.PHq, 7.4, physio.PaCO2, 40), word: costly},
 	{name: "VD/VT", q: physio.VDVT, steps: costs, others: only(physio.PHq, 7.4, physio.PaCO2, 40), word: costly},

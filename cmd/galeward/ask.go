@@ -22,7 +22,7 @@ type askCommand struct {
 
 // Run answers and prints. Nothing is kept when it ends.
 func (c *askCommand) Run(ctx runContext, p process) error {
-	b, err := newAsking(ctx, c.House)
+	b, err := newAsking(ctx, openMemory(), c.House)
 	if err != nil {
 		return err
 	}
@@ -43,7 +43,7 @@ type asker struct {
 	bot          *bot.Bot
 	json, thread bool
 	out          *bufio.Writer
-	asked        int
+	asked        int  // messages of the thread so far: their ids
 	printed      bool // an answer stands already: the next one needs a blank line
 	troubled     bool // an answer was kind trouble
 }
@@ -104,7 +104,6 @@ func endOfInput(err error) error {
 
 // answer prints the answer to one message and flushes it.
 func (a *asker) answer(ctx context.Context, text string) error {
-	a.asked++
 	answer := a.bot.Answer(ctx, a.event(text))
 	a.troubled = a.troubled || answer.Machine.Kind == "trouble"
 	if err := a.print(answer); err != nil {
@@ -113,17 +112,17 @@ func (a *asker) answer(ctx context.Context, text string) error {
 	return a.out.Flush()
 }
 
+// event is a message of the one thread, or one that stands alone: without a
+// thread, an id and a user there is nothing to remember it by, not even that it
+// was asked. The house rules hold for both.
 func (a *asker) event(text string) bot.Event {
-	id := strconv.Itoa(a.asked)
-	where := askPlace()
-	where.Thread = "1"
-	if !a.thread {
-		where.Thread = id // each line stands alone
+	e := bot.Event{Kind: bot.Typed, Where: askPlace(), Text: text, At: time.Now(), Listening: true}
+	if a.thread {
+		a.asked++
+		e.Delivery = strconv.Itoa(a.asked)
+		e.Message, e.Where.Thread = e.Delivery, "1"
 	}
-	return bot.Event{
-		Kind: bot.Typed, Delivery: id, Message: id, Where: where,
-		Text: text, At: time.Now(), Listening: true,
-	}
+	return e
 }
 
 // askPlace is the one channel of ask.

@@ -15,9 +15,9 @@ import (
 	"github.com/goccy/go-yaml"
 )
 
-// newAsking makes the bot of ask: a memory of its own that ends with the process.
-func newAsking(ctx context.Context, houseFile string) (*bot.Bot, error) {
-	b, m := newBot(openMemory(), slog.New(slog.DiscardHandler))
+// newAsking makes the bot of ask on a store.
+func newAsking(ctx context.Context, s store.Store, houseFile string) (*bot.Bot, error) {
+	b, m := newBot(s, slog.New(slog.DiscardHandler))
 	return b, settle(ctx, m, whereOf(askPlace()), houseFile)
 }
 

@@ -34,6 +34,7 @@ func (c *serveCommand) Run(ctx runContext, p process) error {
 		return err
 	}
 	srv.health.warnings = warnings
+	defer sweeper{s.sweep, sweepTime, log}.start(ctx)()
 	return srv.serve(ctx)
 }
 

@@ -29,6 +29,8 @@ type openedStore struct {
 	kind string
 	// check says what is wrong with the server's settings; nil: nothing can be.
 	check func(context.Context) []string
+	// sweep clears expired items; nil: the store does so by itself.
+	sweep func(context.Context) (int, error)
 }
 
 type nothing struct{}
@@ -66,7 +68,7 @@ func openBolt(s storeSettings, getenv func(string) string) (*openedStore, error)
 	if err != nil {
 		return nil, err
 	}
-	return &openedStore{Store: b, Closer: b, kind: "bolt"}, nil
+	return &openedStore{Store: b, Closer: b, kind: "bolt", sweep: b.Sweep}, nil
 }
 
 func openRedis(s storeSettings, getenv func(string) string) (*openedStore, error) {

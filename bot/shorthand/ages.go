@@ -17,6 +17,49 @@ func (r *reader) ageSex(i int) bool {
 	return true
 }
 
+// ageBeforeSex takes the age in front of a sex: "72 male", "64 m".
+func (r *reader) ageBeforeSex(i int) bool {
+	if i+1 >= len(r.t) || r.t[i+1].line != r.t[i].line {
+		return false
+	}
+	t, s := &r.t[i], &r.t[i+1]
+	if t.decimals > 0 || t.v < 1 || t.v > 110 || t.sign != 0 || t.than != 0 || t.percent || r.labelled(i) || r.joined(i) || !r.namesSex(i+1) {
+		return false
+	}
+	if i > 0 {
+		before := &r.t[i-1]
+		row := before.kind == tokNumber && !before.percent && !r.joined(i-1) // "28 450 16 m"
+		if row || before.is(senseDevice) || before.sep("/@-") || before.is(senseFiller) {
+			return false
+		}
+	}
+	r.put(formOf(physio.Age, t, uYear, true), physio.Age, t.typed())
+	if r.sample().Sex == "" && len(s.s) == 1 {
+		s.used = true
+		r.sample().Sex = physio.Sex(s.s)
+	}
+	r.take(i, 0)
+	if t.v < 18 && r.sample().Population == "" {
+		r.sample().Population = physio.Child
+	}
+	return true
+}
+
+// namesSex says that the word at i is a sex and nothing else.
+func (r *reader) namesSex(i int) bool {
+	t := &r.t[i]
+	if t.kind != tokWord {
+		return false
+	}
+	switch t.s {
+	case "male", "female", "man", "woman", "lady", "gentleman", "boy", "girl":
+		return true
+	case "m", "f":
+		return i+1 >= len(r.t) || r.t[i+1].kind != tokNumber
+	}
+	return false
+}
+
 // age takes an age with its unit; a child's and a newborn's age say the
 // population.
 func (r *reader) age(i int, u string, n int) {

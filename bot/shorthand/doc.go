@@ -8,10 +8,15 @@
 // searched for identifiers (identify.go), cut into tokens (lex.go), parted into
 // a clause of an aim or a what-if and into gases (clause.go, segment.go), and
 // each gas is read by labels, settings, the chain of unlabelled values and the
-// sayings on oxygen (reader.go lists the steps). The values of the gas are
+// sayings on oxygen (reader.go lists the steps). A number beside a gas that no
+// step takes is said not to be read (notread.go). The values of the gas are
 // weighed last: every way to read them is a candidate, and one measure
 // (score.go) compares them; decide.go turns its answer into use, note or
 // question.
+//
+// The patterns for words, of identifiers, requests and jobs, are dear: each
+// stands behind a sieve (sieve.go, grams.go) that is derived from the pattern
+// and says from the pieces of a text that it can not match.
 //
 // The lexer with positions, the one vocabulary table (spellings, accepted
 // units), the reading of unlabelled values by order, the comparison of two

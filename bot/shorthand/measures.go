@@ -73,7 +73,7 @@ func (r *reader) take(i, unitTokens int) {
 // durations, rates, altitudes.
 func (r *reader) measures() {
 	for i := range r.t {
-		if !r.t[i].free() || r.feet(i) || r.ageSex(i) {
+		if !r.t[i].free() || r.feet(i) || r.ageSex(i) || r.ageBeforeSex(i) {
 			continue
 		}
 		u, n := r.unitAfter(i)

@@ -114,8 +114,11 @@ func (t *turn) parse() shorthand.Line {
 	}
 	h.Addressed = true
 	again := shorthand.Parse(t.e.Text, h)
-	follows := len(again.Gases) == 1 && again.Gases[0].Follow != shorthand.FollowNone &&
-		(h.Earlier != nil || again.Gases[0].Follow != shorthand.FollowAddition)
+	follows := t.e.Listening && again.Intent != shorthand.IntentNone
+	for i := range again.Gases {
+		f := again.Gases[i].Follow
+		follows = follows || f != shorthand.FollowNone && (h.Earlier != nil || f != shorthand.FollowAddition)
+	}
 	switch {
 	case again.Kind == shorthand.Command, again.Kind == shorthand.Released, again.Kind == shorthand.Refusal:
 		return again

@@ -17,7 +17,9 @@ import (
 	"context"
 	"errors"
 	"fmt"
+	"runtime"
 	"runtime/debug"
+	"strings"
 	"sync"
 	"sync/atomic"
 	"syscall"
@@ -134,10 +136,28 @@ func guard(work func() error) (err error) {
 	defer debug.SetPanicOnFault(debug.SetPanicOnFault(true))
 	defer func() {
 		if r := recover(); r != nil {
-			err = fmt.Errorf("%w: %v", errGaveUp, r)
+			err = fmt.Errorf("%w: %T at %s", errGaveUp, r, thrownAt())
 		}
 	}()
 	return work()
+}
+
+// thrownAt tells, called while a panic is recovered, which function threw it:
+// the first one below the panic that is not of the runtime.
+func thrownAt() string {
+	pcs := make([]uintptr, 64)
+	frames := runtime.CallersFrames(pcs[:runtime.Callers(1, pcs)])
+	thrown := false
+	for {
+		f, more := frames.Next()
+		if thrown && !strings.HasPrefix(f.Function, "runtime.") {
+			return fmt.Sprintf("%s, line %d", f.Function, f.Line)
+		}
+		thrown = thrown || f.Function == "runtime.gopanic"
+		if !more {
+			return "an unknown place"
+		}
+	}
 }
 
 // plain gives the client's errors the names of the contract and of this

@@ -5,6 +5,7 @@ import (
 	"errors"
 	"fmt"
 	"io"
+	"runtime/debug"
 	"strings"
 
 	"github.com/alecthomas/kong"
@@ -39,12 +40,8 @@ type left int
 // run carries out one command line and gives the exit code.
 func run(ctx context.Context, p process) (code int) {
 	defer func() {
-		if r := recover(); r != nil {
-			l, ok := r.(left)
-			if !ok {
-				panic(r)
-			}
-			code = int(l)
+		if v := recover(); v != nil {
+			code = thrown(p.errs, v)
 		}
 	}()
 	err := parseAndRun(ctx, p)
@@ -56,6 +53,16 @@ func run(ctx context.Context, p process) (code int) {
 	if errors.As(err, &usage) {
 		return exitUsage
 	}
+	return exitFailed
+}
+
+// thrown gives the exit code for what was thrown. The value of a fault may
+// quote what was typed: only its type is printed, and where it came from.
+func thrown(errs io.Writer, v any) int {
+	if l, ok := v.(left); ok {
+		return int(l)
+	}
+	fmt.Fprintf(errs, "galeward: a fault of the program, of type %T\n%s", v, debug.Stack())
 	return exitFailed
 }
 

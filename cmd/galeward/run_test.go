@@ -27,6 +27,23 @@ func TestOutputThatIsGoneIsAFailure(t *testing.T) {
 	}
 }
 
+type throwingWriter struct{}
+
+func (throwingWriter) Write(p []byte) (int, error) { panic("at " + string(p)) }
+
+// A fault of ours ends with a code and names its place, and quotes nothing.
+func TestFaultQuotesNothing(t *testing.T) {
+	var errs bytes.Buffer
+	code := run(t.Context(), process{args: []string{"ask", usualLine}, out: throwingWriter{}, errs: &errs, getenv: noEnv})
+	got := errs.String()
+	if code != exitFailed || !strings.Contains(got, "type string") || !strings.Contains(got, "throwingWriter") {
+		t.Errorf("exit %d, %q", code, got)
+	}
+	if strings.Contains(got, "7.27") {
+		t.Errorf("the fault quotes what was typed: %q", got)
+	}
+}
+
 type goneReader struct{}
 
 func (goneReader) Read([]byte) (int, error) { return 0, errors.New("nobody writes this") }

@@ -109,7 +109,7 @@ func newService(s allSettings, store *openedStore, log *slog.Logger, getenv func
 	return &service{
 		adapters: adapters, health: h, listen: s.Listen, drain: s.Drain, log: log,
 		http: &http.Server{
-			Handler: mux, ReadHeaderTimeout: 5 * time.Second, ReadTimeout: 10 * time.Second,
+			Handler: contain(mux, log), ReadHeaderTimeout: 5 * time.Second, ReadTimeout: 10 * time.Second,
 			WriteTimeout: 15 * time.Second, IdleTimeout: time.Minute, MaxHeaderBytes: 32 << 10,
 			ErrorLog: slog.NewLogLogger(log.Handler(), slog.LevelDebug),
 		},

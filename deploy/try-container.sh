@@ -1,6 +1,7 @@
 #!/usr/bin/env bash
-# Runs the binary of the container file as the container would: built static,
-# alone in a read-only root, as nobody, without a capability. bubblewrap lays
+# Runs the binary of the container file as the container would: built static
+# from the folders that are copied into the image, less what .dockerignore holds
+# back, and alone in a read-only root, as nobody, without a capability. bubblewrap lays
 # the root, so that no container builder is needed. Without bubblewrap this fails.
 set -euo pipefail
 cd "$(dirname "$0")/.."
@@ -19,7 +20,17 @@ fail() {
 
 command -v bwrap >/dev/null || fail "bubblewrap is missing: apt-get install bubblewrap"
 
-CGO_ENABLED=0 go build -trimpath -ldflags '-s -w -X main.version=trial' -o "$scratch/galeward" ./cmd/galeward
+# The sources as the build sees them. .dockerignore lets nothing through but
+# what it names, so that secrets and state can not slip into an image.
+mkdir "$scratch/src"
+[ "$(grep -m1 '^[^#]' .dockerignore)" = '*' ] || fail ".dockerignore does not begin by holding everything back"
+for source in $(sed -nE '/--from/d; s/^COPY (.*) [^ ]+$/\1/p' deploy/Containerfile); do
+	grep -qxF "!$source" .dockerignore || fail ".dockerignore holds $source back, which the image is built from"
+	cp -R "$source" "$scratch/src/"
+done
+find "$scratch/src" \( -name testdata -o -name '*_test.go' \) -prune -exec rm -rf {} +
+(cd "$scratch/src" && CGO_ENABLED=0 go build -trimpath -buildvcs=false -ldflags '-s -w -X main.version=trial' -o "$scratch/galeward" ./cmd/galeward) ||
+	fail "the image's sources do not build"
 if ldd "$scratch/galeward" >/dev/null 2>&1; then fail "the binary is not static"; fi
 
 mkdir "$scratch/state" "$scratch/secrets"

@@ -167,7 +167,7 @@ func (sc *scene) mechanism() {
 	low := a.Oxygenation.Scale == DegreeMild || a.Oxygenation.Scale == DegreeModerate || a.Oxygenation.Scale == DegreeSevere
 	transfer := a.Oxygenation.Efficiency == Reduced || a.Oxygenation.Efficiency == Poor
 	if low {
-		if p, ok := sc.v.Get(PaCO2); ok && p > a.Ranges.PaCO2High {
+		if p, ok := sc.v.Get(PaCO2); ok && above(p, a.Ranges.PaCO2High) {
 			a.Mechanism = append(a.Mechanism, MechHypoventilation)
 		}
 		if a.Altitude >= altitudeShiftFrom {

@@ -33,7 +33,7 @@ func (sc *scene) levelOf(pco2 float64) {
 	v.PaCO2 = propagate(func(x []float64) float64 { return x[0] }, []Input{Measured(PaCO2, pco2)})
 	v.Borderline = crosses(v.PaCO2, low) || crosses(v.PaCO2, high)
 	switch {
-	case pco2 > high:
+	case above(pco2, high):
 		v.Level = LevelHypoventilation
 	case ab.Primary == MetabolicAcidosis && ab.Need == Short && sc.a.Fit.Grade != FitReject:
 		v.Level = LevelShortForNeed
@@ -60,7 +60,7 @@ func (sc *scene) floor() {
 	v := &sc.a.Ventilation
 	if et, ok := sc.v.Get(EtCO2); ok {
 		v.Floor = true
-		if et > sc.a.Ranges.PaCO2High {
+		if above(et, sc.a.Ranges.PaCO2High) {
 			v.Level = LevelHypoventilation
 		}
 		return

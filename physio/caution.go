@@ -229,7 +229,7 @@ func (sc *scene) asthmaNotLow() bool {
 
 func (sc *scene) brainCO2() bool {
 	p, ok := sc.v.Get(PaCO2)
-	return ok && sc.brainAtRisk() && (p < sc.a.Ranges.PaCO2Low || p > sc.a.Ranges.PaCO2High)
+	return ok && sc.brainAtRisk() && (p < sc.a.Ranges.PaCO2Low || above(p, sc.a.Ranges.PaCO2High))
 }
 
 // brainAtRisk: the brain was injured or has been without blood.
@@ -278,7 +278,7 @@ func (sc *scene) retainer() bool {
 		return false
 	}
 	chronic := d.HCO3 > raisedHCO3 && d.PH <= sc.a.Ranges.PHHigh
-	return d.PaCO2 > sc.a.Ranges.PaCO2High && sc.a.AcidBase.Primary == RespiratoryAcidosis || chronic
+	return above(d.PaCO2, sc.a.Ranges.PaCO2High) && sc.a.AcidBase.Primary == RespiratoryAcidosis || chronic
 }
 
 func (sc *scene) aboveRetainer() bool {

@@ -107,7 +107,12 @@ func classify(t triple) AcidBase {
 	return ab
 }
 
-func (t triple) highCO2() bool  { return t.pco2 > t.r.PaCO2High }
+// above says that a PCO2 is above a limit in the unit it was printed in: 45 mmHg
+// is the limit that a kPa print-out knows as 6.0, which is 45.004 mmHg. No
+// analyser prints hundredths of a mmHg.
+func above(pco2, limit float64) bool { return pco2 > limit+0.01 }
+
+func (t triple) highCO2() bool  { return above(t.pco2, t.r.PaCO2High) }
 func (t triple) lowCO2() bool   { return t.pco2 < t.r.PaCO2Low }
 func (t triple) highHCO3() bool { return t.hco3 > t.r.HCO3High }
 func (t triple) lowHCO3() bool  { return t.hco3 < t.r.HCO3Low }

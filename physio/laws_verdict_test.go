@@ -84,6 +84,29 @@ func TestLawUnitsNeverChangeAVerdict(t *testing.T) {
 	})
 }
 
+// TestLimitsHoldAsPrintedInKPa: the adult range of PaCO2 is printed as 4.7 to 6.0
+// kPa and the scale of PaO2 as 10.7 and 8.0 kPa (common practice): values that a
+// kPa analyser prints at those limits are inside, a tenth beyond is not.
+func TestLimitsHoldAsPrintedInKPa(t *testing.T) {
+	of := func(pco2, po2 float64) physio.Assessment {
+		return assess(gas(physio.PHq, 7.40, physio.PaCO2, physio.KPa(pco2).MmHg(), physio.PaO2, physio.KPa(po2).MmHg(), physio.FiO2, 0.21))
+	}
+	for kPa, want := range map[float64]physio.Level{
+		4.6: physio.LevelHyperventilation, 4.7: physio.LevelAdequate, 6.0: physio.LevelAdequate, 6.1: physio.LevelHypoventilation,
+	} {
+		if got := of(kPa, 12).Ventilation.Level; got != want {
+			t.Errorf("PaCO2 %.1f kPa: %s, want %s", kPa, got, want)
+		}
+	}
+	for kPa, want := range map[float64]physio.Degree{
+		10.7: physio.DegreeAdequate, 10.6: physio.DegreeMild, 8.0: physio.DegreeMild, 7.9: physio.DegreeModerate,
+	} {
+		if got := of(5.3, kPa).Oxygenation.Level; got != want {
+			t.Errorf("PaO2 %.1f kPa: %s, want %s", kPa, got, want)
+		}
+	}
+}
+
 // TestLawOrderNeverMatters: the values of a sample may be set in any order, and
 // set twice.
 func TestLawOrderNeverMatters(t *testing.T) {

@@ -40,22 +40,22 @@ func verdictsOf(a physio.Assessment) verdicts {
 // drawTyped is a sample as analysers print it: whole mmHg, whole percent, two
 // decimals of pH. Cut-offs are such numbers, so many samples stand on one.
 func drawTyped(t *rapid.T) physio.Sample {
-	tenths := func(q physio.Quantity, low, high int, step float64) (physio.Quantity, float64) {
+	steps := func(q physio.Quantity, low, high int, step float64) (physio.Quantity, float64) {
 		return q, float64(rapid.IntRange(low, high).Draw(t, q.Key())) * step
 	}
 	var s physio.Sample
 	s.Set(physio.PHq, float64(rapid.IntRange(690, 770).Draw(t, "ph"))/100)
-	s.Set(tenths(physio.PaCO2, 15, 110, 1))
-	s.Set(tenths(physio.PaO2, 30, 300, 1))
+	s.Set(steps(physio.PaCO2, 15, 110, 1))
+	s.Set(steps(physio.PaO2, 30, 300, 1))
 	s.Set(physio.FiO2, float64(rapid.IntRange(21, 100).Draw(t, "fio2"))/100)
 	if rapid.Bool().Draw(t, "with EtCO2") {
-		s.Set(tenths(physio.EtCO2, 10, 90, 1))
+		s.Set(steps(physio.EtCO2, 10, 90, 1))
 	}
 	if rapid.Bool().Draw(t, "with SpO2") {
 		s.Set(physio.SpO2, float64(rapid.IntRange(60, 100).Draw(t, "spo2"))/100)
 	}
 	if rapid.Bool().Draw(t, "with VE") {
-		s.Set(tenths(physio.VE, 30, 250, 0.1))
+		s.Set(steps(physio.VE, 30, 250, 0.1))
 	}
 	s.Population = rapid.SampledFrom([]physio.Population{"", physio.Pregnant, physio.Child, physio.Newborn, physio.Preterm}).Draw(t, "population")
 	return s

@@ -4,6 +4,7 @@ import (
 	"encoding/json"
 	"errors"
 	"fmt"
+	"strconv"
 	"strings"
 
 	"galeward/bot/memory"
@@ -16,12 +17,12 @@ import (
 func (t *turn) house() {
 	words := strings.Fields(t.line.Argument)
 	switch {
-	case len(words) == 0 || words[0] == "show":
+	case len(words) == 0, words[0] == "show", words[0] == "rules":
 		t.showHouse()
 	case words[0] == "history":
 		t.houseHistory()
-	case words[0] == "restore" && len(words) == 2:
-		t.restoreHouse(words[1])
+	case words[0] == "restore":
+		t.restoreHouse(strings.Join(words[1:], " "))
 	case words[0] == "export":
 		t.exportHouse()
 	default:
@@ -54,6 +55,9 @@ func (t *turn) setHouse(words []string) {
 		t.houseHint(words[0])
 		return
 	}
+	if rule.key == editorsKey {
+		value = editorsTyped(t.e, rule.names)
+	}
 	raw, err := rule.parse(value)
 	if err != nil {
 		t.houseSays(upperFirst(err.Error()))
@@ -63,17 +67,39 @@ func (t *turn) setHouse(words []string) {
 		t.readBack(rule.names[0] + " " + value)
 		return
 	}
-	if !t.v.House.MayChange(t.e.User, t.e.Manager) {
-		t.houseSays("These rules may be changed by named users only; nothing was changed.")
-		return
-	}
 	_, rev, err := t.b.memory.ChangeHouse(t.ctx, whereOf(t.e.Where), t.e.User, func(h memory.House) (memory.House, error) {
-		if rule.merge != nil {
-			return withField(h, rule.key, rule.merge(h, raw))
+		next, err := rule.set(h, raw)
+		if may := t.mayChange(h, next, err == nil); may != nil {
+			return h, may
 		}
-		return withField(h, rule.key, raw)
+		return next, err
 	})
 	t.houseResult(rev, err)
+}
+
+// set puts what was parsed into the rules.
+func (r houseRule) set(h memory.House, parsed any) (memory.House, error) {
+	if r.merge != nil && parsed != nil {
+		parsed = r.merge(h, parsed)
+	}
+	return withField(h, r.key, parsed)
+}
+
+var (
+	errNoEditor  = errors.New("the rules may not be changed by this user")
+	errLockedOut = errors.New("the user would not be able to change the rules again")
+)
+
+// mayChange says whether the asker may change the rules that the store holds,
+// and, where the new ones are known, whether these would still let him.
+func (t *turn) mayChange(now, next memory.House, known bool) error {
+	switch {
+	case !now.MayChange(t.e.User, t.e.Manager):
+		return errNoEditor
+	case known && !next.MayChange(t.e.User, t.e.Manager):
+		return errLockedOut
+	}
+	return nil
 }
 
 // readBack asks for a rule that was said in a sentence to be set in so many
@@ -116,7 +142,13 @@ func (t *turn) houseResult(rev memory.Revision, err error) {
 	switch {
 	case err == nil, errors.Is(err, store.ErrNotReplicated):
 		t.houseStored(rev, err != nil)
-	case errors.As(err, &problems), errors.As(err, &clash), errors.Is(err, memory.ErrNoRevision), errors.Is(err, memory.ErrBusy):
+	case errors.Is(err, errNoEditor):
+		t.houseSays("These rules may be changed by named users only; nothing was changed.")
+	case errors.Is(err, errLockedOut):
+		t.houseSays("You would not be able to change these rules again; nothing was changed. Example: house editors me managers")
+	case errors.As(err, &clash):
+		t.houseSays(clashWords(clash))
+	case errors.As(err, &problems), errors.Is(err, memory.ErrNoRevision), errors.Is(err, memory.ErrBusy):
 		t.houseSays(upperFirst(err.Error()) + ". Nothing was changed.")
 	case errors.Is(err, memory.ErrUncertain):
 		t.houseSays("The store broke off: whether the rule is stored is not known. Type house to see.")
@@ -156,9 +188,11 @@ func orDefault(text string, rule houseRule) string {
 	return text
 }
 
+// changed says that a revision touched a rule: the whole of it, or one of its
+// parts, such as words.npo2.
 func changed(what []memory.Change, key string) bool {
 	for _, c := range what {
-		if c.Field == key {
+		if c.Field == key || strings.HasPrefix(c.Field, key+".") {
 			return true
 		}
 	}
@@ -180,50 +214,15 @@ func (t *turn) houseHint(word string) {
 	t.houseSays(fmt.Sprintf("No house rule is called %q. The rules: %s. Example: house units kPa", word, strings.Join(names, ", ")))
 }
 
-func (t *turn) houseHistory() {
-	revs, err := t.b.memory.Revisions(t.ctx, whereOf(t.e.Where), 8)
-	if err != nil {
-		t.houseResult(memory.Revision{}, err)
-		return
-	}
-	var r reply.Reply
-	r.Add(reply.Headline, fmt.Sprintf("House rules, revision %d", t.v.Revision))
-	for _, rev := range revs {
-		parts := make([]string, len(rev.What))
-		for i, c := range rev.What {
-			parts[i] = c.Field + " " + orWord(c.From) + " to " + orWord(c.To)
-		}
-		r.Add(reply.Item, fmt.Sprintf("%d, %s: %s.", rev.N, rev.At.UTC().Format("2006-01-02 15:04 UTC"), strings.Join(parts, "; ")))
-	}
-	t.finish("house", r)
-}
-
-func orWord(s string) string {
-	if s == "" {
-		return "not set"
-	}
-	return s
-}
-
+// restoreHouse makes an earlier revision the one in force.
 func (t *turn) restoreHouse(number string) {
-	var n int
-	if _, err := fmt.Sscanf(number, "%d", &n); err != nil || n < 0 {
+	n, err := strconv.Atoi(number)
+	if err != nil || n < 1 {
 		t.houseSays("Which revision? A number, such as: house restore 2")
 		return
 	}
-	if !t.v.House.MayChange(t.e.User, t.e.Manager) {
-		t.houseSays("These rules may be changed by named users only; nothing was changed.")
-		return
-	}
-	_, rev, err := t.b.memory.Restore(t.ctx, whereOf(t.e.Where), t.e.User, n)
+	_, rev, err := t.b.memory.Restore(t.ctx, whereOf(t.e.Where), t.e.User, n, func(now, earlier memory.House) error {
+		return t.mayChange(now, earlier, true)
+	})
 	t.houseResult(rev, err)
-}
-
-func (t *turn) exportHouse() {
-	file, err := t.v.House.Encode()
-	if err != nil {
-		t.houseResult(memory.Revision{}, err)
-		return
-	}
-	t.houseSays(string(file))
 }

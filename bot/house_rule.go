@@ -3,7 +3,6 @@ package bot
 import (
 	"fmt"
 	"sort"
-	"strconv"
 	"strings"
 
 	"galeward/bot/memory"
@@ -30,10 +29,10 @@ var houseRules = []houseRule{
 	{"order", []string{"order"}, parseOrder, nil, func(h memory.House) string {
 		return "Order of unlabelled values: " + orderWords(h.Order) + "."
 	}},
-	{"altitude_m", []string{"altitude", "height above sea"}, parseNumber, nil, func(h memory.House) string {
+	{"altitude_m", []string{"altitude", "height above sea", "elevation"}, parseHeight, nil, func(h memory.House) string {
 		return ifSet(h.Altitude, "Altitude: "+plain(h.Altitude, 0)+" m.")
 	}},
-	{"pressure_mmhg", []string{"pressure", "barometer", "pb"}, parseNumber, nil, func(h memory.House) string {
+	{"pressure_mmhg", []string{"pressure", "barometer", "pb"}, parseBarometer, nil, func(h memory.House) string {
 		return ifSet(h.PB, "Barometric pressure: "+plain(h.PB, 0)+" mmHg.")
 	}},
 	{"population", []string{"population", "patients"}, parseText, nil, func(h memory.House) string {
@@ -48,18 +47,13 @@ var houseRules = []houseRule{
 		}
 		return "Saturation target: " + wholePercent(h.Target.Low) + "-" + wholePercent(h.Target.High) + " %."
 	}},
-	{"target_paco2_mmhg", []string{"co2 target", "paco2 target"}, parseSpan, nil, func(h memory.House) string {
+	{"target_paco2_mmhg", []string{"co2 target", "paco2 target"}, parsePressureSpan, mergeSpan, func(h memory.House) string {
 		if h.TargetPaCO2 == nil {
 			return ""
 		}
-		return fmt.Sprintf("PaCO2 wanted: %s-%s mmHg.", plain(h.TargetPaCO2.Low, 0), plain(h.TargetPaCO2.High, 0))
+		return "PaCO2 wanted: " + inBoth(h, h.TargetPaCO2.Low, h.TargetPaCO2.High) + "."
 	}},
-	{"critical", []string{"critical", "critical limits"}, parseCritical, nil, func(h memory.House) string {
-		if h.Critical == nil {
-			return "Critical limits: the default ones (pH below 7.20 or above 7.60, PaCO2 above 70, PaO2 below 45 mmHg)."
-		}
-		return "Critical limits: " + criticalWords(*h.Critical) + "."
-	}},
+	{"critical", []string{"critical", "critical limits"}, parseCritical, mergeCritical, showCritical},
 	{"private", []string{"private"}, parseSwitch, nil, func(h memory.House) string {
 		if h.Private {
 			return "Answers are private to the asker."
@@ -79,6 +73,7 @@ var houseRules = []houseRule{
 		return ifText(strings.Join(h.ShiftEnds, ", "), "Shifts end at "+strings.Join(h.ShiftEnds, ", ")+".")
 	}},
 	{"words", []string{"word", "words"}, parseWord, mergeWord, showWords},
+	{editorsKey, []string{"editors", "editor", "who may change"}, parseEditors, nil, showEditors},
 }
 
 // parseWord reads "ngt means nasal cannula 2 l", or a word with off behind it.
@@ -146,7 +141,7 @@ func findRule(words []string) (houseRule, string, bool) {
 	best, length := -1, 0
 	for i, rule := range houseRules {
 		for _, name := range rule.names {
-			if (line == name || strings.HasPrefix(line, name+" ")) && len(name) > length {
+			if rest, ok := strings.CutPrefix(line, name); ok && (rest == "" || rest[0] == ' ' || rest[0] == ':') && len(name) > length {
 				best, length = i, len(name)
 			}
 		}
@@ -154,7 +149,7 @@ func findRule(words []string) (houseRule, string, bool) {
 	if best < 0 {
 		return houseRule{}, "", false
 	}
-	value := strings.TrimSpace(line[length:])
+	value := strings.TrimLeft(line[length:], " :")
 	for _, filler := range []string{"is ", "= ", "to ", "at "} {
 		value = strings.TrimPrefix(value, filler)
 	}
@@ -178,24 +173,6 @@ func parseText(value string) (any, error) {
 		return nil, fmt.Errorf("a value is missing. Example: house units kPa")
 	}
 	return value, nil
-}
-
-func parseNumber(value string) (any, error) {
-	if off(value) {
-		return nil, nil
-	}
-	fields := strings.FieldsFunc(value, func(r rune) bool { return r == ' ' || r >= 'a' && r <= 'z' })
-	if len(fields) == 0 {
-		return nil, fmt.Errorf("a number is missing. Example: house altitude 1600 m")
-	}
-	v, err := strconv.ParseFloat(strings.ReplaceAll(fields[0], ",", "."), 64)
-	if err != nil {
-		return nil, fmt.Errorf("%q is no number. Example: house altitude 1600 m", fields[0])
-	}
-	if strings.Contains(value, "ft") || strings.Contains(value, "feet") {
-		v *= 0.3048
-	}
-	return v, nil
 }
 
 func parseSpan(value string) (any, error) {
@@ -262,65 +239,4 @@ func orderWords(order []physio.Quantity) string {
 		names[i] = q.Info().Symbol
 	}
 	return strings.Join(names, ", ")
-}
-
-// parseCritical reads "ph 7.2-7.6 paco2 70 pao2 45".
-func parseCritical(value string) (any, error) {
-	if off(value) {
-		return nil, nil
-	}
-	// What is not said keeps its default: a house that names one limit does not
-	// switch the others off.
-	out := map[string]float64{"ph_low": 7.20, "ph_high": 7.60, "paco2_high_mmhg": 70, "pao2_low_mmhg": 45}
-	fields := strings.FieldsFunc(value, func(r rune) bool { return r == ' ' || r == ',' || r == ';' })
-	for i := 0; i+1 < len(fields); i += 2 {
-		if err := criticalPair(out, fields[i], fields[i+1]); err != nil {
-			return nil, err
-		}
-	}
-	if len(fields) == 0 || len(fields)%2 != 0 {
-		return nil, fmt.Errorf("limits are expected in pairs. Example: house critical ph 7.2-7.6 paco2 70 pao2 45")
-	}
-	return out, nil
-}
-
-func criticalPair(out map[string]float64, name, value string) error {
-	q, ok := shorthand.QuantityNamed(name)
-	low, high, isRange := strings.Cut(value, "-")
-	a, errA := strconv.ParseFloat(low, 64)
-	b, errB := a, error(nil)
-	if isRange {
-		b, errB = strconv.ParseFloat(high, 64)
-	}
-	if !ok || errA != nil || errB != nil {
-		return fmt.Errorf("%q %q is no limit. Example: house critical ph 7.2-7.6 paco2 70 pao2 45", name, value)
-	}
-	switch q {
-	case physio.PHq:
-		out["ph_low"] = a
-		if isRange {
-			out["ph_high"] = b
-		}
-	case physio.PaCO2:
-		out["paco2_high_mmhg"] = b
-	case physio.PaO2:
-		out["pao2_low_mmhg"] = a
-	default:
-		return fmt.Errorf("limits are kept for pH, PaCO2 and PaO2, not for %s", q.Info().Symbol)
-	}
-	return nil
-}
-
-func criticalWords(c physio.CriticalLimits) string {
-	var parts []string
-	addIf := func(v float64, text string) {
-		if v > 0 {
-			parts = append(parts, text)
-		}
-	}
-	addIf(c.PHLow, "pH below "+aboutPH(c.PHLow))
-	addIf(c.PHHigh, "pH above "+aboutPH(c.PHHigh))
-	addIf(c.PaCO2High, "PaCO2 above "+plain(c.PaCO2High, 0)+" mmHg")
-	addIf(c.PaO2Low, "PaO2 below "+plain(c.PaO2Low, 0)+" mmHg")
-	return strings.Join(parts, ", ")
 }

@@ -176,13 +176,22 @@ func decodeRevisions(items []store.Item) ([]Revision, error) {
 }
 
 // Restore makes the rules of an earlier revision the rules in force, as a new
-// revision. Errors: those of Revision and of ChangeHouse.
-func (m *Memory) Restore(ctx context.Context, where Where, by string, n int) (House, Revision, error) {
+// revision. Check, unless it is nil, gets the rules that the store holds at that
+// time and the earlier ones; its error ends the matter. Errors: what check said,
+// and those of Revision and of ChangeHouse.
+func (m *Memory) Restore(ctx context.Context, where Where, by string, n int, check func(now, earlier House) error) (House, Revision, error) {
 	earlier, err := m.Revision(ctx, where, n)
 	if err != nil {
 		return House{}, Revision{}, err
 	}
-	return m.ChangeHouse(ctx, where, by, func(House) (House, error) { return earlier.House.Clone(), nil })
+	return m.ChangeHouse(ctx, where, by, func(now House) (House, error) {
+		if check != nil {
+			if err := check(now, earlier.House.Clone()); err != nil {
+				return House{}, err
+			}
+		}
+		return earlier.House.Clone(), nil
+	})
 }
 
 // HouseOf gives the rules in force and their revision number, read from the

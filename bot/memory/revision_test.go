@@ -88,13 +88,22 @@ func TestHistory(t *testing.T) {
 		if _, err := m.Revision(ctx, ward, n); !errors.Is(err, ErrNoRevision) {
 			t.Errorf("revision %d: %v, want ErrNoRevision", n, err)
 		}
-		if _, _, err := m.Restore(ctx, ward, "U1", n); !errors.Is(err, ErrNoRevision) {
+		if _, _, err := m.Restore(ctx, ward, "U1", n, nil); !errors.Is(err, ErrNoRevision) {
 			t.Errorf("restoring revision %d: %v, want ErrNoRevision", n, err)
 		}
 	}
-	h, rev, err := m.Restore(ctx, ward, "U9", 2)
+	h, rev, err := m.Restore(ctx, ward, "U9", 2, nil)
 	if err != nil || rev.N != 6 || rev.By != "U9" || len(h.Words) != 2 || len(rev.What) != 3 {
 		t.Errorf("restored: %+v %+v %v", h, rev, err)
+	}
+	refused := errors.New("refused")
+	var held, old int
+	_, _, err = m.Restore(ctx, ward, "U9", 5, func(now, earlier House) error {
+		held, old = len(now.Words), len(earlier.Words)
+		return refused
+	})
+	if !errors.Is(err, refused) || held != 2 || old != 5 {
+		t.Errorf("a refused restore: %v, with %d words in force and %d to come", err, held, old)
 	}
 	now, n, err := r.process().HouseOf(ctx, ward)
 	if err != nil || n != 6 || len(now.Words) != 2 {

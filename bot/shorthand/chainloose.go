@@ -1,8 +1,6 @@
 package shorthand
 
 import (
-	"math"
-	"sort"
 	"strconv"
 
 	"galeward/physio"
@@ -32,7 +30,7 @@ const (
 	// plausibleDoubt is the doubt up to which an order is believed, sameDoubt
 	// the distance within which another one is as likely. Our own figures, in
 	// the measure of score.go.
-	plausibleDoubt = 3.0
+	plausibleDoubt = 2.5
 	sameDoubt      = 2.0
 )
 
@@ -79,8 +77,7 @@ func (r *reader) findLoose() (looseChain, bool) {
 		return looseChain{}, false
 	}
 	for i := range r.t {
-		t := &r.t[i]
-		if !t.free() || t.sign != 0 || t.percent || t.decimals != 2 || t.v < 6.8 || t.v > 7.8 || r.labelled(i) {
+		if !r.loosePH(i) {
 			continue
 		}
 		c := looseChain{ph: i}
@@ -91,6 +88,44 @@ func (r *reader) findLoose() (looseChain, bool) {
 		}
 	}
 	return looseChain{}, false
+}
+
+// loosePH says that the number at i can be a pH that does not stand first. A
+// chain that begins with a pH has it there: 7.4 may be a pressure in kPa.
+func (r *reader) loosePH(i int) bool {
+	t := &r.t[i]
+	if !t.free() || t.sign != 0 || t.percent || t.decimals == 0 || t.decimals > 2 || t.v < 6.8 || t.v > 7.8 || r.labelled(i) {
+		return false
+	}
+	if u, _ := r.unitAfter(i); u != "" {
+		return false
+	}
+	start := r.chainStart()
+	return start < 0 || start >= i || !phLike(r.t[start].v) || r.t[start].decimals == 0
+}
+
+// phBesideLabels takes the one bare number that can only be the pH of labelled
+// pressures: "co2 40 po2 95 7.40".
+func (r *reader) phBesideLabels() {
+	if r.first >= 0 || r.claims || r.raw[physio.PHq] != nil || r.raw[physio.PaCO2] == nil && r.raw[physio.PaO2] == nil {
+		return
+	}
+	found := -1
+	for i := range r.t {
+		if t := &r.t[i]; t.free() && r.loosePH(i) && t.decimals == 2 && !r.unknownBefore(i) {
+			if found >= 0 {
+				return
+			}
+			found = i
+		}
+	}
+	if found < 0 {
+		return
+	}
+	t := &r.t[found]
+	r.take(found, 0)
+	r.first, r.last = found, found
+	r.raw[physio.PHq] = &rawValue{v: t.v, decimals: t.decimals, typed: t.typed(), at: found}
 }
 
 // otherValue says that the token can be a value beside the pH.
@@ -107,6 +142,12 @@ func (r *reader) otherValue(i int) bool {
 	return u == ""
 }
 
+// tie says that the token joins two values; a hyphen does so without blanks.
+func (r *reader) tie(i int) bool {
+	t := &r.t[i]
+	return t.sep("/|\\,") || t.sep("-") && t.glued && i+1 < len(r.t) && r.t[i+1].glued
+}
+
 func (r *reader) lookBack(c *looseChain) {
 	c.tied = true
 	var found []int
@@ -114,14 +155,15 @@ func (r *reader) lookBack(c *looseChain) {
 		if r.t[i].line != r.t[c.ph].line {
 			break
 		}
-		tie := r.t[i].sep("/|\\,-")
+		tie := r.tie(i)
+		glued := tie && r.t[i].glued && r.t[i+1].glued
 		if tie {
 			i--
 		}
 		if i < 0 || !r.otherValue(i) || r.labelled(i) {
 			break
 		}
-		c.tied = c.tied && tie
+		c.tied = c.tied && glued
 		found = append([]int{i}, found...)
 	}
 	c.others, c.before = found, len(found)
@@ -129,8 +171,7 @@ func (r *reader) lookBack(c *looseChain) {
 
 func (r *reader) lookAhead(c *looseChain) {
 	for i := c.ph + 1; i < len(r.t) && len(c.others) < 5; i++ {
-		tie := r.t[i].sep("/|\\,-")
-		if tie {
+		if r.tie(i) {
 			i++
 		}
 		if i >= len(r.t) || r.t[i].kind != tokNumber || !r.otherValue(i) {
@@ -147,95 +188,6 @@ func (r *reader) valueAt(i int) float64 {
 		return float64(n)
 	}
 	return r.t[i].v
-}
-
-// kindsOf are the sets of quantities that so many values can be.
-func kindsOf(n int) [][]physio.Quantity {
-	co2, o2, hco3, sat := physio.PaCO2, physio.PaO2, physio.HCO3, physio.SaO2
-	switch n {
-	case 2:
-		return [][]physio.Quantity{{co2, o2}, {co2, hco3}}
-	case 3:
-		return [][]physio.Quantity{{co2, o2, hco3}, {co2, o2, sat}}
-	}
-	return [][]physio.Quantity{{co2, o2, hco3, sat}}
-}
-
-// assignments lists the ways to read the values, the likeliest first.
-func (r *reader) assignments(c *looseChain) []assignment {
-	var all []assignment
-	for _, kinds := range kindsOf(len(c.others)) {
-		permute(kinds, 0, func(q []physio.Quantity) {
-			for _, kpa := range []bool{false, true} {
-				all = append(all, r.assign(c, q, kpa))
-			}
-		})
-	}
-	sort.SliceStable(all, func(a, b int) bool { return all[a].cost < all[b].cost })
-	return all
-}
-
-// permute calls use with every order of q.
-func permute(q []physio.Quantity, k int, use func([]physio.Quantity)) {
-	if k == len(q) {
-		use(q)
-		return
-	}
-	for i := k; i < len(q); i++ {
-		q[k], q[i] = q[i], q[k]
-		permute(q, k+1, use)
-		q[k], q[i] = q[i], q[k]
-	}
-}
-
-// assign weighs one way to read the values.
-func (r *reader) assign(c *looseChain, q []physio.Quantity, kpa bool) assignment {
-	a := assignment{q: append([]physio.Quantity(nil), q...), kpa: kpa}
-	a.v.Set(physio.PHq, r.t[c.ph].v)
-	if h := r.raw[physio.HCO3]; h != nil {
-		a.v.Set(physio.HCO3, h.v)
-	}
-	for k, i := range c.others {
-		x := r.valueAt(i)
-		switch {
-		case q[k] == physio.SaO2:
-			x /= 100
-			if k+1 < len(q) {
-				a.cost += sameDoubt // a saturation is typed last
-			}
-		case kpa && q[k] != physio.HCO3:
-			x = physio.KPa(x).MmHg()
-		}
-		a.v.Set(q[k], x)
-	}
-	a.cost += doubtOf(&a.v, r.surroundings())
-	if gap, ok := saturationGap(&a.v); ok && math.Abs(gap) > 0.06 {
-		a.cost += 4
-	}
-	if kpa != (r.h.Units == KPa) {
-		a.cost++
-	}
-	return a
-}
-
-// plainDoubt is the doubt of the values behind the pH alone, in the usual
-// order; what stands before it is then a bed or a number of its own.
-func (r *reader) plainDoubt(c *looseChain) float64 {
-	behind := looseChain{ph: c.ph, others: c.others[c.before:]}
-	n := len(behind.others)
-	if n < 2 || n > 4 {
-		return impossible
-	}
-	usual := []physio.Quantity{physio.PaCO2, physio.PaO2, physio.HCO3, physio.SaO2}[:n]
-	best := impossible
-	for _, kpa := range []bool{false, true} {
-		a := r.assign(&behind, usual, kpa)
-		if o2 := a.v.Val(physio.PaO2); o2 < 40 && r.sample().Blood == "" {
-			a.cost += plausibleDoubt // the PaO2 of venous blood, which nothing says
-		}
-		best = min(best, a.cost)
-	}
-	return best
 }
 
 // meantAsGas says that values of which no order fits are asked about all the
@@ -277,7 +229,7 @@ func (r *reader) useAssignment(c *looseChain, a *assignment) {
 			continue
 		}
 		raw := &rawValue{v: r.valueAt(i), labelled: true, decimals: r.t[i].decimals, typed: r.t[i].s, at: i}
-		if a.kpa && q != physio.HCO3 {
+		if a.kpa && q != physio.HCO3 && q != physio.BE {
 			raw.unit = uKPa
 		}
 		r.raw[q] = raw

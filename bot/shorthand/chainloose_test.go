@@ -18,6 +18,12 @@ var looseLines = []lineTest{
 	{"K", "5.3/7.40/12.7/24", "ph=7.4 paco2=39.75 pao2=95.26 hco3=24 !order_read:ph:=7.4"},
 	{"Q", "40/7.40/95/24", "ph=7.4 paco2=40 pao2=95 hco3=24 !order_read:ph:=7.4"},
 	{"Q", "95/40/7.40", "ph=7.4 paco2=40 pao2=95 !order_read:ph:=7.4"},
+	{"", "40 7.4 95 24", "ph=7.4 paco2=40 pao2=95 hco3=24 !order_read:ph:=7.4"},
+	{"K", "5.3/7.4/12.7", "ph=7.4 paco2=39.75 pao2=95.26 !order_read:ph:=7.4"},
+	{"K", "7.38/5.3/7.4/23", "ph=7.38 paco2=39.75 pao2=55.5 hco3=23"},
+	{"", "40-7.40-95-24", "ph=7.4 paco2=40 pao2=95 hco3=24 !order_read:ph:=7.4"},
+	{"", "40/7.40/95/-2", "ph=7.4 paco2=40 pao2=95 be=-2 !order_read:ph:=7.4"},
+	{"", "co2 40 po2 95 7.40", "ph=7.4 paco2=40 pao2=95"},
 	// two orders fit: both are offered
 	{"", "62/58/7.28", "ph=7.28 ?order[PaCO2 62, PaO2 58|PaO2 62, PaCO2 58]"},
 	{"", "58 7.28 62 27 40%", "ph=7.28 fio2=0.4 ?order[PaCO2 58, PaO2 62, HCO3 27|PaO2 58, PaCO2 62, HCO3 27]"},

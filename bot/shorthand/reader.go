@@ -56,6 +56,7 @@ func readGas(t []token, h Habits, o segment) Gas {
 	r.chain()
 	r.onTheOxygen()
 	r.labelsBehind()
+	r.phBesideLabels()
 	r.signedPEEP()
 	r.readOxygen()
 	r.settle()

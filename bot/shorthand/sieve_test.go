@@ -31,7 +31,7 @@ func TestSievesLetEveryMatchThrough(t *testing.T) {
 			t.Fatal(err)
 		}
 		matched := 0
-		for range 2000 {
+		for range 600 {
 			var b strings.Builder
 			write(&b, tree, rng)
 			for _, text := range []string{b.String(), "see " + b.String() + " 7.28/58/62/27 40%"} {
@@ -41,7 +41,7 @@ func TestSievesLetEveryMatchThrough(t *testing.T) {
 				letThrough(t, s, text)
 			}
 		}
-		if matched < 10 {
+		if matched < 3 {
 			t.Errorf("%.40s: only %d texts matched", s.re, matched)
 		}
 	}

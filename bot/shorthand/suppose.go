@@ -9,10 +9,10 @@ import (
 
 var (
 	// leadsSuppose are words that lead a what-if of a thread: "and at co2 50?".
-	leadsSuppose = sift(`^\s*(?:(?:and|so|then|but|ok|okay|hmm|now|or)[ ,]+)*(?:at|with|if|on|say|saying|assuming|assume|for|supposing|imagine|in case|what about|how about|what with|what at|let'?s say|were|would|could|can (?:we|i|you)|maybe|perhaps|try|trying)\b`)
+	leadsSuppose = sift(`^\s*(?:(?:and|so|then|but|ok|okay|hmm|now|or)[ ,]+)*(?:at|with|if|on|what if|say|saying|assuming|assume|for|supposing|imagine|in case|what about|how about|what with|what at|let'?s say|were|would|could|can (?:we|i|you)|maybe|perhaps|try|trying)\b`)
 	// ifAlone is an if that asks for no other value by name.
-	ifAlone   = sift(`^\s*(?:(?:and|so|then|but|ok|okay|hmm|or)[ ,]+)*(?:if|say|assuming|supposing|imagine)\b`)
-	asksValue = sift(`\b(what|whats|which|how)\b`)
+	ifAlone   = sift(`^\s*(?:(?:and|so|then|but|ok|okay|hmm|or)[ ,]+)*(?:if|what if|say|assuming|supposing|imagine)\b`)
+	asksValue = sift(`\bwhats\b|\b(what|which|how)\b(?: +(?:$|[^ai ]|a[^b]|i[^f]))`)
 )
 
 // supposes says that a line of a thread, without a gas of its own, asks what
@@ -30,7 +30,10 @@ func (p *parser) supposes(s string, g *grams, t []token) bool {
 		return false
 	}
 	v := p.clauseValues(t)
-	if v.Empty() || p.answersOxygen(&v) {
+	if v.Empty() {
+		return led && asks && wasBlood.in(s, g) // "and if it was venous?"
+	}
+	if p.answersOxygen(&v) {
 		return false
 	}
 	return led || bareValue(t) && (p.differs(&v) || setByStaff(&v))

@@ -31,6 +31,9 @@ func TestSupposeInAThread(t *testing.T) {
 		{earlier, "co2 50?", ":suppose change{paco2=50}"},
 		{earlier, "co2 was 50?", ":suppose change{paco2=50}"},
 		{earlier, "7.30/52/70/25 45%, and at co2 45?", ":suppose change{paco2=45} ph=7.3 paco2=52 pao2=70 hco3=25 fio2=0.45"},
+		{earlier, "what if co2 52", ":suppose change{paco2=52}"},
+		{earlier, "rate 26 instead?", ":suppose change{rr=26}"},
+		{earlier, "and if it was venous?", ":suppose"},
 		// what is said stays said
 		{earlier, "co2 50 now", "paco2=50 follow:1"},
 		{earlier, "sorry co2 was 50", "paco2=50 follow:3"},

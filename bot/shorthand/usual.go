@@ -23,7 +23,10 @@ func (r *reader) usualWord(i int) bool {
 		return r.t[i].kind == tokWord
 	case "normal":
 		own := i > 0 && (r.t[i-1].word("his") || r.t[i-1].word("her") || r.t[i-1].word("their"))
-		return own || i+1 < len(r.t) && r.t[i+1].word("for")
+		for j := i + 1; j < len(r.t) && j <= i+3 && !own; j++ {
+			own = r.t[j].word("for")
+		}
+		return own
 	}
 	return false
 }
@@ -79,7 +82,7 @@ func (r *reader) usualBehind(i int) {
 	}
 	_, n := r.unitAfter(j)
 	next := j + n + 1
-	if next < len(r.t) && (r.t[next].word("at") || r.t[next].word("is")) {
+	for next < len(r.t) && (r.t[next].is(senseFiller) || r.verbOfState(next)) {
 		next++
 	}
 	if !usual && next < len(r.t) && next == r.lastUsual(next) {
@@ -93,7 +96,7 @@ func (r *reader) usualBehind(i int) {
 // lastUsual gives next when a word of a usual state ends the clause there.
 func (r *reader) lastUsual(next int) int {
 	switch r.t[next].s {
-	case "usually", "normally", "chronically", "habitually", "baseline":
+	case "usually", "normally", "chronically", "habitually", "baseline", "usual", "normal":
 		if next+1 >= len(r.t) || r.t[next+1].sep(",.;)\n") {
 			return next
 		}

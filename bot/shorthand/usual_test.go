@@ -18,6 +18,9 @@ var usualLines = []lineTest{
 	{"", "7.30/66/58/32 28% baseline co2 7.6 kPa", "ph=7.3 paco2=66 pao2=58 hco3=32 fio2=0.28 usual:57"},
 	{"K", "7.30/8.8/7.7/32 28% usual co2 7.6", "ph=7.3 paco2=66.01 pao2=57.75 hco3=32 fio2=0.28 usual:57"},
 	{"T", "usual co2 60", "follow:2 usual:60"},
+	{"", "7.30/66/58/32 28% co2 55 is his baseline", "ph=7.3 paco2=66 pao2=58 hco3=32 fio2=0.28 sex:m usual:55"},
+	{"", "co2 66 (usual 58) spo2 88", "paco2=66 spo2=0.88 usual:58"},
+	{"", "normally on 2L, now 28% venti 7.30/66/58/32", "ph=7.3 paco2=66 pao2=58 hco3=32 fio2=0.28 on:venturi"},
 	// other usual values are not of today either, and other words stay
 	{"", "7.30/66/58/32 28% baseline sats 88-90", "ph=7.3 paco2=66 pao2=58 hco3=32 fio2=0.28"},
 	{"", "7.30/66/58/32 baseline bicarb 30 28%", "ph=7.3 paco2=66 pao2=58 hco3=32 fio2=0.28"},

@@ -42,7 +42,10 @@ var bodyLines = []lineTest{
 	{"", "PCO2 55", "paco2=55"},
 	{"", "pao2 60", "pao2=60"},
 	{"K", "pco2 7.3", "paco2=54.75"},
-	{"Q", "PCO2 55", "silence"},
+	{"Q", "PCO2 55", "paco2=55"},
+	{"Q", "pao2 60 mmHg", "pao2=60"},
+	{"Q", "co2 55 in the tank", "silence"},
+	{"Q", "pco2 cable 2", "silence"},
 }
 
 func TestBody(t *testing.T) { runLines(t, bodyLines) }

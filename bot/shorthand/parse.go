@@ -57,6 +57,8 @@ type parser struct {
 	grams grams  // of typed
 	line  Line
 	mixed bool
+	// pressuresOnly says that the whole message is labelled gas pressures.
+	pressuresOnly bool
 }
 
 func (p *parser) parse() Line {
@@ -101,6 +103,7 @@ func (p *parser) read() {
 		t = rest
 	}
 	claims := p.line.Intent == IntentCheck
+	p.pressuresOnly = pressuresOnly(t)
 	parts, list := split(t)
 	parts = parts[:min(len(parts), mostGases)]
 	p.line.List = list
@@ -222,7 +225,7 @@ func (p *parser) worth(g *Gas) bool {
 	case p.h.Addressed:
 		return said || g.Follow == FollowCorrection && s.Blood != "" || s.Device == physio.Air
 	}
-	return together(s)
+	return together(s) || p.pressuresOnly && (s.Has(physio.PaCO2) || s.Has(physio.PaO2))
 }
 
 // part says that another value of a gas stands beside the pH.

@@ -15,7 +15,7 @@ func (p *parser) released() (*Choice, bool) {
 		return nil, false
 	}
 	said := plainWord(p.typed[lead(p.typed):])
-	if said == "" || len(strings.Fields(said)) > 5 {
+	if said == "" || len(strings.Fields(said)) > 8 {
 		return nil, false
 	}
 	for i := range q.Choices {

@@ -86,6 +86,23 @@ func setByStaff(v *physio.Values) bool {
 	return all
 }
 
+// pressuresOnly says that a line is nothing but gas pressures under their full
+// names, "PCO2 55": nobody chats so.
+func pressuresOnly(t []token) bool {
+	named := false
+	for i := range t {
+		if !t[i].is(senseLabel) {
+			continue
+		}
+		core := t[i].e.q == physio.PaCO2 || t[i].e.q == physio.PaO2
+		if !core || !strings.HasPrefix(t[i].s, "p") {
+			return false
+		}
+		named = true
+	}
+	return named && bareValue(t)
+}
+
 // joins says that a word may stand beside a bare what-if: "and co2 45?", "rate
 // 28 instead?".
 func joins(w string) bool {

@@ -149,7 +149,7 @@ func (t *turn) houseResult(rev memory.Revision, err error) {
 	case errors.As(err, &clash):
 		t.houseSays(clashWords(clash))
 	case errors.As(err, &problems), errors.Is(err, memory.ErrNoRevision), errors.Is(err, memory.ErrBusy):
-		t.houseSays(upperFirst(err.Error()) + ". Nothing was changed.")
+		t.houseSays(upperFirst(strings.ReplaceAll(err.Error(), "\n", "; ")) + ". Nothing was changed.")
 	case errors.Is(err, memory.ErrUncertain):
 		t.houseSays("The store broke off: whether the rule is stored is not known. Type house to see.")
 	case errors.Is(err, store.ErrFull):
@@ -183,7 +183,7 @@ func (t *turn) houseStored(rev memory.Revision, oneServer bool) {
 
 func orDefault(text string, rule houseRule) string {
 	if text == "" {
-		return upperFirst(rule.names[0]) + ": not set."
+		return strings.Replace(upperFirst(rule.names[0]), "Co2", "CO2", 1) + ": not set."
 	}
 	return text
 }

@@ -69,7 +69,7 @@ var houseRules = []houseRule{
 	{"zone", []string{"zone", "time zone"}, parseZone, nil, func(h memory.House) string {
 		return ifText(h.Zone, "Time zone: "+h.Zone+".")
 	}},
-	{"shift_ends", []string{"shift ends", "shift"}, parseText, nil, func(h memory.House) string {
+	{"shift_ends", []string{"shift ends", "shift"}, parseTimes, nil, func(h memory.House) string {
 		return ifText(strings.Join(h.ShiftEnds, ", "), "Shifts end at "+strings.Join(h.ShiftEnds, ", ")+".")
 	}},
 	{"words", []string{"word", "words"}, parseWord, mergeWord, showWords},
@@ -150,7 +150,7 @@ func findRule(words []string) (houseRule, string, bool) {
 		return houseRule{}, "", false
 	}
 	value := strings.TrimLeft(line[length:], " :")
-	for _, filler := range []string{"is ", "= ", "to ", "at "} {
+	for _, filler := range []string{"is ", "are ", "= ", "to ", "at "} {
 		value = strings.TrimPrefix(value, filler)
 	}
 	return houseRules[best], value, true
@@ -173,6 +173,14 @@ func parseText(value string) (any, error) {
 		return nil, fmt.Errorf("a value is missing. Example: house units kPa")
 	}
 	return value, nil
+}
+
+// parseTimes reads "07:00 19:00", also with a word between.
+func parseTimes(value string) (any, error) {
+	if value == "" {
+		return nil, fmt.Errorf("clock times are expected. Example: house shift 07:00 19:00")
+	}
+	return parseText(strings.ReplaceAll(value, " and ", " "))
 }
 
 func parseSpan(value string) (any, error) {
@@ -201,6 +209,9 @@ func parseZone(value string) (any, error) {
 	if off(value) {
 		return nil, nil
 	}
+	if value == "" {
+		return nil, fmt.Errorf("a time zone is expected by its place. Example: house zone Europe/London")
+	}
 	if strings.EqualFold(value, "utc") {
 		return "UTC", nil
 	}
@@ -226,6 +237,9 @@ func parseOrder(value string) (any, error) {
 			return nil, fmt.Errorf("%q names no value. Example: house order ph co2 o2 hco3 sat", w)
 		}
 		keys = append(keys, q.Key())
+	}
+	if len(keys) == 0 {
+		return nil, fmt.Errorf("the names of the values are expected. Example: house order ph co2 o2 hco3 sat")
 	}
 	return keys, nil
 }

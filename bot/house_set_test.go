@@ -57,6 +57,13 @@ var houseSettings = []struct {
 	{"a word", []string{"house word npo2 means nasal cannula 2 L"}, []string{"Stored as revision 1", "npo2 = nasal cannula 2 l"}, []string{"Then type"}},
 	{"a word said in a sentence", []string{"npo2 means nasal cannula 2 L"}, []string{"Then type: house word npo2"}, []string{"Stored"}},
 	{"a zone", []string{"house zone europe/london"}, []string{"Time zone: Europe/London."}, nil},
+	{"no zone", []string{"house zone europe/london", "house zone"}, []string{"A time zone is expected"}, []string{"Stored"}},
+	{"shifts", []string{"house zone utc", "house shift 7:00 and 19:00"}, []string{"Shifts end at 07:00, 19:00."}, nil},
+	{"two problems, one line", []string{"house shift 7:00 25:00"}, []string{"need one; shift_ends: read"}, []string{"Stored", "\n"}},
+	{"no order", []string{"house order"}, []string{"The names of the values are expected"}, []string{"Stored"}},
+	{"a target of CO2 taken away", []string{"house co2 target 45-55", "house co2 target off"}, []string{"CO2 target: not set."}, nil},
+	{"a word about the word", []string{"house patients are preterm"}, []string{"Population: preterm."}, nil},
+	{"a colon", []string{"house units: kPa"}, []string{"typed and shown in kPa."}, nil},
 	{"the rules by name", []string{"house rules"}, []string{"House rules, revision 0"}, nil},
 }
 

@@ -310,11 +310,11 @@ func TestCriteriaAreNotDiagnoses(t *testing.T) {
 		what, got, want string
 	}{
 		{"no pressure", met(abg(95, 0.6)), ""},
-		{"P/F 158 at PEEP 8", met(abg(95, 0.6, physio.PEEP, 8)), "Berlin 2012: P/F 101-200 at PEEP 5 or more (band: moderate)\n"},
-		{"P/F 100 at PEEP 5", met(abg(60, 0.6, physio.PEEP, 5)), "Berlin 2012: P/F 100 or below at PEEP 5 or more (band: severe)\n"},
-		{"P/F 280 at CPAP 6", met(abg(84, 0.3, physio.CPAP, 6)), "Berlin 2012: P/F 201-300 at PEEP 5 or more (band: mild)\n"},
+		{"P/F 158 at PEEP 8", met(abg(95, 0.6, physio.PEEP, 8)), "Berlin 2012: P/F 101-200 mmHg at PEEP 5 cmH2O or more (band: moderate)\n"},
+		{"P/F 100 at PEEP 5", met(abg(60, 0.6, physio.PEEP, 5)), "Berlin 2012: P/F 100 mmHg or below at PEEP 5 cmH2O or more (band: severe)\n"},
+		{"P/F 280 at CPAP 6", met(abg(84, 0.3, physio.CPAP, 6)), "Berlin 2012: P/F 201-300 mmHg at PEEP 5 cmH2O or more (band: mild)\n"},
 		{"P/F 300.1", met(abg(120.04, 0.4, physio.PEEP, 5)), ""},
-		{"high flow", met(high), "global definition 2024: P/F 300 or below on high flow of 30 L/min or more\n"},
+		{"high flow", met(high), "global definition 2024: P/F 300 mmHg or below on high flow of 30 L/min or more\n"},
 		{"a child with OI 15", met(child), "PALICC 2015: OI in the band moderate\n"}, // 100 x 0.6 x 15 / 60
 	} {
 		if c.got != c.want {

@@ -44,7 +44,7 @@ func adultCriteria(a *Assessment) []Criterion {
 	if sf, ok := a.Index("sf"); ok && supported && sf.Value <= sfAbnormal {
 		out = append(out, Criterion{"global definition 2024", "S/F 315 or below with SpO2 up to 97 %", openARDS})
 	} else if pf, ok := a.Index("pf"); ok && supported && pressure < berlinPEEP && pf.Value <= pfAbnormal {
-		out = append(out, Criterion{"global definition 2024", "P/F 300 or below on high flow of 30 L/min or more", openARDS})
+		out = append(out, Criterion{"global definition 2024", "P/F 300 mmHg or below on high flow of 30 L/min or more", openARDS})
 	}
 	return out
 }
@@ -52,11 +52,11 @@ func adultCriteria(a *Assessment) []Criterion {
 func berlinBand(pf float64) string {
 	switch {
 	case pf <= berlinSevere:
-		return "P/F 100 or below at PEEP 5 or more (band: severe)"
+		return "P/F 100 mmHg or below at PEEP 5 cmH2O or more (band: severe)"
 	case pf <= pfPoor:
-		return "P/F 101-200 at PEEP 5 or more (band: moderate)"
+		return "P/F 101-200 mmHg at PEEP 5 cmH2O or more (band: moderate)"
 	}
-	return "P/F 201-300 at PEEP 5 or more (band: mild)"
+	return "P/F 201-300 mmHg at PEEP 5 cmH2O or more (band: mild)"
 }
 
 func paediatricCriteria(a *Assessment) []Criterion {
@@ -92,7 +92,7 @@ func nasalCriteria(a *Assessment) []Criterion {
 		return nil
 	}
 	if pf, ok := a.Index("pf"); ok && pf.Value <= pfAbnormal {
-		return []Criterion{{"PALICC-2 2023", "P/F 300 or below on high flow (possible, on nasal support)", openPARDS}}
+		return []Criterion{{"PALICC-2 2023", "P/F 300 mmHg or below on high flow (possible, on nasal support)", openPARDS}}
 	}
 	if sf, ok := a.Index("sf"); ok && sf.Value <= paliccNasalSF {
 		return []Criterion{{"PALICC-2 2023", "S/F 250 or below with SpO2 up to 97 % on high flow (possible, on nasal support)", openPARDS}}

@@ -215,7 +215,7 @@ func TestPaediatricCriteria(t *testing.T) {
 	sf := func(s, flow float64) string {
 		return met(physio.HighFlow, physio.SpO2, s, physio.FiO2, 0.38, physio.OxygenFlow, flow)
 	}
-	const nasalPF = "PALICC-2 2023 P/F 300 or below on high flow (possible, on nasal support)"
+	const nasalPF = "PALICC-2 2023 P/F 300 mmHg or below on high flow (possible, on nasal support)"
 	const nasalSF = "PALICC-2 2023 S/F 250 or below with SpO2 up to 97 % on high flow (possible, on nasal support)"
 	band := func(name, b string) string { return "PALICC 2015 " + name + " in the band " + b }
 	for _, c := range []struct{ what, got, want string }{

@@ -27,6 +27,7 @@ var bodyLines = []lineTest{
 	{"", "hfnc 2 l/kg/min 40% spo2 94 7 kg", "spo2=0.94 fio2=0.4 flow=14 weight=7 on:high_flow !flow_per_kg:flow:2=14"},
 	{"", "hfnc 1.5L/kg 35% spo2 93 wt 4", "spo2=0.93 fio2=0.35 flow=6 weight=4 on:high_flow !flow_per_kg:flow:1.5=6"},
 	{"", "hfnc 2 L/kg 40% 7.35/45/70/24", "ph=7.35 paco2=45 pao2=70 hco3=24 fio2=0.4 on:high_flow ?flow_per_kg[]"},
+	{"", "7.28/58/62/27 170 m", "ph=7.28 paco2=58 pao2=62 hco3=27 height=170 sex:m !bare_height:height:170=170"},
 	{"", "72 male 7.28/58/62/27 40%", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.4 age=72 sex:m"},
 	{"", "7.28/58/62/27 64 m", "ph=7.28 paco2=58 pao2=62 hco3=27 age=64 sex:m"},
 	{"", "7.28/58/62/27 72 female 2L", "ph=7.28 paco2=58 pao2=62 hco3=27 flow=2 age=72 taken:cannula sex:f !cannula_taken:flow:2=2"},

@@ -48,6 +48,9 @@ func (r *reader) looseGas() bool {
 	all := r.assignments(&c)
 	var good []assignment
 	for _, a := range all {
+		if !r.h.Addressed && !r.overheard(&c, &a) {
+			continue
+		}
 		if a.cost < plausibleDoubt && a.cost-all[0].cost < sameDoubt {
 			good = append(good, a)
 		}
@@ -63,6 +66,12 @@ func (r *reader) looseGas() bool {
 		r.askOrder(&c, good)
 	}
 	return true
+}
+
+// overheard says that numbers of a message that was not meant for the bot can
+// be a gas: in the house's unit, and tied by slashes or checked by bicarbonate.
+func (r *reader) overheard(c *looseChain, a *assignment) bool {
+	return a.kpa == (r.h.Units == KPa) && (c.tied || len(c.others) >= 3 && a.v.Has(physio.HCO3))
 }
 
 // findLoose finds the chain, unless the pH stands where the house has it.
@@ -197,7 +206,7 @@ func (r *reader) meantAsGas(c *looseChain) bool {
 		return true
 	}
 	for _, i := range c.others {
-		if v := r.valueAt(i); v < 10 || v > 150 {
+		if v := r.valueAt(i); v < 15 || v > 150 {
 			return false
 		}
 	}

@@ -102,7 +102,7 @@ func (r *reader) heightBesideSex() {
 			continue
 		}
 		for _, j := range []int{i + 1, i + 2, i - 1} {
-			if !r.bareHeight(j) || j < i && len(s.s) == 1 || j > i+1 && !r.t[i+1].sep(",:") {
+			if !r.bareHeight(j) || j > i+1 && !r.t[i+1].sep(",:") {
 				continue
 			}
 			r.take(j, 0)

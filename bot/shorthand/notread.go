@@ -32,6 +32,8 @@ func (r *reader) owned(i int) bool {
 		switch t := &r.t[j]; {
 		case t.is(senseLabel), t.is(senseDevice), t.is(senseUnit), t.kind == tokClock, t.sep(";.|)\n"):
 			return false
+		case t.word("m"), t.word("f"), t.kind == tokWord && t.e != nil && t.e.sex != "":
+			return false
 		case t.kind == tokWord && !t.is(senseFiller) && !t.word("after") && !t.word("before"):
 			return true // "propofol 20", "day 3": the word's own number
 		case t.kind == tokNumber && !t.taken:
@@ -49,6 +51,8 @@ func (r *reader) unknownBehind(i int) bool {
 	}
 	t := &r.t[i+1]
 	switch {
+	case t.word("m"), t.word("f"):
+		return false
 	case t.word("after"), t.word("before"), t.word("now"), t.word("then"):
 		return false
 	case t.e == nil, t.e.sense == senseWord, t.e.sense == senseSwallow, t.e.sense == senseTime, t.e.sense == senseUnit:

@@ -11,6 +11,7 @@ func TestNotRead(t *testing.T) {
 		{"", "7.28/58/62/27 40% spo2 91 93", "ph=7.28 paco2=58 pao2=62 hco3=27 spo2=0.91 fio2=0.4 !not_read:ph:93=93"},
 		{"", "12/7.28/58/62/27 40%", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.4 !not_read:ph:12=12"},
 		{"", "7.28/58/62/27 40% peep 5 or 8", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.4 !not_read:peep:5=5 !not_read:peep:8=8"},
+		{"", "male 30 7.40/40/95/24 ra", "ph=7.4 paco2=40 pao2=95 hco3=24 fio2=0.21 on:air sex:m !not_read:ph:30=30"},
 		{"", "7.28/58/62/27 40% 12/3", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.4"},
 		{"", "7.28/58/62/27 40% 1430 bed 4", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.4 bed:4 at:14:30"},
 		{"", "7.28/58/62/27 40% ett 7.5 @22", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.4"},

@@ -53,6 +53,8 @@ func (r *reader) usualAt(i int) {
 		r.keepUsual(j, label)
 	case label >= 0:
 		r.otherUsual(i, j, label)
+	case r.t[j].percent && r.t[j].v >= 70 && len(coreStarts(r.t)) > 0:
+		r.t[j].taken = true // "baseline 92%": a saturation, and not of today
 	case r.bareUsual(i, j):
 		r.keepUsual(j, -1)
 	}

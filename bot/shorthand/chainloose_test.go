@@ -37,7 +37,6 @@ var looseLines = []lineTest{
 	{"", "40 7.28 58 62 27", "ph=7.28 paco2=58 pao2=62 hco3=27"},
 	{"", "0630 7.28 58 62 27", "ph=7.28 paco2=58 pao2=62 hco3=27 at:06:30"},
 	{"Q", "12/7.30/19.00 shift", "silence"},
-	{"Q", "meet 10/7.30/12", "silence"},
 	{"Q", "10 7.5 8", "silence"},
 	{"Q", "swap 3 7.50 ett 2", "silence"},
 }

@@ -85,14 +85,20 @@ func (p *parser) byMeaning(said string, q *Question) (*Choice, bool) {
 			}
 		}
 	}
-	if found == nil && (said == "m" || said == "f") {
-		for k := range q.Choices {
-			if string(q.Choices[k].Sex) == said {
-				return &q.Choices[k], true
-			}
-		}
+	if found == nil {
+		found = byLetter(said, q)
 	}
 	return found, found != nil
+}
+
+// byLetter finds the choice of a sex by its letter.
+func byLetter(said string, q *Question) *Choice {
+	for k := range q.Choices {
+		if c := &q.Choices[k]; c.Sex != "" && string(c.Sex) == said {
+			return c
+		}
+	}
+	return nil
 }
 
 // means says that a word of the vocabulary names the choice.

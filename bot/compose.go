@@ -211,6 +211,8 @@ func (c *composer) highHead(answersAlkalosis bool) string {
 		return "CO2 high, fits alkalosis"
 	case c.a.Ventilation.Floor:
 		return "CO2 high (EtCO2)"
+	case c.a.Ventilation.Borderline:
+		return "CO2 borderline high"
 	case c.a.AcidBase.Course == physio.Acute:
 		return "CO2 high, acute"
 	case c.a.AcidBase.Course == physio.Chronic:
@@ -258,6 +260,9 @@ func (c *composer) oxygenHead() string {
 	}
 	if c.a.Raised(physio.CautionAboveRetainer) {
 		return "above 88-92"
+	}
+	if o.InsideUsual {
+		return "inside 88-92"
 	}
 	if c.a.Raised(physio.CautionHighO2Preterm) {
 		return "above range"

@@ -111,9 +111,13 @@ func (c *composer) itemLine() string {
 	return line
 }
 
-// weight orders a list of beds: critical first, then both axes, then one.
+// weight orders a list of beds: critical values first, then a level that is
+// critically low, then both axes, then one, then what can not be told.
 func (c *composer) weight() int {
 	w := 10 * len(c.a.Critical)
+	if c.a.Oxygenation.Level == physio.DegreeSevere || c.levelWord() == "critically low" {
+		w += 5
+	}
 	switch c.a.Problem {
 	case physio.ProblemBoth:
 		w += 4
@@ -137,7 +141,7 @@ func countWords(cs []*composer) string {
 		word    string
 	}{
 		{physio.ProblemBoth, "both"}, {physio.ProblemVentilation, "CO2"},
-		{physio.ProblemOxygenation, "O2"}, {physio.ProblemNone, "neither"}, {physio.ProblemUndetermined, "open"},
+		{physio.ProblemOxygenation, "O2"}, {physio.ProblemNone, "neither"}, {physio.ProblemUndetermined, "unclear"},
 	} {
 		if n := counts[p.problem]; n > 0 {
 			if !strings.HasSuffix(text, ":") {

@@ -86,6 +86,9 @@ func (c *composer) oxygenWords() string {
 	if above := c.aboveUsual(); above != "" {
 		return "above the " + above
 	}
+	if o.InsideUsual {
+		return "inside the 88-92 % usual in CO2 retainers"
+	}
 	word := c.levelWord()
 	if pao2, ok := c.gas.Sample.Get(physio.PaO2); ok && c.oxygenUnsaid() && o.Scale == physio.DegreeMild {
 		return "PaO2 " + c.n.about(pao2) + " is low on air, borderline on oxygen"
@@ -249,7 +252,7 @@ func (c *composer) transferPhrase() string {
 func (c *composer) healthyAtPaCO2() string {
 	h := c.a.Oxygenation.HealthyPaO2
 	p, ok := c.gas.Sample.Get(physio.PaCO2)
-	if !ok || h.Value <= 0 || p <= physio.SaidHealthyPaCO2 || !c.gas.Sample.Has(physio.PaO2) {
+	if !ok || h.Value <= 0 || p <= physio.SaidHealthyPaCO2 || c.gas.Sample.Val(physio.PaO2) == 0 || c.gas.Sample.Val(physio.PaO2) >= h.Low {
 		return ""
 	}
 	return "A healthy lung at this PaCO2: PaO2 about " + c.n.about(h.Value) + "."

@@ -84,8 +84,8 @@ func (c *composer) retainerWhy() string {
 	case s.Has(physio.COPD):
 		return "COPD"
 	case s.Has(physio.Retainer):
-		return "a known CO2 retainer"
-	case c.a.Triple.HCO3 > 28:
+		return "a cause of CO2 retention"
+	case c.a.Triple.HCO3 > physio.RaisedHCO3:
 		return "raised HCO3"
 	}
 	return "raised PaCO2"

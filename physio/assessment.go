@@ -111,6 +111,9 @@ type Oxygenation struct {
 	Target        *Target
 	AgainstTarget Against
 	ExpectedHere  bool
+	// InsideUsual is true on oxygen, with no target set, where the saturation is
+	// inside the 88-92 % usual in a CO2 retainer (O'Driscoll 2017).
+	InsideUsual bool
 	// Saturation is the one that is compared: measured, at this pH from the
 	// PaO2, or by oximeter.
 	Saturation       Interval

@@ -141,6 +141,7 @@ func (sc *scene) oxygenation() {
 	if sc.lungO2 && sc.v.Has(PaO2) {
 		o.ExpectedHere = sc.expectedHere()
 	}
+	o.InsideUsual = sc.insideRetainer()
 	sc.oxygenationEfficiency()
 	if o.Level != DegreeUnknown && !sc.a.Oxygen.Known {
 		sc.lack(FiO2, "oxygenation")
@@ -154,7 +155,7 @@ func (sc *scene) onUnknownOxygen() bool {
 	}
 	switch sc.s.Device {
 	case DeviceUnstated, Air:
-		return sc.s.Circumstance.Has(BledInOxygen)
+		return sc.s.Circumstance.Has(BledInOxygen) || sc.v.Val(OxygenFlow) > 0
 	}
 	return true
 }

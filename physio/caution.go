@@ -91,14 +91,14 @@ var triggers = []trigger{
 	{CautionHyperbaric, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(Hyperbaric) || sc.s.Device == Chamber }, nil},
 	{CautionCyanotic, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(CyanoticHeart) }, nil},
 	{CautionAsthma, Major, (*scene).asthmaNotLow, nil},
-	{CautionBrain, Major, (*scene).brainCO2, nil},
+	{CautionHyperoxia, Major, func(sc *scene) bool { return sc.veryHighPaO2() && sc.brainAtRisk() }, nil},
+	{CautionBrain, Major, (*scene).brainCO2, []CautionCode{CautionHyperoxia}},
 	{CautionLowCO2Newborn, Major, (*scene).lowCO2Newborn, nil},
 	{CautionHighO2Preterm, Major, (*scene).highO2Preterm, nil},
 	{CautionAboveRetainer, Major, (*scene).aboveRetainer, nil},
 	{CautionHidden, Major, (*scene).hidden, nil},
 	{CautionCapillary, Major, func(sc *scene) bool { return sc.a.Blood == Capillary && sc.s.Site != Earlobe }, nil},
 	{CautionHeliox, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(Heliox) }, nil},
-	{CautionHyperoxia, Major, func(sc *scene) bool { return sc.veryHighPaO2() && sc.brainAtRisk() }, nil},
 	{CautionNotSteady, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(JustChanged) }, nil},
 	{CautionShort, Minor, func(sc *scene) bool { return sc.a.Ventilation.Level == LevelShortForNeed }, nil},
 	{CautionEarlobe, Minor, func(sc *scene) bool { return sc.a.Blood == Capillary && sc.s.Site == Earlobe }, nil},
@@ -278,15 +278,29 @@ func (sc *scene) retainer() bool {
 		return false
 	}
 	chronic := d.HCO3 > raisedHCO3 && d.PH <= sc.a.Ranges.PHHigh
-	return above(d.PaCO2, sc.a.Ranges.PaCO2High) && sc.a.AcidBase.Primary == RespiratoryAcidosis || chronic
+	return above(d.PaCO2, max(sc.a.Ranges.PaCO2High, retainerPaCO2)) && sc.a.AcidBase.Primary == RespiratoryAcidosis || chronic
+}
+
+// retainerOnOxygen: on oxygen, and a CO2 retainer by word or by a raised
+// bicarbonate that took days.
+func (sc *scene) retainerOnOxygen() bool {
+	word := sc.s.Circumstance.Has(COPD) || sc.s.Circumstance.Has(Retainer)
+	course := sc.a.AcidBase.Course
+	raised := sc.a.Triple.HCO3 > raisedHCO3 && sc.a.AcidBase.Primary == RespiratoryAcidosis && (course == Chronic || course == AcuteOnChronic)
+	return sc.retainer() && (word || raised) && sc.a.Oxygenation.OnOxygen
+}
+
+// insideRetainer asks for the word: numbers alone must not call a low
+// saturation usual.
+func (sc *scene) insideRetainer() bool {
+	sat := whole(sc.a.Oxygenation.Saturation.Value)
+	word := sc.s.Circumstance.Has(COPD) || sc.s.Circumstance.Has(Retainer)
+	return sc.set.Target == nil && word && sc.retainerOnOxygen() && sat >= whole(retainerTargetLow) && sat <= whole(retainerTargetHigh)
 }
 
 func (sc *scene) aboveRetainer() bool {
 	o := sc.a.Oxygenation
-	word := sc.s.Circumstance.Has(COPD) || sc.s.Circumstance.Has(Retainer)
-	course := sc.a.AcidBase.Course
-	raised := sc.a.Triple.HCO3 > raisedHCO3 && sc.a.AcidBase.Primary == RespiratoryAcidosis && (course == Chronic || course == AcuteOnChronic)
-	if !sc.retainer() || !word && !raised || !o.OnOxygen {
+	if !sc.retainerOnOxygen() {
 		return false
 	}
 	limit := retainerTargetHigh

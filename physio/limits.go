@@ -157,6 +157,7 @@ const (
 const (
 	highPaO2        = 150.0 // mmHg on oxygen: above any usual target, our bound
 	altitudeExcess  = 30.0  // mmHg of A-a beyond its band: more than an unsaid altitude of a hospital makes
+	retainerPaCO2   = 45.0  // mmHg: above it a retainer's target is named, whatever the altitude (O'Driscoll 2017)
 	raisedHCO3      = 28.0  // mmol/L: above it a chronic retention is thought of, common practice
 	flatPaO2        = 80.0  // mmHg: the curve is flat above
 	temperatureSaid = 2.0   // C away from 37: PCO2 moves by more than 9 %

@@ -33,6 +33,9 @@ const (
 	// SpO2Ceiling, a fraction: above it SpO2 does not grade the lung (Matthay
 	// 2024).
 	SpO2Ceiling = spo2Ceiling
+	// RaisedHCO3, mmol/L: above it a chronic retention is thought of (common
+	// practice).
+	RaisedHCO3 = raisedHCO3
 	// SmallestChange, mmHg of PaCO2: a smaller step has no next pH worth
 	// telling; it would lie inside the spread of repeat samples.
 	SmallestChange = 3.0

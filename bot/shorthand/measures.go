@@ -161,10 +161,10 @@ func (r *reader) byUnit(i int, u string, n int) {
 	switch u {
 	case uTime:
 		r.duration(i, n)
-	case uYear, uMonth, uDay:
+	case uYear:
 		r.age(i, u, n)
-	case uWeek:
-		r.weeks(i, n)
+	case uMonth, uDay, uWeek:
+		r.daysToMonths(i, u, n)
 	case uKg, uPound:
 		if !s.Has(physio.Weight) {
 			r.store(physio.Weight, i, u, n)

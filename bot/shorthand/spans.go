@@ -1,0 +1,151 @@
+package shorthand
+
+import (
+	"strings"
+
+	"galeward/physio"
+)
+
+// spanIsAge says that days, weeks or months are somebody's age and not how
+// long something lasts: a word of age or of a small child stands with them, or
+// they lead the line and the gas follows at once. Beside an adult they are
+// never an age.
+func (r *reader) spanIsAge(i, n int) bool {
+	switch {
+	case r.speaksOfAdult():
+		return false
+	case saysOld(r.t[i+n].s), r.besideSex(i+n+1), r.speaksOfChild():
+		return true
+	}
+	return r.leadsGas(i, n)
+}
+
+// saysOld says that the unit itself is one of age.
+func saysOld(unit string) bool {
+	if unit == "mo" {
+		return false // "for 3 mo" is as common
+	}
+	for _, end := range []string{"old", "weeker", "weekers", "wkr", "wker", "ga", "gestation", "age"} {
+		if strings.HasSuffix(unit, end) {
+			return true
+		}
+	}
+	return false
+}
+
+// besideSex says that the token at i is the sex behind an age: "3mo m".
+func (r *reader) besideSex(i int) bool {
+	return i < len(r.t) && (r.namesSex(i) || r.t[i].word("m") || r.t[i].word("f"))
+}
+
+// speaksOfChild says that the line, the thread or the house is about a
+// newborn, an infant or a child.
+func (r *reader) speaksOfChild() bool {
+	if !r.adult() {
+		return true
+	}
+	for i := range r.t {
+		t := &r.t[i]
+		switch {
+		case r.smallWeight(i), t.kind == tokWord && childWords[t.s]:
+			return true
+		case t.kind != tokWord || t.e == nil || r.negated(i):
+		case t.e.pop == physio.Newborn, t.e.pop == physio.Preterm, t.e.pop == physio.Child,
+			t.e.site == physio.UmbilicalArt, t.e.site == physio.UmbilicalVein, t.e.site == physio.Heel:
+			return true
+		}
+	}
+	return false
+}
+
+// smallWeight says that the number at i is the weight of a small child.
+func (r *reader) smallWeight(i int) bool {
+	if r.t[i].kind != tokNumber {
+		return false
+	}
+	u, _ := r.unitAfter(i)
+	return u == uKg && r.t[i].v <= 15 || u == uGram && r.t[i].v >= 300 && r.t[i].v < 8000
+}
+
+// childWords are illnesses and words of the first years, common practice.
+var childWords = map[string]bool{
+	"rds": true, "ttn": true, "bpd": true, "bronchiolitis": true, "croup": true, "surfactant": true,
+	"boy": true, "girl": true, "birthweight": true,
+}
+
+// adultWords are illnesses and words of adults, common practice.
+var adultWords = map[string]bool{
+	"postpartum": true, "post partum": true, "partum": true, "pph": true, "postnatal": true, "smoker": true, "exsmoker": true,
+	"lung": true, "ca": true, "cancer": true, "chf": true, "ccf": true, "ckd": true, "esrf": true, "nstemi": true, "stemi": true,
+	"ipf": true, "ild": true, "osa": true, "cirrhosis": true, "alcoholic": true, "etoh": true, "dementia": true,
+	"gentleman": true, "lady": true, "man": true, "woman": true, "retired": true, "cabg": true,
+}
+
+// speaksOfAdult says that the line is about an adult: an age, a pregnancy, an
+// illness or a word of adults.
+func (r *reader) speaksOfAdult() bool {
+	for i := range r.t {
+		t := &r.t[i]
+		switch {
+		case t.kind == tokNumber && r.adultAge(i), t.kind == tokWord && adultWords[t.s]:
+			return true
+		case t.kind != tokWord || t.e == nil || r.negated(i):
+		case t.e.pop == physio.Adult, t.e.pop == physio.Pregnant, t.e.circ.Has(physio.COPD):
+			return true
+		}
+	}
+	v, ok := r.sample().Get(physio.Age)
+	return ok && v >= 18
+}
+
+// adultAge says that the number at i is the age of an adult in years: with
+// its unit, or with a sex.
+func (r *reader) adultAge(i int) bool {
+	t := &r.t[i]
+	if t.v < 18 || t.v > 110 || t.decimals > 0 || t.sign != 0 || r.joined(i) || r.joinedAhead(i) {
+		return false
+	}
+	u, _ := r.unitAfter(i)
+	glued := i+1 < len(r.t) && r.t[i+1].glued && (r.t[i+1].word("m") || r.t[i+1].word("f"))
+	return u == uYear || glued || r.besideSex(i+1) && len(r.t[i+1].s) > 1
+}
+
+// leadsGas says that nothing stands before the number at i, and nothing but a
+// word on the sample between its unit and the gas: "3 mo 7.28/58/62".
+func (r *reader) leadsGas(i, n int) bool {
+	for j := range r.t[:i] {
+		if !r.t[j].sep("-*.,:>") {
+			return false
+		}
+	}
+	for j := i + n + 1; j < len(r.t); j++ {
+		switch t := &r.t[j]; {
+		case r.gasStart(j), t.is(senseLabel):
+			return true
+		case t.sep(",:;-.\n"), t.is(senseSaid) && t.e.blood != "", t.word("gas"):
+		default:
+			return false
+		}
+	}
+	return false
+}
+
+// daysToMonths takes an age in days or months, the weeks of a pregnancy or of
+// a gestation, or a span of time.
+func (r *reader) daysToMonths(i int, u string, n int) {
+	switch {
+	case u == uWeek && (r.speaksOfPregnancy() || r.spanIsAge(i, n)):
+		r.weeks(i, n)
+	case u != uWeek && r.spanIsAge(i, n):
+		r.age(i, u, n)
+	default:
+		r.span(i, n)
+	}
+}
+
+// span takes days, weeks or months that are no age: they tell how long
+// something lasts, and are no value.
+func (r *reader) span(i, n int) {
+	r.take(i, n)
+	r.t[i].taken = true
+}

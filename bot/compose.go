@@ -165,6 +165,8 @@ func (c *composer) ventilationShort() []string {
 	switch level {
 	case "CO2 in range":
 		out[1] = "CO2 fits"
+	case "CO2 borderline high":
+		out[1] = "CO2 borderline"
 	case "CO2 not low in asthma":
 		out[1] = "CO2 not low"
 	}

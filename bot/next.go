@@ -37,7 +37,9 @@ func (c *composer) nextPH() string {
 	if v := c.a.Ventilation; v.RangeHouse {
 		to, name = v.Range.High, " (the end of this channel's range)"
 	}
-	if ab.Course == physio.AcuteOnChronic && ab.UsualPaCO2.High > to {
+	if said := c.gas.UsualPaCO2; said > to {
+		to, name = said, " (the usual one, as said)"
+	} else if ab.Course == physio.AcuteOnChronic && ab.UsualPaCO2.High > to {
 		to = (ab.UsualPaCO2.Low + ab.UsualPaCO2.High) / 2
 		name = " (the usual one that HCO3 points to: about " + c.n.between(ab.UsualPaCO2.Low, ab.UsualPaCO2.High) + ")"
 	}

@@ -14,7 +14,7 @@ func (r *reader) spanIsAge(i, n int) bool {
 	switch {
 	case r.speaksOfAdult():
 		return false
-	case saysOld(r.t[i+n].s), r.besideSex(i+n+1), r.speaksOfChild():
+	case saysOld(r.t[i+n].s), r.besideSex(i + n + 1), r.speaksOfChild():
 		return true
 	}
 	return r.leadsGas(i, n)
@@ -58,13 +58,14 @@ func (r *reader) speaksOfChild() bool {
 	return false
 }
 
-// smallWeight says that the number at i is the weight of a small child.
+// smallWeight says that the number at i is the weight of a small child, or a
+// flow per kg, which is set in infants only (common practice).
 func (r *reader) smallWeight(i int) bool {
 	if r.t[i].kind != tokNumber {
 		return false
 	}
 	u, _ := r.unitAfter(i)
-	return u == uKg && r.t[i].v <= 15 || u == uGram && r.t[i].v >= 300 && r.t[i].v < 8000
+	return u == uLPMKg || u == uKg && r.t[i].v <= 15 || u == uGram && r.t[i].v >= 300 && r.t[i].v < 8000
 }
 
 // childWords are illnesses and words of the first years, common practice.

@@ -22,7 +22,7 @@ var spanLines = []lineTest{
 	// an age
 	{"", "3 mo 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.25 on:air pop:child"},
 	{"", "3 m/o 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.25 on:air pop:child"},
-	{"", "rsv 3mo m 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.25 on:air pop:child sex:m"},
+	{"", "rsv 3mo m 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.25 on:air sex:m pop:child"},
 	{"", "bronchiolitis 4 months 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.3333 on:air pop:child"},
 	{"", "baby 3 months 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.25 on:air pop:newborn"},
 	{"", "wheezy 9 month old 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.75 on:air pop:child"},

@@ -73,7 +73,8 @@ func (c *serveCommand) check() error {
 	return nil
 }
 
-// maxDrain keeps the stop within what service managers grant.
+// maxDrain keeps the stop, with the moment that cut answers get after it, within
+// what service managers grant: 30 s.
 const maxDrain = 20 * time.Second
 
 // chatAdapter is a chat platform served over HTTP, as the service sees it.

@@ -19,14 +19,17 @@ type derivation struct {
 	when      func(sc *scene) bool
 }
 
-func lungO2(sc *scene) bool  { return sc.lungO2 }
+func lungO2(sc *scene) bool { return sc.lungO2 }
+
 func lungCO2(sc *scene) bool { return sc.lungCO2 && sc.a.Blood == Arterial }
-func always(*scene) bool     { return true }
+
+func always(*scene) bool { return true }
 
 // alveolarCO2 and alveolarO2 also ask that the alveolar PO2 is one: at a low
 // pressure a high PaCO2 leaves no room for oxygen, so an input is amiss.
 func alveolarCO2(sc *scene) bool { return lungCO2(sc) && sc.alveolarRoom() }
-func alveolarO2(sc *scene) bool  { return sc.lungO2 && sc.alveolarRoom() }
+
+func alveolarO2(sc *scene) bool { return sc.lungO2 && sc.alveolarRoom() }
 
 func (sc *scene) alveolarRoom() bool {
 	return aboutPA(sc.v.Val(FiO2), sc.a.PB, sc.v.Val(PaCO2)) > leastAlveolar
@@ -203,84 +206,8 @@ func (sc *scene) given(v *Values) {
 
 func point(v float64) Interval { return Interval{Value: v, Low: v, High: v} }
 
-// needs adds the expected responses of the adult rules.
-func (sc *scene) needs() {
-	if !adultRules(sc) {
-		return
-	}
-	d, anchor := sc.a.Triple, sc.bloodRanges().Anchor
-	acute := func(v *Values) Span { return bandAround(acuteHCO3(v.Val(PaCO2), anchor), acuteTolerance) }
-	chronic := func(v *Values) Span { return chronicHCO3(v.Val(PaCO2), anchor) }
-	sc.add("expected_hco3_acute", "mmol/L", sc.carryBand(acute, middleOf, PaCO2), PaCO2)
-	sc.add("expected_hco3_chronic", "mmol/L", sc.carryBand(chronic, middleOf, PaCO2), PaCO2)
-	sc.add("expected_ph_acute", "", sc.carry(func(v *Values, _ []float64) float64 {
-		return phAtPCO2(anchor.SBE, v.Val(PaCO2))
-	}, []Quantity{PaCO2}), PaCO2)
-	sc.add("expected_ph_chronic", "", sc.carryBand(func(v *Values) Span {
-		b := chronic(v)
-		return Span{phFrom(v.Val(PaCO2), b.Low), phFrom(v.Val(PaCO2), b.High)}
-	}, middleOf, PaCO2), PaCO2)
-	t := sc.tripleOf(d)
-	switch p := classify(t).Primary; p {
-	case MetabolicAcidosis:
-		sc.add("expected_paco2", "mmHg", centred(t.acidosisNeed()), PHq, HCO3)
-	case MetabolicAlkalosis:
-		sc.add("expected_paco2", "mmHg", centred(t.alkalosisNeed()), HCO3)
-	}
-}
-
-// chronicHCO3 is the band of the chronic response on either side of the anchor.
-func chronicHCO3(pco2 float64, from Anchor) Span {
-	if pco2 < from.PaCO2 {
-		return bandAround(chronicHypocapniaHCO3(pco2, from), hypocapniaBand)
-	}
-	return chronicHypercapniaHCO3(pco2, from)
-}
-
-func bandAround(v, tolerance float64) Span { return Span{v - tolerance, v + tolerance} }
-
-// centred is a band as an interval with its value in the middle.
-func centred(b Span) Interval { return Interval{Value: (b.Low + b.High) / 2, Low: b.Low, High: b.High} }
-
-// bands adds the expected A-a on air, the PaO2 of a healthy lung at this
-// PaCO2, and the delta ratio.
-func (sc *scene) bands() {
-	if onAir(sc) && sc.adultScale() && sc.a.Population != Child {
-		sc.add("aa_expected", "mmHg", centred(sc.expectedAA()), Age)
-	}
-	if _, ok := sc.a.Index("pao2_alveolar"); ok && sc.lungO2 && sc.v.Has(PaCO2) && sc.adultScale() {
-		sc.a.Oxygenation.HealthyPaO2 = sc.healthyPaO2()
-		sc.add("pao2_expected_at_paco2", "mmHg", sc.a.Oxygenation.HealthyPaO2, PaCO2, FiO2, PB)
-	}
-	sc.deltaRatio()
-}
-
-// deltaRatio compares the gap with the fall of bicarbonate, which is in both:
-// they err together.
-func (sc *scene) deltaRatio() {
-	gap, corrected := sc.a.Index("anion_gap_corrected")
-	if !corrected {
-		gap, _ = sc.a.Index("anion_gap")
-	}
-	anchor := sc.a.Ranges.Anchor.HCO3
-	if gap.Value < gapHigh || anchor-sc.a.Triple.HCO3 < deltaSmallestFall {
-		return
-	}
-	sc.add("delta_ratio", "", sc.carry(func(v *Values, _ []float64) float64 {
-		rise := anionGap(v.Val(Na), v.Val(Cl), v.Val(HCO3)) - gapUsual
-		if corrected {
-			rise += albuminCorrection(v.Val(Albumin), float64(AlbuminTexts))
-		}
-		return deltaRatio(rise, anchor-v.Val(HCO3))
-	}, gap.Inputs), Na, Cl, HCO3)
-}
-
 // adultScale says that adult expectations of PaO2 hold.
 func (sc *scene) adultScale() bool { return sc.a.Ranges.PaO2 }
-
-// deltaSmallestFall is the fall of bicarbonate, mmol/L, below which the delta
-// ratio is unstable.
-const deltaSmallestFall = 4.0
 
 // expectedAA is the expected A-a on air, mmHg: the age band, or for an unknown
 // age the band of adults up to about 64 years.
@@ -315,61 +242,3 @@ func (sc *scene) healthyPaO2() Interval {
 
 // healthyRatioHigh is the upper end of a healthy a/A, from memory.
 const healthyRatioHigh = 0.82
-
-// contents adds the saturation at this pH and the oxygen content.
-func (sc *scene) contents() {
-	if sc.a.Blood == NoBlood || sc.a.Blood == Cord {
-		return
-	}
-	if sc.v.Has(PaO2) && !sc.unmeasuredCO() && sc.a.Population != Newborn && sc.a.Population != Preterm {
-		sc.add("sao2_calc", "", sc.saturationOfPaO2(), PaO2, PHq, PaCO2)
-	}
-	sc.arterialContent()
-}
-
-// saturationOfPaO2 is the saturation at this PaO2, pH and PaCO2.
-func (sc *scene) saturationOfPaO2() Interval {
-	return sc.carry(func(v *Values, _ []float64) float64 { return sc.curveAt(v) }, sc.curveInputs())
-}
-
-// curveInputs are the inputs of the curve that are known: a pH or PaCO2 that is
-// not is exactly the standard one.
-func (sc *scene) curveInputs(more ...Quantity) []Quantity {
-	on := append(more, PaO2)
-	if sc.a.Triple.PH != 0 {
-		on = append(on, PHq)
-	}
-	if sc.v.Has(PaCO2) || sc.a.Triple.PaCO2 != 0 {
-		on = append(on, PaCO2)
-	}
-	return on
-}
-
-// curveAt is the saturation of the curve for v.
-func (sc *scene) curveAt(v *Values) float64 {
-	at := CurveShift{PaCO2: MmHg(v.Val(PaCO2))}
-	if sc.a.Triple.PH != 0 {
-		at.PH = PH(v.Val(PHq))
-	}
-	return saturation(v.Val(PaO2), at)
-}
-
-// arterialContent adds CaO2: a measured saturation first, else the one of the
-// curve.
-func (sc *scene) arterialContent() {
-	if !sc.v.Has(Hb, PaO2) || !sc.lungO2 {
-		return
-	}
-	if sc.v.Has(SaO2) {
-		sc.addContent(func(v *Values) float64 { return v.Val(SaO2) }, []Quantity{Hb, PaO2, SaO2})
-		return
-	}
-	sc.addContent(sc.curveAt, sc.curveInputs(Hb))
-}
-
-func (sc *scene) addContent(sat func(*Values) float64, on []Quantity) {
-	iv := sc.carry(func(v *Values, _ []float64) float64 {
-		return BindingFunctional.content(v.Val(Hb), sat(v), v.Val(PaO2))
-	}, on)
-	sc.add("cao2", "mL/dL", iv, Hb, SaO2, PaO2)
-}

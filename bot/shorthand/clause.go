@@ -54,7 +54,7 @@ func (p *parser) clauses(t []token, s string) (intent Intent, clause, rest []tok
 			return try.intent, clause, rest
 		}
 	}
-	if isCheck(s, &g) {
+	if isCheck(s, &g) && !p.declines(DeclinedPrognosis) {
 		p.line.Intent = IntentCheck
 	}
 	return IntentNone, nil, t

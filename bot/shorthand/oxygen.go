@@ -255,7 +255,7 @@ func (r *reader) flowOrFiO2(i int, d physio.Device, nums []int) {
 	j := -1
 	if len(nums) > 0 {
 		j = nums[0]
-	} else if i > 0 && r.t[i-1].free() && r.t[i-1].line == r.t[i].line && !r.joined(i-1) && (i < 2 || r.t[i-2].kind != tokNumber || r.t[i].glued) {
+	} else if i > 0 && r.t[i-1].free() && r.t[i-1].line == r.t[i].line && !r.joined(i-1) && (i < 2 || r.t[i-2].kind != tokNumber || r.t[i].glued || d == physio.Venturi && r.valveSize(i-1)) {
 		j = i - 1
 	}
 	if j < 0 || r.t[j].percent || r.t[j].sign != 0 || r.joinedAhead(j) || r.gasStart(j) {
@@ -355,7 +355,7 @@ func (r *reader) highFlowPair(n, m int) {
 		one, two := choose(physio.OxygenFlow, a.v), choose(physio.OxygenFlow, b.v)
 		one.Set.Set(physio.FiO2, b.v/100)
 		two.Set.Set(physio.FiO2, a.v/100)
-		one.Word, two.Word = number(a.v)+" L/min", number(b.v)+" L/min"
+		one.Word, two.Word = flowAtFiO2(a.v, b.v), flowAtFiO2(b.v, a.v)
 		r.askHighFlow(n, []Choice{one, two})
 		return
 	case second:

@@ -42,7 +42,7 @@ func TestOneWordAnswersAQuestion(t *testing.T) {
 		{"7.36/44/68/25 ht 1.78 m", "male", "picked male"},
 		{"7.36/44/68/25 ht 1.78 m", "f", "picked female"},
 		{"7.36/44/68/25 wt 190", "lb", "picked lb"},
-		{"7.36/44/68/25 hfnc 50/60", "60 L", "picked 60 L/min"},
+		{"7.36/44/68/25 hfnc 50/60", "60 L", "picked 60 L/min at 50 %"},
 		{"7.28/58/62/27/40", "fio2", "picked FiO2"},
 		{"7.28/58/62/27/40", "sat", "picked saturation"},
 		{"7.28/58/62/27 28", "rate", "picked rate"},

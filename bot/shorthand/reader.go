@@ -104,7 +104,7 @@ func (r *reader) said() {
 			continue
 		}
 		e := t.e
-		if e.sense == senseSaid || e.sense == senseDevice {
+		if (e.sense == senseSaid || e.sense == senseDevice) && (e.circ != physio.BledInOxygen || r.besideOxygen(i)) {
 			s.Circumstance |= e.circ
 		}
 		if e.sense != senseSaid {
@@ -180,39 +180,6 @@ func (r *reader) near(i, n int, words ...string) bool {
 		}
 	}
 	return false
-}
-
-// targets takes a saturation target: "target 88-92", "goal sats 92 to 96 %".
-func (r *reader) targets() {
-	for i := 0; i+2 < len(r.t); i++ {
-		a, j := &r.t[i], i+1
-		if a.kind != tokNumber || a.v < 60 || a.v > 100 || a.decimals > 0 {
-			continue
-		}
-		if !r.t[j].sep("-") && !r.t[j].word("to") && !r.t[j].word("and") || j+1 >= len(r.t) {
-			continue
-		}
-		b := &r.t[j+1]
-		if b.kind != tokNumber || b.v <= a.v || b.v > 100 || !r.targetWord(i) {
-			continue
-		}
-		r.g.Target = &physio.Target{Low: a.v / 100, High: b.v / 100}
-		a.used, b.used, a.taken, b.taken = true, true, true, true
-		r.unlabel(i)
-	}
-}
-
-func (r *reader) targetWord(i int) bool {
-	return r.near(i, 5, "target", "targets", "goal", "aim", "aiming", "aims", "keep", "range", "tgt", "scale", "prescribed", "sats target", "for", "between", "titrate", "titrated")
-}
-
-// unlabel takes the labels in front of a target away.
-func (r *reader) unlabel(i int) {
-	for j := i - 1; j >= 0 && j >= i-4; j-- {
-		if r.t[j].is(senseLabel) && (r.t[j].e.q == physio.SaO2 || r.t[j].e.q == physio.SpO2) {
-			r.t[j].e, r.t[j].used = nil, true
-		}
-	}
 }
 
 // marks takes what is no value: an index, a number behind a word that owns it,

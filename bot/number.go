@@ -76,6 +76,14 @@ func (n numbers) about(mmHg float64) string {
 	return plain(mmHg, 0)
 }
 
+// finer prints a derived pressure with one digit more than about does.
+func (n numbers) finer(mmHg float64) string {
+	if n.units == shorthand.KPa {
+		return plain(physio.MmHg(mmHg).KPa(), 2)
+	}
+	return plain(mmHg, 1)
+}
+
 // between prints a derived range of pressures without its unit.
 func (n numbers) between(low, high float64) string {
 	a, b := n.about(low), n.about(high)

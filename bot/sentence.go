@@ -33,7 +33,7 @@ func (c *composer) ventilationLevel() string {
 		return c.adequateCO2()
 	case physio.LevelShortForNeed:
 		return fmt.Sprintf("PaCO2 %s is above what this metabolic acidosis needs (%s %s): short for the need%s.",
-			c.n.about(v.PaCO2.Value), c.needSpan(), c.n.unit(), c.borderlineNeed())
+			c.n.pressure(v.PaCO2.Value), c.needSpan(), c.n.unit(), c.borderlineNeed())
 	case physio.LevelHypoventilation:
 		return c.highCO2()
 	case physio.LevelHyperventilation:
@@ -49,8 +49,14 @@ func (c *composer) answersNeed() bool {
 	return ab.Need == physio.Matches || ab.Need != physio.NoNeed && ab.NeedBorderline
 }
 
+// needSpan prints what a metabolic process needs; a bound that PaCO2 misses by
+// less than its last digit is printed finer, so that the verdict can be seen.
 func (c *composer) needSpan() string {
-	n := c.a.AcidBase.NeedSpan
+	n, p := c.a.AcidBase.NeedSpan, c.a.Ventilation.PaCO2.Value
+	shown := c.n.pressure(p)
+	if p > n.High && shown == c.n.about(n.High) || p > 0 && p < n.Low && shown == c.n.about(n.Low) {
+		return c.n.finer(n.Low) + "-" + c.n.finer(n.High)
+	}
 	return c.n.between(n.Low, n.High)
 }
 
@@ -95,13 +101,15 @@ func (c *composer) highCO2() string {
 	switch {
 	case v.Floor:
 		return "EtCO2 is a floor: PaCO2 is at least about that, so the level is inadequate."
+	case c.a.Raised(physio.CautionAsthma):
+		return c.highInAttack()
 	case ab.Primary == physio.MetabolicAlkalosis && c.answersNeed():
 		return fmt.Sprintf("PaCO2 above its range, as this metabolic alkalosis expects (%s %s)%s.", c.needSpan(), c.n.unit(), c.borderlineNeed())
 	case ab.Primary == physio.MetabolicAlkalosis:
 		return fmt.Sprintf("inadequate: PaCO2 above what this metabolic alkalosis expects (%s %s).", c.needSpan(), c.n.unit())
 	case v.AtUsual:
 		return "high, at this patient's usual PaCO2."
-	case v.ChronicPattern:
+	case v.ChronicPattern && !v.Borderline:
 		return "high, chronic pattern" + c.limitWords() + "."
 	}
 	level := "inadequate"
@@ -231,7 +239,11 @@ func (c *composer) ventilationEfficiency() string {
 		return "Efficiency: can't say without " + c.lacking() + "."
 	}
 	ix, _ := c.a.Index(v.Basis)
-	return "Efficiency: " + c.indexPhrase(ix) + ": " + efficiencyWord[v.Efficiency] + "."
+	by := ""
+	if v.ByRate {
+		by = " by " + c.rateWords()
+	}
+	return "Efficiency: " + c.indexPhrase(ix) + by + ": " + efficiencyWord[v.Efficiency] + "."
 }
 
 // mechanics gives what the ventilator's numbers tell of the breath.

@@ -37,6 +37,8 @@ func (c *composer) unknownO2() string {
 		return "no lung verdict during resuscitation."
 	case s.Has(physio.ECMO):
 		return "no lung verdict: the circuit shares the work."
+	case c.a.Oxygenation.Blind:
+		return "can't say: SpO2 " + c.blindWords() + "."
 	case s.Has(physio.SmokeOrCO):
 		return "can't say in smoke or CO without COHb: neither PaO2 nor SpO2 tells the oxygen carried."
 	}
@@ -55,6 +57,14 @@ func (c *composer) unknownO2() string {
 		return "can't say here."
 	}
 	return "can't say without PaO2 or SpO2."
+}
+
+// blindWords name what an oximeter takes for oxygen.
+func (c *composer) blindWords() string {
+	if s := c.gas.Sample; s.Val(physio.MetHb) > s.Val(physio.COHb) {
+		return "drifts towards 85 % with MetHb"
+	}
+	return "reads COHb as oxygenated"
 }
 
 // oxygenLevel is the level in words, with the saturation and the oxygen.
@@ -97,16 +107,22 @@ func (c *composer) oxygenWords() string {
 		return "level adequate" + c.borderlineO2()
 	}
 	if word == "borderline" {
-		if o.SaturationSource == physio.SpO2 {
-			return "90-94 % on oxygen: borderline, no target set"
-		}
-		return "PaO2 " + c.n.between(60, 79) + " on oxygen: borderline, no target set"
+		return c.bandWords() + " on oxygen: borderline, no target set"
 	}
 	if !o.OnOxygen && c.a.Oxygen.Known && c.a.Ranges.PaO2 && (o.Scale == physio.DegreeMild || o.Scale == physio.DegreeModerate) {
 		scale := " on the scale for air at sea level"
 		return strings.TrimSuffix(word, " (mild)") + ", " + string(o.Scale) + scale + c.borderlineO2()
 	}
 	return word + c.borderlineO2()
+}
+
+// bandWords is the band in which the level lies, of a PaO2 or a saturation.
+func (c *composer) bandWords() string {
+	band := c.a.Oxygenation.Band
+	if band.High <= 1 {
+		return wholePercent(band.Low) + "-" + wholePercent(band.High-0.01) + " %"
+	}
+	return "PaO2 " + c.n.between(band.Low, band.High-1)
 }
 
 // oxygenUnsaid says that neither air nor any oxygen was said.

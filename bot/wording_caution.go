@@ -51,6 +51,11 @@ var cautionText = map[physio.CautionCode]string{
 	physio.CautionShort:          "PaCO2 is above what the metabolic acidosis needs: ventilation does not match the need.",
 	physio.CautionDriving:        "driving pressure above 15 cmH2O.",
 	physio.CautionVT:             "VT above 8 mL/kg predicted weight.",
+	physio.CautionPotassium:      "K %s: critical in its own right, whatever the gas; haemolysis also raises it.",
+	physio.CautionAnaemia:        "Hb %s: PaO2 and saturation say nothing of the oxygen carried%s.",
+	physio.CautionLactate:        "lactate %s: %s perfusion comes before ventilation.",
+	physio.CautionByRate:         "PaCO2 %s is held by %s: tiring shows in the breathing first, in PaCO2 late.",
+	physio.CautionNewbornOI:      "OI %s: in newborns nitric oxide is thought of from about 20, referral from 25, ECMO at 40; local protocol decides.",
 	physio.CautionAltitudeUnset:  "sea level was taken: at altitude a lower PaO2 is expected.",
 }
 
@@ -70,6 +75,17 @@ func (c *composer) cautionArgs(code physio.CautionCode) []any {
 			return []any{wholePercent(t.Low) + "-" + wholePercent(t.High)}
 		}
 		return []any{"88-92"}
+	case physio.CautionPotassium:
+		return []any{c.n.value(physio.K, s.Val(physio.K))}
+	case physio.CautionAnaemia:
+		return []any{c.n.value(physio.Hb, s.Val(physio.Hb)), c.contentWords()}
+	case physio.CautionLactate:
+		return []any{c.n.value(physio.Lactate, s.Val(physio.Lactate)), c.lactateWords()}
+	case physio.CautionByRate:
+		return []any{c.n.pressure(c.a.Ventilation.PaCO2.Value), c.rateWords()}
+	case physio.CautionNewbornOI:
+		oi, _ := c.a.Index("oi")
+		return []any{plain(oi.Value, 0)}
 	case physio.CautionRetainer:
 		return []any{c.retainerWhy()}
 	case physio.CautionTemperature:

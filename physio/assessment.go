@@ -77,6 +77,9 @@ type Ventilation struct {
 	Efficiency Efficiency
 	// Basis is the key of the index that the efficiency rests on, "" if none.
 	Basis string
+	// ByRate is true when a PaCO2 in or below its range is held by a high rate
+	// or by rapid shallow breaths of the patient's own.
+	ByRate bool
 	// Floor is true when only a floor of PaCO2 is known (EtCO2).
 	Floor bool
 	// Screen is true when a venous PCO2 below 45 mmHg makes arterial
@@ -101,7 +104,10 @@ type Oxygenation struct {
 	Level      Degree
 	Borderline bool
 	// Scale is the degree on the PaO2 scale, also where a target decides.
-	Scale      Degree
+	Scale Degree
+	// Band is where "mild" lies on the scale that decided, in mmHg or, with a
+	// saturation, as fractions: from Low to just below High.
+	Band       Span
 	Efficiency Efficiency
 	// Basis is the key of the index that the efficiency rests on, "" if none.
 	Basis string
@@ -118,7 +124,10 @@ type Oxygenation struct {
 	// PaO2, or by oximeter.
 	Saturation       Interval
 	SaturationSource Quantity // SaO2 measured, PaO2 calculated, SpO2 oximeter
-	OnOxygen         bool
+	// Blind is true when the saturation is an oximeter's that takes
+	// carboxyhaemoglobin or methaemoglobin for something else.
+	Blind    bool
+	OnOxygen bool
 	// HealthyPaO2 is the PaO2 a healthy lung would have at this PaCO2 and
 	// FiO2; zero when unknown.
 	HealthyPaO2 Interval

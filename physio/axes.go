@@ -20,6 +20,9 @@ func (sc *scene) ventilation() {
 	if sc.lungCO2 || sc.a.Blood == NoBlood {
 		sc.ventilationEfficiency()
 	}
+	if v.ByRate = sc.heldByRate(); v.ByRate && v.Efficiency == Efficient {
+		v.Efficiency = Reduced
+	}
 }
 
 // levelOf compares a PaCO2 with its range, its target and its need.
@@ -43,12 +46,13 @@ func (sc *scene) levelOf(pco2 float64) {
 	default:
 		v.Level = LevelAdequate
 	}
-	if sc.asthmaNotLow() {
+	attack := sc.asthmaNotLow()
+	if attack && v.Level == LevelAdequate {
 		v.Borderline = true // never plain adequate in an attack
 	}
-	v.ChronicPattern = v.Level == LevelHypoventilation && ab.Course == Chronic
+	v.ChronicPattern = v.Level == LevelHypoventilation && ab.Course == Chronic && !attack
 	usual := sc.set.UsualPaCO2
-	v.AtUsual = usual > high && pco2 <= usual+needMargin && sc.a.Triple.PH >= r.PHLow
+	v.AtUsual = usual > high && pco2 <= usual+needMargin && sc.a.Triple.PH >= r.PHLow && !attack
 }
 
 // crosses says that a cut-off lies inside an interval.
@@ -162,17 +166,18 @@ func (sc *scene) onUnknownOxygen() bool {
 
 func (sc *scene) saturationUsed() {
 	o := &sc.a.Oxygenation
-	if s, ok := sc.v.Get(SaO2); ok && sc.lungO2 {
+	if s, ok := sc.v.Get(SaO2); ok && sc.patientO2() {
 		o.Saturation, o.SaturationSource = propagate(identity, []Input{Measured(SaO2, s)}), SaO2
 		return
 	}
-	if ix, ok := sc.a.Index("sao2_calc"); ok && sc.lungO2 {
+	if ix, ok := sc.a.Index("sao2_calc"); ok && sc.patientO2() {
 		o.Saturation, o.SaturationSource = sc.oxyhaemoglobin(ix.Interval), PaO2
 		return
 	}
 	if s, ok := sc.v.Get(SpO2); ok {
 		o.Saturation, o.SaturationSource = propagate(identity, []Input{Measured(SpO2, s)}), SpO2
 		o.Saturation.High = min(o.Saturation.High, 1)
+		o.Blind = sc.oximeterBlind()
 	}
 }
 
@@ -192,26 +197,29 @@ func (sc *scene) oxyhaemoglobin(s Interval) Interval {
 func (sc *scene) scale() {
 	o := &sc.a.Oxygenation
 	newborn := !sc.adultScale()
-	if p, ok := sc.v.Get(PaO2); ok && sc.lungO2 {
+	if p, ok := sc.v.Get(PaO2); ok && sc.patientO2() {
 		cuts := [3]float64{pao2Adequate, pao2Mild, pao2Moderate}
 		if newborn {
 			cuts = [3]float64{newbornPaO2, newbornPaO2Mild, newbornPaO2Moderate}
 		}
 		iv := propagate(identity, []Input{Measured(PaO2, p)})
-		o.Scale, o.Borderline = degree(p, cuts), crossesAny(iv, cuts)
+		o.Scale, o.Borderline, o.Band = degree(p, cuts), crossesAny(iv, cuts), mildOf(cuts)
 	} else if o.Saturation.Value > 0 {
 		cuts := [3]float64{satAdequate, satMild, satModerate}
 		if newborn {
 			cuts = [3]float64{pretermTargetLow, newbornSatMild, newbornSatModerate}
 		}
-		o.Scale, o.Borderline = degree(o.Saturation.Value, cuts), crossesAny(o.Saturation, cuts)
+		o.Scale, o.Borderline, o.Band = degree(o.Saturation.Value, cuts), crossesAny(o.Saturation, cuts), mildOf(cuts)
 	}
 	// Where haemoglobin carries something else, or the sample does not follow
 	// the curve, a PaO2 on its scale is no comfort: the measured saturation is.
 	if sc.lungO2 && !newborn && (sc.v.Has(SaO2) && sc.saturationMismatch() || sc.dyshaemoglobin() && sc.v.Has(PaO2)) {
-		o.Scale = worse(o.Scale, degree(o.Saturation.Value, [3]float64{satAdequate, satMild, satModerate}))
+		cuts := [3]float64{satAdequate, satMild, satModerate}
+		if d := worse(o.Scale, degree(o.Saturation.Value, cuts)); d != o.Scale {
+			o.Scale, o.Band = d, mildOf(cuts)
+		}
 	}
-	if sc.aboveAlveolar() || sc.unmeasuredCO() {
+	if sc.aboveAlveolar() || sc.unmeasuredCO() || o.Blind {
 		o.Scale, o.Borderline = DegreeUnknown, false
 	}
 	o.Level = o.Scale
@@ -222,6 +230,9 @@ func (sc *scene) scale() {
 func (sc *scene) unmeasuredCO() bool {
 	return sc.s.Circumstance.Has(SmokeOrCO) && !sc.v.Has(COHb) && !(sc.v.Has(SaO2) && sc.v.Has(PaO2))
 }
+
+// mildOf is where "mild" lies between the cut-offs of a scale.
+func mildOf(cuts [3]float64) Span { return Span{Low: cuts[1], High: cuts[0]} }
 
 // worse gives the worse of two degrees.
 func worse(a, b Degree) Degree {
@@ -314,6 +325,7 @@ func (sc *scene) oxygenationEfficiency() {
 	o := &sc.a.Oxygenation
 	aa, hasAA := sc.a.Index("aa")
 	switch {
+	case o.Blind: // an index with this SpO2 tells nothing
 	case hasAA && aa.Value < aaImpossible, sc.aboveAlveolar():
 		// A PaO2 above the alveolar one: the inputs can not be right.
 	case hasAA:

@@ -63,6 +63,11 @@ const (
 	CautionShort          CautionCode = "short_for_need"
 	CautionDriving        CautionCode = "driving_pressure_above_15"
 	CautionAltitudeUnset  CautionCode = "altitude_not_set"
+	CautionPotassium      CautionCode = "potassium_severe"
+	CautionAnaemia        CautionCode = "anaemia_hides_low_content"
+	CautionLactate        CautionCode = "lactate_severe"
+	CautionByRate         CautionCode = "paco2_held_by_rate"
+	CautionNewbornOI      CautionCode = "newborn_oi_high"
 )
 
 // trigger is one row of the table of cautions: what raises it, and which
@@ -77,6 +82,7 @@ type trigger struct {
 // triggers is the one table of cautions, most important first.
 var triggers = []trigger{
 	{CautionCPR, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(CPR) }, nil},
+	{CautionPotassium, Major, func(sc *scene) bool { return sc.v.Val(K) >= potassiumHigh && sc.bloodTable() }, nil},
 	{CautionCord, Major, func(sc *scene) bool { return sc.a.Blood == Cord }, nil},
 	{CautionIntraosseous, Major, func(sc *scene) bool { return sc.a.Blood == Intraosseous }, nil},
 	{CautionVenous, Major, (*scene).venousBlood, nil},
@@ -87,19 +93,24 @@ var triggers = []trigger{
 	{CautionVenousPossible, Major, (*scene).venousPossible, []CautionCode{CautionVenousLikely}},
 	{CautionDyshaem, Major, (*scene).dyshaemoglobinLikely, nil},
 	{CautionSaturation, Major, (*scene).saturationMismatch, []CautionCode{CautionDyshaem, CautionVenousLikely}},
+	{CautionAnaemia, Major, (*scene).severeAnaemia, nil},
 	{CautionECMO, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(ECMO) }, nil},
 	{CautionHyperbaric, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(Hyperbaric) || sc.s.Device == Chamber }, nil},
 	{CautionCyanotic, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(CyanoticHeart) }, nil},
 	{CautionAsthma, Major, (*scene).asthmaNotLow, nil},
 	{CautionHyperoxia, Major, func(sc *scene) bool { return sc.veryHighPaO2() && sc.brainAtRisk() }, nil},
+	{CautionByRate, Major, func(sc *scene) bool { return sc.a.Ventilation.ByRate }, nil},
+	{CautionLactate, Major, func(sc *scene) bool { return sc.lactateSevere() && sc.acidotic() }, nil},
 	{CautionBrain, Major, (*scene).brainCO2, []CautionCode{CautionHyperoxia}},
 	{CautionLowCO2Newborn, Major, (*scene).lowCO2Newborn, nil},
+	{CautionNewbornOI, Major, (*scene).newbornOI, nil},
 	{CautionHighO2Preterm, Major, (*scene).highO2Preterm, nil},
 	{CautionAboveRetainer, Major, (*scene).aboveRetainer, nil},
 	{CautionHidden, Major, (*scene).hidden, nil},
 	{CautionCapillary, Major, func(sc *scene) bool { return sc.a.Blood == Capillary && sc.s.Site != Earlobe }, nil},
 	{CautionHeliox, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(Heliox) }, nil},
 	{CautionNotSteady, Major, func(sc *scene) bool { return sc.s.Circumstance.Has(JustChanged) }, nil},
+	{CautionLactate, Minor, (*scene).lactateSevere, []CautionCode{CautionLactate}},
 	{CautionShort, Minor, func(sc *scene) bool { return sc.a.Ventilation.Level == LevelShortForNeed }, nil},
 	{CautionEarlobe, Minor, func(sc *scene) bool { return sc.a.Blood == Capillary && sc.s.Site == Earlobe }, nil},
 	{CautionHFOV, Minor, func(sc *scene) bool { return sc.s.Mode == HFOV || sc.s.Mode == HFJV }, nil},
@@ -217,7 +228,7 @@ func (sc *scene) saturationMismatch() bool {
 			return false
 		}
 	}
-	return s < ix.Low-satMismatch || s > ix.High+satMismatch
+	return s < min(ix.Value-satMismatch, ix.Low-satRepeat) || s > max(ix.Value+satMismatch, ix.High+satRepeat)
 }
 
 // asthmaNotLow: in an acute attack a PaCO2 in or above the range is a
@@ -237,9 +248,9 @@ func (sc *scene) brainAtRisk() bool {
 	return sc.s.Circumstance.Has(BrainInjury) || sc.s.Circumstance.Has(PostArrest)
 }
 
-// veryHighPaO2: on oxygen, above any usual target.
+// veryHighPaO2: on oxygen, above any usual target, and not meant to be.
 func (sc *scene) veryHighPaO2() bool {
-	return sc.lungO2 && sc.a.Oxygenation.OnOxygen && sc.v.Val(PaO2) > highPaO2 && !sc.aboveAlveolar()
+	return sc.lungO2 && sc.a.Oxygenation.OnOxygen && sc.v.Val(PaO2) > highPaO2 && !sc.aboveAlveolar() && !sc.carbonMonoxide()
 }
 
 func (sc *scene) newborn() bool {

@@ -136,6 +136,7 @@ var contradictions = []physio.CautionCode{
 	physio.CautionVenousLikely,  // an SpO2 far above what this PaO2 saturates to
 	physio.CautionVenousPossible,
 	physio.CautionSaturation, // a measured saturation away from the curve
+	physio.CautionDyshaem,    // COHb or MetHb that an SpO2 takes for something else
 }
 
 // TestLawMoreValuesNeverUnsettle: a value more never turns an adequate level into

@@ -112,6 +112,7 @@ const (
 	fitFreeHCO3  = 0.06 // of the bicarbonate, plus half its last digit
 	fitAskHCO3   = 4.0  // mmol/L off: asked
 	satMismatch  = 0.06 // measured against the curve, beyond which it is said
+	satRepeat    = 0.04 // and so far beyond a repeat's spread: the error of an oximeter (ISO 80601-2-61)
 	venousSatGap = 0.08 // sample below oximeter: venous until shown otherwise
 	venousPaO2   = 45.0 // mmHg at or below: could be venous
 )
@@ -161,4 +162,17 @@ const (
 	raisedHCO3      = 28.0  // mmol/L: above it a chronic retention is thought of, common practice
 	flatPaO2        = 80.0  // mmHg: the curve is flat above
 	temperatureSaid = 2.0   // C away from 37: PCO2 moves by more than 9 %
+
+	hbSevere      = 7.0  // g/dL: below it anaemia decides the oxygen carried (AABB 2016 and 2023, the threshold of transfusion)
+	lactateSevere = 4.0  // mmol/L at or above: severe (ventilation.md, section 7; Surviving Sepsis 2021)
+	potassiumHigh = 6.5  // mmol/L at or above: severe (UK Kidney Association 2020, from memory)
+	rateHigh      = 30.0 // breaths/min at or above: a mark of severity in adults (Lim 2003, CURB-65)
+	newbornOI     = 20.0 // at or above: the range of inhaled nitric oxide (Lakshminrusimha 2015)
+
+	// cohbOxygen, a fraction in smoke or CO: the usual ends at 2-3 % (from
+	// memory); above it SpO2 takes COHb for oxygen (Buckley 1994).
+	cohbOxygen = 0.03
+	// methbOximeter, a fraction: SpO2 drifts towards 85 % whatever the oxygen
+	// (Barker 1989, from memory).
+	methbOximeter = 0.10
 )

@@ -30,6 +30,8 @@ const (
 	// SaidCOHb and SaidMetHb, fractions: above them what the curve gives is
 	// the saturation of the haemoglobin that is left.
 	SaidCOHb, SaidMetHb = cohbUsual, methbUsual
+	// SaidRate, breaths a minute: a rate that is named for holding a PaCO2.
+	SaidRate = rateHigh
 	// SpO2Ceiling, a fraction: above it SpO2 does not grade the lung (Matthay
 	// 2024).
 	SpO2Ceiling = spo2Ceiling

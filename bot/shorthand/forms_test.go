@@ -82,7 +82,7 @@ var formLines = []lineTest{
 	{"", "7.31/55/68/27 pc 18/8/20 40%", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.4 rr_set=20 peep=8 pc=18 on:ventilator mode:PC !pc_reference:pc:18=18"},
 	{"", "7.31/55/68/27 vent 20/8", "ph=7.31 paco2=55 pao2=68 hco3=27 peep=8 pip=20 on:ventilator !vent_order:pip:20=20"},
 	{"", "7.31/55/68/27 vent 450/16/5/40", "ph=7.31 paco2=55 pao2=68 hco3=27 fio2=0.4 rr_set=16 vt=450 peep=5 on:ventilator !vent_order:fio2:40=0.4 !vent_order:peep:5=5 !vent_order:rr_set:16=16"},
-	{"", "7.31/55/68/27 vc 0.9", "ph=7.31 paco2=55 pao2=68 hco3=27"},
+	{"", "7.31/55/68/27 vc 0.9", "ph=7.31 paco2=55 pao2=68 hco3=27 !not_read:ph:vital capacity 0.9=0.9"},
 	{"", "7.31/55/68/27 ps 8 +5", "ph=7.31 paco2=55 pao2=68 hco3=27 peep=5 ps=8 on:ventilator mode:PS"},
 	{"", "7.31/55/68/27 90L", "ph=7.31 paco2=55 pao2=68 hco3=27 ?value[9 L/min]"},
 	{"", "7.31/55/68/27 2L or 3L", "ph=7.31 paco2=55 pao2=68 hco3=27 ?which_at_draw[2 L|3 L]"},

@@ -44,6 +44,8 @@ func readGas(t []token, h Habits, o segment) Gas {
 	r := &reader{h: h, t: t, raw: raws{}, first: -1, last: -1, mixed: o.mixed, claims: o.claims, missed: map[physio.Quantity]bool{}}
 	r.g.Bed, r.g.Time = o.bed, o.time
 	r.targets()
+	r.monoxide()
+	r.unread()
 	r.marks()
 	r.said()
 	r.usual()

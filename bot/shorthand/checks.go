@@ -94,7 +94,7 @@ func (d *decider) askBicarbonate(v *physio.Values, hco3, implied float64) {
 // sign, or another number. Definitions differ by 2-3 mmol/L.
 func (d *decider) checkBaseExcess(v *physio.Values, implied float64) {
 	be, ok := v.Get(physio.BE)
-	if !ok {
+	if !ok || d.cord() || v.Val(physio.PaCO2) > mostForBE {
 		return
 	}
 	sbe, err := physio.StandardBaseExcess(physio.PH(v.Val(physio.PHq)), physio.MmolL(implied))

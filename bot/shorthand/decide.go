@@ -33,6 +33,11 @@ func (d *decider) decide() {
 	if len(d.raw) == 0 {
 		return
 	}
+	d.sharedUnit()
+	if d.cord() {
+		d.cordPressures()
+	}
+	defer d.setBaseExcessAside()()
 	all := d.raw.candidates(d.units, d.near)
 	kept := d.raw.reading(cheapest(all, func(c *candidate) bool { return !c.orderDiffers }))
 	moved := d.raw.reading(cheapest(all, func(c *candidate) bool { return c.orderDiffers }))

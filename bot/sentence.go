@@ -32,6 +32,10 @@ func (c *composer) ventilationLevel() string {
 	case physio.LevelAdequate:
 		return c.adequateCO2()
 	case physio.LevelShortForNeed:
+		if c.n.finer(v.PaCO2.Value) == c.n.finer(c.a.AcidBase.NeedSpan.High) {
+			return fmt.Sprintf("PaCO2 %s is at the upper end of what this metabolic acidosis needs (%s %s): borderline.",
+				c.n.pressure(v.PaCO2.Value), c.needSpan(), c.n.unit())
+		}
 		return fmt.Sprintf("PaCO2 %s is above what this metabolic acidosis needs (%s %s): short for the need%s.",
 			c.n.pressure(v.PaCO2.Value), c.needSpan(), c.n.unit(), c.borderlineNeed())
 	case physio.LevelHypoventilation:

@@ -37,7 +37,7 @@ var shortWords = regexp.MustCompile(`PaCO2 ([\d.]+) is above what this metabolic
 // above it, and a miss within a repeat's spread is called borderline.
 func TestNeedDoesNotContradictItself(t *testing.T) {
 	near := 0
-	for _, ph := range []string{"7.20", "7.22", "7.24", "7.26", "7.28", "7.30"} {
+	for _, ph := range []string{"7.20", "7.21", "7.22", "7.23", "7.24", "7.26", "7.28", "7.30"} {
 		for _, pco2 := range []string{"25", "26", "27", "28", "28.3", "29", "30", "31", "32", "33", "34"} {
 			m := shortWords.FindStringSubmatch(ask(t, ph+"/"+pco2+"/95 RA").Text())
 			if m == nil {

@@ -122,8 +122,10 @@ type Oxygenation struct {
 	InsideUsual bool
 	// Saturation is the one that is compared: measured, at this pH from the
 	// PaO2, or by oximeter.
-	Saturation       Interval
-	SaturationSource Quantity // SaO2 measured, PaO2 calculated, SpO2 oximeter
+	Saturation Interval
+	// SaturationSource is SaO2 measured, PaO2 calculated, SpO2 oximeter, or
+	// COHb where a measured SaO2 left dyshaemoglobin out and it was taken off.
+	SaturationSource Quantity
 	// Blind is true when the saturation is an oximeter's that takes
 	// carboxyhaemoglobin or methaemoglobin for something else.
 	Blind    bool

@@ -168,6 +168,9 @@ func (sc *scene) saturationUsed() {
 	o := &sc.a.Oxygenation
 	if s, ok := sc.v.Get(SaO2); ok && sc.patientO2() {
 		o.Saturation, o.SaturationSource = propagate(identity, []Input{Measured(SaO2, s)}), SaO2
+		if sc.leavesOut(s) {
+			o.Saturation, o.SaturationSource = sc.oxyhaemoglobin(o.Saturation), COHb
+		}
 		return
 	}
 	if ix, ok := sc.a.Index("sao2_calc"); ok && sc.patientO2() {

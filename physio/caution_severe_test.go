@@ -1,6 +1,7 @@
 package physio_test
 
 import (
+	"math"
 	"testing"
 
 	"galeward/physio"
@@ -176,6 +177,17 @@ func TestAttackIsBorderlineOnlyNearTheCut(t *testing.T) {
 		v := assess(s).Ventilation
 		if v.Level != physio.LevelHypoventilation || v.Borderline != want || v.ChronicPattern || v.AtUsual {
 			t.Errorf("PaCO2 %v: %+v", pco2, v)
+		}
+	}
+}
+
+// TestSaturationOfWhatIsLeft: SaO2 98 % beside COHb 30 % is more than the whole,
+// so it is 98 % of the 70 % that is left (Dijkhuizen 1977); SaO2 68 % is not.
+func TestSaturationOfWhatIsLeft(t *testing.T) {
+	for sao2, want := range map[float64]float64{0.98: 0.686, 0.68: 0.68} {
+		a := adultGas(func(s *physio.Sample) { s.Set(physio.SaO2, sao2); s.Set(physio.COHb, 0.30) })
+		if o := a.Oxygenation; math.Abs(o.Saturation.Value-want) > 0.001 || o.Level != physio.DegreeSevere {
+			t.Errorf("SaO2 %v: %v, %s", sao2, o.Saturation.Value, o.Level)
 		}
 	}
 }

@@ -172,6 +172,7 @@ const (
 	// cohbOxygen, a fraction in smoke or CO: the usual ends at 2-3 % (from
 	// memory); above it SpO2 takes COHb for oxygen (Buckley 1994).
 	cohbOxygen = 0.03
+	wholeHb    = 0.01 // parts of haemoglobin may add up to so much more than one, by rounding
 	// methbOximeter, a fraction: SpO2 drifts towards 85 % whatever the oxygen
 	// (Barker 1989, from memory).
 	methbOximeter = 0.10

@@ -61,3 +61,10 @@ func (sc *scene) newbornOI() bool {
 func (sc *scene) carbonMonoxide() bool {
 	return sc.v.Val(COHb) > cohbUsual || sc.s.Circumstance.Has(SmokeOrCO)
 }
+
+// leavesOut says that a measured saturation can not be a part of all
+// haemoglobin, as it and the dyshaemoglobin beside it make more than the whole:
+// it is of what is left (FO2Hb = SO2 (1 - FCOHb - FMetHb), sheet, section 8).
+func (sc *scene) leavesOut(sao2 float64) bool {
+	return sc.dyshaemoglobin() && sao2+sc.v.Val(COHb)+sc.v.Val(MetHb) > 1+wholeHb
+}

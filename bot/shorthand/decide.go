@@ -29,11 +29,11 @@ func (d *decider) ask(q Question) { d.gas.Questions = append(d.gas.Questions, q)
 func (d *decider) decide() {
 	d.baseExcessInPlace()
 	d.settlePH()
+	d.sharedUnit()
 	d.settleImpossible()
 	if len(d.raw) == 0 {
 		return
 	}
-	d.sharedUnit()
 	if d.cord() {
 		d.cordPressures()
 	}

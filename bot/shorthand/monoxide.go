@@ -11,12 +11,26 @@ import (
 // litres or a decimal, "co 2 55" is CO2.
 func (r *reader) monoxide() {
 	for i := range r.t {
-		if t := &r.t[i]; t.word("co") && r.countsMonoxide(i) {
+		switch t := &r.t[i]; {
+		case !t.word("co"):
+		case r.countsMonoxide(i):
 			t.e = look("cohb")
+		case r.countsLitres(i):
+			t.e = look("cardiac output")
 		}
 	}
 }
 
+// countsLitres says that the number of CO is a flow that a heart can pump.
+func (r *reader) countsLitres(i int) bool {
+	if i+1 >= len(r.t) || !r.t[i+1].free() || r.t[i+1].v < 1 || r.t[i+1].v > 12 {
+		return false
+	}
+	u, _ := r.unitAfter(i + 1)
+	return u == uLPM || u == uLitre
+}
+
+// countsMonoxide says that a percentage of CO follows.
 func (r *reader) countsMonoxide(i int) bool {
 	j := i + 1
 	for j < len(r.t) && (r.t[j].sep(":=~(") || r.t[j].word("is") || r.t[j].word("of") || r.t[j].word("was")) {

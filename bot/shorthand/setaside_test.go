@@ -7,6 +7,7 @@ import "testing"
 var setAsideLines = []lineTest{
 	{"", "7.30/70/62 kpa 28%", "ph=7.3 paco2=70 pao2=62 fio2=0.28 !read_mmhg:paco2:70=70"},
 	{"", "pco2 70 po2 62 kpa ph 7.30 28%", "ph=7.3 paco2=70 pao2=62 fio2=0.28 !read_mmhg:paco2:70=70"},
+	{"", "ph 7.30 pco2 70 kpa po2 62 kpa 28%", "ph=7.3 paco2=70 pao2=62 fio2=0.28 !read_mmhg:paco2:70=70"},
 	{"", "7.30/9.3/8.2 kpa 28%", "ph=7.3 paco2=69.76 pao2=61.51 fio2=0.28 !read_kpa:paco2:9.3=69.76 !read_kpa:pao2:8.2=61.51"},
 	{"", "cord arterial 6.85/105/10 BE -18", "ph=6.85 paco2=105 pao2=10 be=-18 blood:cord site:cord_artery"},
 	{"", "cord 7.05/80/12 BE -12", "ph=7.05 paco2=80 pao2=12 be=-12 blood:cord"},

@@ -135,12 +135,43 @@ func (r *reader) leadsGas(i, n int) bool {
 // a gestation, or a span of time.
 func (r *reader) daysToMonths(i int, u string, n int) {
 	switch {
+	case u == uWeek && r.weeksOld(i, n):
+		r.ageInWeeks(i, n)
 	case u == uWeek && (r.speaksOfPregnancy() || r.spanIsAge(i, n)):
 		r.weeks(i, n)
 	case u != uWeek && r.spanIsAge(i, n):
 		r.age(i, u, n)
 	default:
 		r.span(i, n)
+	}
+}
+
+// weeksOld says that weeks are the age of an infant and no gestation: too few
+// for one, or said to be an age.
+func (r *reader) weeksOld(i, n int) bool {
+	v, old := r.t[i].v, strings.HasSuffix(r.t[i+n].s, "old")
+	if v < 1 || v > 104 || !old && v > mostWeeksOld || r.durationWord(i, n) || r.speaksOfAdult() || r.labelled(i) {
+		return false
+	}
+	return old || r.besideSex(i+n+1) || r.speaksOfChild()
+}
+
+// mostWeeksOld is below every gestation of a child that lives, common practice.
+const mostWeeksOld = 20.0
+
+// ageInWeeks keeps an infant's age in weeks.
+func (r *reader) ageInWeeks(i, n int) {
+	v, s := r.t[i].v, r.sample()
+	r.take(i, n)
+	if !s.Has(physio.Age) {
+		s.Set(physio.Age, v*7/365.25)
+	}
+	switch {
+	case s.Population != "":
+	case v <= 4:
+		s.Population = physio.Newborn
+	default:
+		s.Population = physio.Child
 	}
 }
 

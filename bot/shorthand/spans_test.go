@@ -26,6 +26,8 @@ var spanLines = []lineTest{
 	{"", "bronchiolitis 4 months 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.3333 on:air pop:child"},
 	{"", "baby 3 months 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.25 on:air pop:newborn"},
 	{"", "wheezy 9 month old 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.75 on:air pop:child"},
+	{"", "8 wk old 7.28/58/62/27 28%", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.28 age=0.1533 pop:child"},
+	{"", "8 weeks 4.2kg bronchiolitis 7.28/58/62/27 28%", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.28 age=0.1533 weight=4.2 pop:child"},
 	{"", "26 weeker 7.30/50/55/24 25%", "ph=7.3 paco2=50 pao2=55 hco3=24 fio2=0.25 gestation=26 pop:preterm"},
 }
 

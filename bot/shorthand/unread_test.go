@@ -23,6 +23,7 @@ var unreadLines = []lineTest{
 	{"", "7.30/50/62/24 ra fco 25", "ph=7.3 paco2=50 pao2=62 hco3=24 fio2=0.21 cohb=0.25 on:air"},
 	{"", "7.30/50/62/24 ra co hb 25", "ph=7.3 paco2=50 pao2=62 hco3=24 fio2=0.21 cohb=0.25 on:air"},
 	{"", "7.30/50/62/24 ra carboxy 25", "ph=7.3 paco2=50 pao2=62 hco3=24 fio2=0.21 cohb=0.25 on:air"},
+	{"", "7.30/50/62/24 ra CO 6 L/min", "ph=7.3 paco2=50 pao2=62 hco3=24 fio2=0.21 co=6 on:air"},
 	{"", "7.30/50/62/24 ra CO 5.2", "ph=7.3 paco2=50 pao2=62 hco3=24 fio2=0.21 co=5.2 on:air"},
 	{"", "ph 7.30 co 50 po2 62 ra", "ph=7.3 pao2=62 fio2=0.21 on:air !not_read:ph:50=50"},
 }

@@ -63,7 +63,7 @@ var unitRows = []row{
 	{unit(uF), "degf, fahrenheit, deg f, degrees f"},
 	{unit(uH2O), "cmh2o, cm h2o, cmh20, cms h2o, cmsh2o, h2o, cwp, cm h20, cmh2os"},
 	{unit(uMbar), "mbar, hpa, mb"},
-	{unit(uWeek), "wk, wks, week, weeks, weeker, wkr, wker, weekers, w ga, wk ga, weeks ga, weeks gestation, wks gestation, week gestation, weeks gestational age"},
+	{unit(uWeek), "wk, wks, week, weeks, wk old, wks old, week old, weeks old, weeker, wkr, wker, weekers, w ga, wk ga, weeks ga, weeks gestation, wks gestation, week gestation, weeks gestational age"},
 	{unit(uYear), "yo, yr, yrs, year, years, y, year old, years old, yr old, yrs old, yom, yof, y o, years of age"},
 	{unit(uMonth), "mo, mth, months, month, mos, month old, months old, mo old"},
 	{unit(uDay), "days, day old, days old, d old"},

@@ -189,10 +189,7 @@ func identity(v []float64) float64 { return v[0] }
 // oxyhaemoglobin takes measured dyshaemoglobin off a saturation of the curve:
 // what is left is the most that can be oxyhaemoglobin.
 func (sc *scene) oxyhaemoglobin(s Interval) Interval {
-	if !sc.dyshaemoglobin() {
-		return s
-	}
-	left := max(0, 1-sc.v.Val(COHb)-sc.v.Val(MetHb))
+	left := sc.leftForOxygen()
 	return Interval{Value: s.Value * left, Low: s.Low * left, High: s.High * left}
 }
 

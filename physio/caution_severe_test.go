@@ -191,3 +191,16 @@ func TestSaturationOfWhatIsLeft(t *testing.T) {
 		}
 	}
 }
+
+// TestContentOfWhatIsLeft: COHb takes its part of the oxygen content too.
+func TestContentOfWhatIsLeft(t *testing.T) {
+	content := func(co float64) float64 {
+		a := adultGas(func(s *physio.Sample) { s.Set(physio.Hb, 15); s.Set(physio.COHb, co) })
+		ix, _ := a.Index("cao2")
+		return ix.Value
+	}
+	dissolved := 0.0031 * 90 // mL/dL: oxygenation sheet, section 8
+	if got, want := content(0.30)-dissolved, 0.70*(content(0)-dissolved); math.Abs(got-want) > 0.05 {
+		t.Errorf("bound oxygen with COHb 30 %%: %.2f, want %.2f mL/dL", got, want)
+	}
+}

@@ -44,11 +44,15 @@ func (sc *scene) arterialContent() {
 	if !sc.v.Has(Hb, PaO2) || !sc.lungO2 {
 		return
 	}
-	if sc.v.Has(SaO2) {
-		sc.addContent(func(v *Values) float64 { return v.Val(SaO2) }, []Quantity{Hb, PaO2, SaO2})
+	left := sc.leftForOxygen()
+	if s, ok := sc.v.Get(SaO2); ok {
+		if !sc.leavesOut(s) {
+			left = 1
+		}
+		sc.addContent(func(v *Values) float64 { return v.Val(SaO2) * left }, []Quantity{Hb, PaO2, SaO2})
 		return
 	}
-	sc.addContent(sc.curveAt, sc.curveInputs(Hb))
+	sc.addContent(func(v *Values) float64 { return sc.curveAt(v) * left }, sc.curveInputs(Hb))
 }
 
 func (sc *scene) addContent(sat func(*Values) float64, on []Quantity) {

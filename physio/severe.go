@@ -68,3 +68,12 @@ func (sc *scene) carbonMonoxide() bool {
 func (sc *scene) leavesOut(sao2 float64) bool {
 	return sc.dyshaemoglobin() && sao2+sc.v.Val(COHb)+sc.v.Val(MetHb) > 1+wholeHb
 }
+
+// leftForOxygen is the part of haemoglobin that can carry oxygen beside a
+// measured dyshaemoglobin.
+func (sc *scene) leftForOxygen() float64 {
+	if !sc.dyshaemoglobin() {
+		return 1
+	}
+	return max(0, 1-sc.v.Val(COHb)-sc.v.Val(MetHb))
+}

@@ -19,6 +19,9 @@ var attachedLines = []lineTest{
 	{"", "oscillating 7.30/50/60 fio2 60", "ph=7.3 paco2=50 pao2=60 fio2=0.6 on:ventilator mode:HFOV"},
 	// a Venturi valve is named by its percentage
 	{"", "7.30/60/60/29 28 venti", "ph=7.3 paco2=60 pao2=60 hco3=29 fio2=0.28 on:venturi"},
+	{"", "7.30 60 60 29 28 venti", "ph=7.3 paco2=60 pao2=60 hco3=29 fio2=0.28 on:venturi"},
+	{"", "7.30/60/60/29 28 vm 4L", "ph=7.3 paco2=60 pao2=60 hco3=29 fio2=0.28 flow=4 on:venturi"},
+	{"", "2L o2 7.30/60/60/29", "ph=7.3 paco2=60 pao2=60 hco3=29 flow=2 taken:cannula !cannula_taken:flow:2=2"},
 	{"", "7.30/60/60/29 35 venturi", "ph=7.3 paco2=60 pao2=60 hco3=29 fio2=0.35 on:venturi"},
 	{"", "7.30/60/60/29 venti 28", "ph=7.3 paco2=60 pao2=60 hco3=29 fio2=0.28 on:venturi"},
 	{"", "7.30/60/60/29 28% venti", "ph=7.3 paco2=60 pao2=60 hco3=29 fio2=0.28 on:venturi"},

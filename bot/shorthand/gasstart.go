@@ -19,7 +19,7 @@ func gasStart(t []token, i int) bool {
 		return false
 	}
 	n, slashes := chainAhead(t, i)
-	if q, ok := labelDirectlyBefore(t, i); ok && !(slashes && n >= 3 && p.decimals == 2 && q != physio.PaCO2 && q != physio.PaO2) {
+	if q, ok := labelDirectlyBefore(t, i); ok && !(slashes && n >= 3 && p.decimals == 2 && q != physio.PaCO2 && (q != physio.PaO2 || t[i-1].word("o2"))) {
 		return false
 	}
 	if phLike(p.v) && p.decimals > 0 {
@@ -29,7 +29,9 @@ func gasStart(t []token, i int) bool {
 		return n >= 2 && (slashes || n >= 3 || p.decimals == 2)
 	}
 	tied := i > 1 && t[i-1].sep("/|\\,;-") && t[i-2].kind == tokNumber && t[i-1].line == p.line
-	if !slashes || n < 3 || tied || p.s == "7" && n < 4 {
+	// Four numbers with blanks between and a pH that lost its point: "728 58 62 27".
+	spaced := !slashes && n >= 4 && p.decimals == 0 && p.v >= 650 && p.v < 800
+	if !slashes && !spaced || n < 3 || tied || p.s == "7" && n < 4 {
 		return false
 	}
 	return oddPH(p) && pressuresFollow(t, i)

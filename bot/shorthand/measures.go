@@ -32,6 +32,9 @@ func (r *reader) unitAfter(i int) (string, int) {
 	if t.s == "m" && (t.glued || r.metresHigh(i) || r.t[i].decimals > 0 && r.t[i].v > 1 && r.t[i].v < 2.5) {
 		return uMetre, 1
 	}
+	if t.s == "do" && t.glued {
+		return uDay, 1
+	}
 	if t.s == "f" && t.glued && r.t[i].v > 80 {
 		return uF, 1
 	}

@@ -253,6 +253,9 @@ func (r *reader) unknownBefore(i int) bool {
 // that are set in litres, per cent for those that are set in per cent.
 func (r *reader) flowOrFiO2(i int, d physio.Device, nums []int) {
 	j := -1
+	if d == physio.Venturi {
+		nums = r.valveBefore(i, nums)
+	}
 	if len(nums) > 0 {
 		j = nums[0]
 	} else if i > 0 && r.t[i-1].free() && r.t[i-1].line == r.t[i].line && !r.joined(i-1) && (i < 2 || r.t[i-2].kind != tokNumber || r.t[i].glued || d == physio.Venturi && r.valveSize(i-1)) {

@@ -8,29 +8,46 @@ import (
 
 // spanIsAge says that days, weeks or months are somebody's age and not how
 // long something lasts: a word of age or of a small child stands with them, or
-// they lead the line and the gas follows at once. Beside an adult they are
+// weeks or months lead the line and the gas follows at once. Beside an adult they are
 // never an age.
 func (r *reader) spanIsAge(i, n int) bool {
 	switch {
 	case r.speaksOfAdult():
 		return false
-	case saysOld(r.t[i+n].s), r.besideSex(i + n + 1), r.speaksOfChild():
+	case saysOld(r.t[i+n].s), r.besideSex(i + n + 1):
 		return true
 	}
-	return r.leadsGas(i, n)
+	days := r.t[i+n].e.ofAge() && r.t[i+n].e.unit == uDay
+	if r.speaksOfChild() {
+		return !days || !r.behindIllness(i)
+	}
+	return !days && r.leadsGas(i, n)
 }
 
 // saysOld says that the unit itself is one of age.
 func saysOld(unit string) bool {
-	if unit == "mo" {
-		return false // "for 3 mo" is as common
-	}
-	for _, end := range []string{"old", "weeker", "weekers", "wkr", "wker", "ga", "gestation", "age"} {
+	for _, end := range []string{"old", "do", "weeker", "weekers", "wkr", "wker", "ga", "gestation", "age"} {
 		if strings.HasSuffix(unit, end) {
 			return true
 		}
 	}
 	return false
+}
+
+// behindIllness says that the word directly before the number at i is none of
+// age or of a small child: "croup 2 days", "ventilated 2 days".
+func (r *reader) behindIllness(i int) bool {
+	if i == 0 || r.t[i-1].kind != tokWord || r.t[i-1].line != r.t[i].line {
+		return false
+	}
+	t := &r.t[i-1]
+	switch {
+	case t.word("age"), t.word("aged"), t.is(senseFiller), t.word("boy"), t.word("girl"), t.word("m"), t.word("f"):
+		return false
+	case t.e != nil && (t.e.pop != "" || t.e.sex != "" || t.e.site != "" || t.e.blood != "" || t.is(senseUnit) || t.is(senseAir)):
+		return false
+	}
+	return true
 }
 
 // besideSex says that the token at i is the sex behind an age: "3mo m".

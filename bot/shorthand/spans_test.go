@@ -28,6 +28,10 @@ var spanLines = []lineTest{
 	{"", "wheezy 9 month old 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.75 on:air pop:child"},
 	{"", "8 wk old 7.28/58/62/27 28%", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.28 age=0.1533 pop:child"},
 	{"", "8 weeks 4.2kg bronchiolitis 7.28/58/62/27 28%", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.28 age=0.1533 weight=4.2 pop:child"},
+	{"", "child 7.44/34/58/23 ra croup 2 days", "ph=7.44 paco2=34 pao2=58 hco3=23 fio2=0.21 on:air pop:child"},
+	{"", "5 days 7.44/34/58/23 ra", "ph=7.44 paco2=34 pao2=58 hco3=23 fio2=0.21 on:air"},
+	{"", "3do 7.30/50/55/24 25%", "ph=7.3 paco2=50 pao2=55 hco3=24 fio2=0.25 age=0.008214 pop:newborn"},
+	{"", "3 d/o 7.30/50/55/24 25%", "ph=7.3 paco2=50 pao2=55 hco3=24 fio2=0.25 age=0.008214 pop:newborn"},
 	{"", "26 weeker 7.30/50/55/24 25%", "ph=7.3 paco2=50 pao2=55 hco3=24 fio2=0.25 gestation=26 pop:preterm"},
 }
 

@@ -78,7 +78,7 @@ var compounds = []struct{ typed, word string }{
 	{"l/kg/min", "l/kg"}, {"l/min/kg", "l/kg"}, {"lpm/kg", "l/kg"}, {"l/kg", "l/kg"}, {"l/min", "l/min"}, {"l/m", "l/min"}, {"ml/kg", "ml/kg"}, {"cc/kg", "ml/kg"}, {"mg/dl", "mg/dl"},
 	{"g/dl", "g/dl"}, {"gm/dl", "g/dl"}, {"g/l", "g/l"}, {"gr/dl", "g/dl"},
 	{"p/f", "pf"}, {"s/f", "sf"}, {"a/a", "aa"}, {"a-a", "aa"}, {"vd/vt", "vdvt"}, {"i:e", "ie"},
-	{"y/o", "yo"}, {"m/o", "month old"}, {"mth/o", "month old"}, {"n/c", "nc"}, {"r/a", "ra"}, {"v/q", "vq"}, {"f/vt", "rsbi"}, {"s/p", "post"},
+	{"y/o", "yo"}, {"m/o", "month old"}, {"d/o", "day old"}, {"mth/o", "month old"}, {"n/c", "nc"}, {"r/a", "ra"}, {"v/q", "vq"}, {"f/vt", "rsbi"}, {"s/p", "post"},
 	{"w/o", "without"}, {"w/", "with"}, {"r/o", "rule"}, {"h/o", "history"}, {"c/o", "complains"},
 	{"t/c", "trach collar"}, {"t-piece", "tpiece"}, {"h+", "h+"}, {"x-ray", "xray"}, {"ac/vc", "ac"},
 	{"a/c", "ac"}, {"vc/ac", "ac"}, {"vc+", "prvc"}, {"pc/ac", "pcv"}, {"ac/pc", "pcv"}, {"pc-ac", "pcv"}, {"c-pap", "cpap"}, {"bi-pap", "bipap"},

@@ -155,15 +155,20 @@ func TestBandOfTheScale(t *testing.T) {
 }
 
 // TestCircuitKeepsTheLevel: on a circuit PaO2 tells the patient's level and
-// nothing of the lung; during resuscitation neither.
+// nothing of the lung; during resuscitation, or from blood that may be the
+// circuit's, neither.
 func TestCircuitKeepsTheLevel(t *testing.T) {
-	a := adultGas(func(s *physio.Sample) { s.Circumstance = physio.ECMO; s.Set(physio.FiO2, 0.5) })
-	if o := a.Oxygenation; o.Level != physio.DegreeAdequate || o.Efficiency != physio.EfficiencyUnknown {
+	on := func(b physio.Blood, c physio.Circumstance) physio.Oxygenation {
+		return adultGas(func(s *physio.Sample) { s.Blood, s.Circumstance = b, c; s.Set(physio.FiO2, 0.5) }).Oxygenation
+	}
+	if o := on(physio.Arterial, physio.ECMO); o.Level != physio.DegreeAdequate || o.Efficiency != physio.EfficiencyUnknown {
 		t.Errorf("ECMO: %s, %s", o.Level, o.Efficiency)
 	}
-	b := adultGas(func(s *physio.Sample) { s.Circumstance = physio.ECMO | physio.CPR })
-	if b.Oxygenation.Level != physio.DegreeUnknown {
-		t.Errorf("CPR: %s", b.Oxygenation.Level)
+	if o := on(physio.Arterial, physio.ECMO|physio.CPR); o.Level != physio.DegreeUnknown {
+		t.Errorf("CPR: %s", o.Level)
+	}
+	if o := on(physio.BloodUnstated, physio.ECMO); o.Level != physio.DegreeUnknown {
+		t.Errorf("a gas that may be the circuit's: %s", o.Level)
 	}
 }
 

@@ -21,10 +21,11 @@ func (sc *scene) controlled() bool {
 }
 
 // patientO2 says that PaO2 and SaO2 tell the level of the patient: where a
-// circuit shares the work they do so still, and only the lung stays unknown.
+// circuit shares the work they do so still, and only the lung stays unknown. The
+// blood must then be said to be arterial: it could be the circuit's.
 func (sc *scene) patientO2() bool {
 	circuit := sc.s.Circumstance.Has(ECMO) && !sc.s.Circumstance.Has(CPR)
-	return sc.lungO2 || circuit && sc.a.Blood == Arterial && !sc.venousLooking
+	return sc.lungO2 || circuit && sc.s.Blood == Arterial
 }
 
 // oximeterBlind says that an oximeter takes what haemoglobin carries for

@@ -41,7 +41,7 @@ func (p *parser) clauses(t []token, s string) (intent Intent, clause, rest []tok
 		if len(s) > 2000 || !try.words.may(&g) {
 			continue
 		}
-		at := try.words.re.FindStringIndex(s)
+		at := try.words.compiled().FindStringIndex(s)
 		if at == nil {
 			continue
 		}

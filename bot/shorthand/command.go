@@ -1,7 +1,6 @@
 package shorthand
 
 import (
-	"regexp"
 	"strings"
 )
 
@@ -53,8 +52,8 @@ func houseRule(s string, g *grams) (argument string, sentence, ok bool) {
 		if joined == "" {
 			joined = strings.Join(strings.Fields(strings.TrimRight(s, " .!?")), " ")
 		}
-		if m := f.typed.re.FindStringSubmatchIndex(joined); m != nil && len(joined) <= 300 {
-			arg := string(f.typed.re.ExpandString(nil, f.means, joined, m))
+		if m := f.typed.compiled().FindStringSubmatchIndex(joined); m != nil && len(joined) <= 300 {
+			arg := string(f.typed.compiled().ExpandString(nil, f.means, joined, m))
 			return clean(strings.Replace(arg, "order is ", "order ", 1)), !f.plain, true
 		}
 	}
@@ -132,7 +131,7 @@ func command(s string) (Intent, string) {
 	if strings.HasPrefix(rest, "'") || strings.HasPrefix(rest, "-") && word != "check" {
 		return IntentNone, s
 	}
-	if word == "second" && countsGas.MatchString(rest) {
+	if word == "second" && countsGas().MatchString(rest) {
 		return IntentNone, s
 	}
 	if intent, ok := commandWords[word]; ok {
@@ -142,7 +141,7 @@ func command(s string) (Intent, string) {
 }
 
 // countsGas says that "second" counts: "second gas 7.30/...".
-var countsGas = regexp.MustCompile(`^\s*(gas|abg|vbg|cbg|sample|set|one|stick|draw|of|day|unit)\b`)
+var countsGas = lazily(`^\s*(gas|abg|vbg|cbg|sample|set|one|stick|draw|of|day|unit)\b`)
 
 // loose says that a command may be taken from a message that was not meant for
 // the bot in so many words: the bare command, or one with a bed label.
@@ -153,7 +152,7 @@ func loose(intent Intent, rest string) bool {
 	}
 	switch intent {
 	case IntentTrend, IntentRecord, IntentForget:
-		return bedOnly.MatchString(rest)
+		return bedOnly().MatchString(rest)
 	case IntentBeds:
 		return rest == "list" || rest == "list please" || rest == "please"
 	case IntentHouse:
@@ -162,4 +161,4 @@ func loose(intent Intent, rest string) bool {
 	return false
 }
 
-var bedOnly = regexp.MustCompile(`^(?:bed|b|room|rm|bay|case)?\s*#?\d{1,4}[a-z]?$`)
+var bedOnly = lazily(`^(?:bed|b|room|rm|bay|case)?\s*#?\d{1,4}[a-z]?$`)

@@ -15,8 +15,10 @@
 // question.
 //
 // The patterns for words, of identifiers, requests and jobs, are dear: each
-// stands behind a sieve (sieve.go, grams.go) that is derived from the pattern
-// and says from the pieces of a text that it can not match.
+// stands behind a sieve (sieve.go, grams.go) that says from the pieces of a
+// text that it can not match. What the sieve asks for is derived from the
+// pattern (derive.go) and stored (stored.go, stored_sieves.go); go generate
+// renews it after a change of a pattern.
 //
 // The lexer with positions, the one vocabulary table (spellings, accepted
 // units), the reading of unlabelled values by order, the comparison of two

@@ -50,7 +50,7 @@ func foldRune(b *strings.Builder, r rune) {
 }
 
 func foldOther(b *strings.Builder, r rune) {
-	if s, ok := foldTable[r]; ok {
+	if s, ok := foldTable()[r]; ok {
 		b.WriteString(s)
 		return
 	}

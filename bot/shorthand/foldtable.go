@@ -1,8 +1,10 @@
 package shorthand
 
+import "sync"
+
 // foldTable maps single characters to what they mean on a typed line. Data
 // only; the ranges that follow a rule stand in fold.go.
-var foldTable = buildFoldTable()
+var foldTable = sync.OnceValue(buildFoldTable)
 
 func buildFoldTable() map[rune]string {
 	t := map[rune]string{}

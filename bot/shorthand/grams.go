@@ -127,10 +127,29 @@ func digitsTo(before int, c byte) int {
 	return 0
 }
 
+// part gives the part at the front of laid out needs, and what is behind it.
+func part(needs []uint16) (first, rest []uint16) {
+	end := 1 + int(needs[0])
+	return needs[1:end], needs[end:]
+}
+
+// holdsAll says that each group of the branch has a member that may occur.
+func (g *grams) holdsAll(branch []uint16) bool {
+	for len(branch) > 0 {
+		var group []uint16
+		if group, branch = part(branch); !g.holdsOne(group) {
+			return false
+		}
+	}
+	return true
+}
+
 // holdsOne says that a member of the group may occur.
-func (g *grams) holdsOne(group []member) bool {
+func (g *grams) holdsOne(group []uint16) bool {
 next:
-	for _, m := range group {
+	for len(group) > 0 {
+		var m []uint16
+		m, group = part(group)
 		for _, i := range m {
 			if !g.has(i) {
 				continue next

@@ -1,9 +1,6 @@
 package shorthand
 
-import (
-	"regexp"
-	"strings"
-)
+import "strings"
 
 // The identifiers that a typed line can hold, after the list of 45 CFR
 // 164.514(b)(2). They are looked for in the folded text, upper case kept. The
@@ -57,7 +54,7 @@ func identified(s string) Refused {
 		if masked == "" {
 			masked = maskGas(s)
 		}
-		if r.re.MatchString(masked) {
+		if r.compiled().MatchString(masked) {
 			return RefusedIdentifier
 		}
 	}
@@ -72,12 +69,12 @@ func identified(s string) Refused {
 }
 
 // gasChain is a run of gas values, which no rule on digits may trip over.
-var gasChain = regexp.MustCompile(`\b[67][.,]\d{1,3}(\s?[/|\\;:,.-]\s?[<>+-]?\d{1,3}([.,]\d{1,2})?\b){1,7}|\b\d{3,4} ?(-|to) ?\d{3,4} ?(?i:ml|m|ft|feet)\b`)
+var gasChain = lazily(`\b[67][.,]\d{1,3}(\s?[/|\\;:,.-]\s?[<>+-]?\d{1,3}([.,]\d{1,2})?\b){1,7}|\b\d{3,4} ?(-|to) ?\d{3,4} ?(?i:ml|m|ft|feet)\b`)
 
 // gasMask stands in for a run of gas values.
 const gasMask = " gas "
 
-func maskGas(s string) string { return gasChain.ReplaceAllString(s, gasMask) }
+func maskGas(s string) string { return gasChain().ReplaceAllString(s, gasMask) }
 
 // named looks for names: behind a title, behind "patient:", as "Last, First",
 // behind a bed label, as initials behind a room.
@@ -113,7 +110,7 @@ func named(s string, g *grams) bool {
 func beforeGas(s string, g *grams) bool {
 	for _, m := range twoNames.all(s, g) {
 		if !known(m[1]) && !known(m[2]) {
-			return gasChain.MatchString(s)
+			return gasChain().MatchString(s)
 		}
 	}
 	return false

@@ -123,7 +123,7 @@ func TestInjectedErrorsAreDoubted(t *testing.T) {
 	} {
 		m := gasMaker{rand.New(rand.NewSource(3))}
 		seen, caught := 0, 0
-		for seen < 1500 {
+		for seen < 600 {
 			line, counts := e.spoil(m, m.gas())
 			if !counts {
 				continue

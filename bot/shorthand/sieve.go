@@ -2,236 +2,53 @@ package shorthand
 
 import (
 	"regexp"
-	"regexp/syntax"
-	"sort"
+	"sync"
 )
 
 // sieve is a pattern with what a text must hold before the pattern can match.
-// That is derived from the pattern itself, so that it can never leave out a
-// match; most lines hold none of it, and the pattern, which is dear, is not
-// tried.
+// That is derived from the pattern itself (derive.go), so that it can never
+// leave out a match; most lines hold none of it, and the pattern, which is
+// dear, is neither compiled nor tried.
 type sieve struct {
-	re *regexp.Regexp
-	// branches are the alternatives of the pattern.
-	branches []branch
+	pattern  string
+	compiled func() *regexp.Regexp
+	// needed gives the needs as needsOf lays them out.
+	needed func() []uint16
 }
 
-// branch lists groups, each with a member that occurs in every match.
-type branch [][]member
-
-// member is a piece of text that may have to occur, as the grams it is made of.
-type member []uint16
-
-// sift compiles a pattern with its branches.
+// sift takes a pattern; nothing is compiled or derived before it is used.
 func sift(pattern string) *sieve {
-	s := &sieve{re: regexp.MustCompile(pattern)}
-	tree, err := syntax.Parse(pattern, syntax.Perl)
-	if err != nil {
-		return &sieve{re: s.re, branches: []branch{nil}}
+	return &sieve{
+		pattern:  pattern,
+		compiled: lazily(pattern),
+		needed:   sync.OnceValue(func() []uint16 { return storedNeeds(pattern) }),
 	}
-	for _, part := range alternatives(tree.Simplify()) {
-		s.branches = append(s.branches, branchOf(derive(part).asGroups()))
-	}
-	return s
 }
 
-// alternatives are the parts of a pattern of which one matches. The parser
-// puts what all begin with, such as a word's edge, in front of them.
-func alternatives(re *syntax.Regexp) []*syntax.Regexp {
-	switch n := len(re.Sub); {
-	case re.Op == syntax.OpAlternate:
-		return re.Sub
-	case re.Op == syntax.OpConcat && n == 2 && re.Sub[0].Op == syntax.OpWordBoundary:
-		return alternatives(re.Sub[1])
-	}
-	return []*syntax.Regexp{re}
+// lazily compiles a pattern when it is first used.
+func lazily(pattern string) func() *regexp.Regexp {
+	return sync.OnceValue(func() *regexp.Regexp { return regexp.MustCompile(pattern) })
 }
 
-// branchOf puts the rarest group first.
-func branchOf(groups [][]string) branch {
-	sort.SliceStable(groups, func(a, b int) bool { return likeliness(groups[a]) < likeliness(groups[b]) })
-	var b branch
-	for _, group := range groups {
-		members := make([]member, 0, len(group))
-		for _, text := range group {
-			members = append(members, gramsOf(text))
-		}
-		b = append(b, members)
-	}
-	return b
-}
-
-// may says that a text with these grams may hold a match.
+// may says that a text with these grams may hold a match: all groups of one
+// branch have a member in it.
 func (s *sieve) may(g *grams) bool {
-next:
-	for _, b := range s.branches {
-		for _, group := range b {
-			if !g.holdsOne(group) {
-				continue next
-			}
+	for needs := s.needed(); len(needs) > 0; {
+		var branch []uint16
+		if branch, needs = part(needs); g.holdsAll(branch) {
+			return true
 		}
-		return true
 	}
 	return false
 }
 
 // in says that the text, whose grams g holds, matches.
-func (s *sieve) in(text string, g *grams) bool { return s.may(g) && s.re.MatchString(text) }
+func (s *sieve) in(text string, g *grams) bool { return s.may(g) && s.compiled().MatchString(text) }
 
 // all gives up to eight matches with their groups.
 func (s *sieve) all(text string, g *grams) [][]string {
 	if !s.may(g) {
 		return nil
 	}
-	return s.re.FindAllStringSubmatch(text, 8)
-}
-
-// likeliness is a rough chance that a line without a match holds the group.
-func likeliness(group []string) float64 {
-	sum := 0.0
-	for _, text := range group {
-		p := 1.0
-		for range min(len(text), 6) {
-			p /= 8
-		}
-		sum += p
-	}
-	return sum
-}
-
-// need is what is known of all matches of a part of a pattern.
-type need struct {
-	// exact are all texts that match, nil when they are too many.
-	exact []string
-	// groups each have a member that occurs in every match.
-	groups [][]string
-}
-
-// mostExact bounds the texts that are listed for a part.
-const mostExact = 256
-
-func (n need) asGroups() [][]string {
-	if n.exact != nil {
-		return addGroup(nil, n.exact)
-	}
-	return n.groups
-}
-
-// addGroup keeps a group that says something: an empty member always occurs.
-func addGroup(groups [][]string, group []string) [][]string {
-	for _, text := range group {
-		if text == "" {
-			return groups
-		}
-	}
-	return append(groups, group)
-}
-
-func derive(re *syntax.Regexp) need {
-	switch re.Op {
-	case syntax.OpEmptyMatch, syntax.OpBeginLine, syntax.OpEndLine, syntax.OpBeginText, syntax.OpEndText, syntax.OpWordBoundary, syntax.OpNoWordBoundary:
-		return need{exact: []string{""}}
-	case syntax.OpLiteral:
-		return need{exact: []string{plainText(string(re.Rune))}}
-	case syntax.OpCharClass:
-		return needOfClass(re.Rune)
-	case syntax.OpCapture:
-		return derive(re.Sub[0])
-	case syntax.OpPlus:
-		return need{groups: derive(re.Sub[0]).asGroups()}
-	case syntax.OpQuest:
-		if sub := derive(re.Sub[0]); sub.exact != nil {
-			return need{exact: append([]string{""}, sub.exact...)}
-		}
-	case syntax.OpConcat:
-		return needOfAll(re.Sub)
-	case syntax.OpAlternate:
-		return needOfOne(re.Sub)
-	}
-	return need{}
-}
-
-// needOfClass lists the members of a small class. A class of capitals needs
-// one, which the grams mark.
-func needOfClass(pairs []rune) need {
-	seen := map[string]bool{}
-	capitals := len(pairs) > 0
-	for i := 0; i < len(pairs); i += 2 {
-		lo, hi := pairs[i], pairs[i+1]
-		capitals = capitals && lo >= 'A' && hi <= 'Z'
-		for r := lo; r <= hi && r < 0x80 && len(seen) <= 12; r++ {
-			seen[plainText(string(r))] = true
-		}
-	}
-	switch {
-	case capitals && len(seen) > 12:
-		return need{groups: [][]string{{capital}}}
-	case len(seen) == 0 || len(seen) > 12:
-		return need{}
-	}
-	var out need
-	for text := range seen {
-		out.exact = append(out.exact, text)
-	}
-	sort.Strings(out.exact)
-	return out
-}
-
-// needOfAll joins the needs of parts that follow each other.
-func needOfAll(parts []*syntax.Regexp) need {
-	var groups [][]string
-	run, whole := []string{""}, true
-	for _, part := range parts {
-		n := derive(part)
-		switch {
-		case n.exact == nil:
-			groups = append(addGroup(groups, run), n.groups...)
-			run, whole = []string{""}, false
-		case len(run)*len(n.exact) > mostExact:
-			groups = addGroup(groups, run)
-			run, whole = n.exact, false
-		default:
-			run = crossed(run, n.exact)
-		}
-	}
-	if whole {
-		return need{exact: run}
-	}
-	return need{groups: addGroup(groups, run)}
-}
-
-func crossed(a, b []string) []string {
-	out := make([]string, 0, len(a)*len(b))
-	for _, x := range a {
-		for _, y := range b {
-			out = append(out, plainText(x+y))
-		}
-	}
-	return out
-}
-
-// needOfOne joins the needs of alternatives: the rarest group of each.
-func needOfOne(parts []*syntax.Regexp) need {
-	var exact, group []string
-	whole := true
-	for _, part := range parts {
-		n := derive(part)
-		whole = whole && n.exact != nil
-		exact = append(exact, n.exact...)
-		groups := n.asGroups()
-		if len(groups) == 0 {
-			groups = [][]string{{""}}
-		}
-		rarest := groups[0]
-		for _, g := range groups[1:] {
-			if likeliness(g) < likeliness(rarest) {
-				rarest = g
-			}
-		}
-		group = append(group, rarest...)
-	}
-	if whole && len(exact) <= mostExact {
-		return need{exact: exact}
-	}
-	return need{groups: addGroup(nil, group)}
+	return s.compiled().FindAllStringSubmatch(text, 8)
 }

@@ -26,23 +26,23 @@ func sieves() []*sieve {
 func TestSievesLetEveryMatchThrough(t *testing.T) {
 	rng := rand.New(rand.NewSource(4))
 	for _, s := range sieves() {
-		tree, err := syntax.Parse(s.re.String(), syntax.Perl)
+		tree, err := syntax.Parse(s.pattern, syntax.Perl)
 		if err != nil {
 			t.Fatal(err)
 		}
 		matched := 0
-		for range 600 {
+		for n := 0; n < 600 && matched < 40; n++ {
 			var b strings.Builder
 			write(&b, tree, rng)
 			for _, text := range []string{b.String(), "see " + b.String() + " 7.28/58/62/27 40%"} {
-				if s.re.MatchString(text) {
+				if s.compiled().MatchString(text) {
 					matched++
 				}
 				letThrough(t, s, text)
 			}
 		}
 		if matched < 3 {
-			t.Errorf("%.40s: only %d texts matched", s.re, matched)
+			t.Errorf("%.40s: only %d texts matched", s.pattern, matched)
 		}
 	}
 	for _, m := range readMessages(t) {
@@ -59,11 +59,11 @@ func letThrough(t *testing.T, s *sieve, text string) {
 	var g, masked grams
 	g.read(text)
 	masked.readMasked(text)
-	if s.re.MatchString(text) && !s.may(&g) {
-		t.Fatalf("%q is held back from %s", text, s.re)
+	if s.compiled().MatchString(text) && !s.may(&g) {
+		t.Fatalf("%q is held back from %s", text, s.pattern)
 	}
-	if s.re.MatchString(maskGas(text)) && !s.may(&masked) {
-		t.Fatalf("%q, with its gas hidden, is held back from %s", text, s.re)
+	if s.compiled().MatchString(maskGas(text)) && !s.may(&masked) {
+		t.Fatalf("%q, with its gas hidden, is held back from %s", text, s.pattern)
 	}
 }
 
@@ -106,7 +106,7 @@ func TestSievesHoldBackUsualLines(t *testing.T) {
 		var tried []string
 		for _, s := range sieves() {
 			if s.may(&g) {
-				tried = append(tried, s.re.String()[:min(len(s.re.String()), 30)])
+				tried = append(tried, s.pattern[:min(len(s.pattern), 30)])
 			}
 		}
 		if len(tried) > 3 {

@@ -1,19 +1,16 @@
 package shorthand
 
-import (
-	"regexp"
-	"strings"
-)
+import "strings"
 
 // referenceRange is a range in brackets that a print-out puts behind a value.
-var referenceRange = regexp.MustCompile(`[(\[]\s*-?\d+(?:[.,]\d+)?\s*(?:-|to)\s*-?\d+(?:[.,]\d+)?\s*[a-z/%0-9]{0,8}\s*[)\]]`)
+var referenceRange = lazily(`[(\[]\s*-?\d+(?:[.,]\d+)?\s*(?:-|to)\s*-?\d+(?:[.,]\d+)?\s*[a-z/%0-9]{0,8}\s*[)\]]`)
 
 // dropRanges takes reference ranges out of a pasted print-out.
 func dropRanges(s string) string {
 	if !strings.ContainsAny(s, "([") {
 		return s
 	}
-	return referenceRange.ReplaceAllString(s, " ")
+	return referenceRange().ReplaceAllString(s, " ")
 }
 
 // untable turns a pasted table with a head line into lines of labels and

@@ -32,9 +32,6 @@ type token struct {
 	used    bool
 	// taken marks a number that belongs to a word that is no value.
 	taken bool
-	// mixed marks a number cut from a chain of commas that could be cut in
-	// other ways.
-	mixed bool
 }
 
 func (t *token) is(s sense) bool { return t.kind == tokWord && t.e != nil && t.e.sense == s }

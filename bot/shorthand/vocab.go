@@ -56,10 +56,11 @@ type row struct {
 var vocabulary, phraseLength = buildVocabulary()
 
 func buildVocabulary() (map[string]*entry, map[string]int) {
-	words, lengths := map[string]*entry{}, map[string]int{}
+	const spellings, starts = 3000, 1800 // about as many as there are
+	words, lengths := make(map[string]*entry, spellings), make(map[string]int, starts)
 	for _, rows := range [][]row{valueRows, unitRows, deviceRows, saidRows, wordRows} {
 		for i := range rows {
-			for _, s := range strings.Split(rows[i].spellings, ",") {
+			for s := range strings.SplitSeq(rows[i].spellings, ",") {
 				s = strings.TrimSpace(s)
 				words[s] = &rows[i].e
 				first, _, _ := strings.Cut(s, " ")

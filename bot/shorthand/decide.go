@@ -156,7 +156,7 @@ func (d *decider) sure(kept *reading, q physio.Quantity, kpa bool) bool {
 		return true // in the house's unit; the other pressure differs
 	}
 	other := d.raw[physio.PaCO2]
-	return kpa == false && other != nil && other.unit == uKPa
+	return !kpa && other != nil && other.unit == uKPa
 }
 
 // askUnits asks kPa or mmHg for both pressures and keeps neither.

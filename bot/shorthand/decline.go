@@ -45,7 +45,7 @@ func predictsPressure(change *physio.Values, s string) bool {
 	for _, q := range []physio.Quantity{physio.PEEP, physio.IPAP, physio.EPAP, physio.CPAP, physio.PS, physio.PC, physio.PIP, physio.Pmean, physio.PHigh} {
 		pressures = pressures || change.Has(q)
 	}
-	return pressures && asksOxygen.re.MatchString(s)
+	return pressures && asksOxygen.compiled().MatchString(s)
 }
 
 var asksOxygen = sift(`\b(what|how|whats|which|does|will|would|effect|predict)\b.{0,40}\b(po2|pao2|o2|sat|sats|spo2|oxygen\w*|p/f|co2|pco2)\b|\b(po2|pao2|o2|sat|sats|spo2|p/f)\s*\?`)

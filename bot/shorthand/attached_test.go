@@ -17,6 +17,7 @@ var attachedLines = []lineTest{
 	{"", "bleed in brain 7.30/30/80/15 ra", "ph=7.3 paco2=30 pao2=80 hco3=15 fio2=0.21 on:air"},
 	{"", "hfo 7.30/50/60 fio2 60", "ph=7.3 paco2=50 pao2=60 fio2=0.6 on:ventilator mode:HFOV"},
 	{"", "oscillating 7.30/50/60 fio2 60", "ph=7.3 paco2=50 pao2=60 fio2=0.6 on:ventilator mode:HFOV"},
+	{"", "spinal cord injury 7.40/40/90/24 ra", "ph=7.4 paco2=40 pao2=90 hco3=24 fio2=0.21 on:air"},
 	// a Venturi valve is named by its percentage
 	{"", "7.30/60/60/29 28 venti", "ph=7.3 paco2=60 pao2=60 hco3=29 fio2=0.28 on:venturi"},
 	{"", "7.30 60 60 29 28 venti", "ph=7.3 paco2=60 pao2=60 hco3=29 fio2=0.28 on:venturi"},

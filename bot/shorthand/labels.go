@@ -141,6 +141,10 @@ func (r *reader) label(i int) {
 		}
 	}
 	u, n := r.unitAfter(j)
+	if n > 0 && isCore(r.t[i].e.q) && r.t[j+n].e.ofAge() {
+		r.span(j, n) // "home o2 6 months": how long, no value
+		return
+	}
 	if r.rangeBehind(j) {
 		r.t[j+2].taken = true
 		f := formOf(r.t[i].e.q, &r.t[j], u, r.adult())

@@ -19,6 +19,7 @@ var spanLines = []lineTest{
 	{"", "unwell 24 weeks 7.44/34/58/23 ra", "ph=7.44 paco2=34 pao2=58 hco3=23 fio2=0.21 on:air"},
 	{"", "copd 7.31/64/58/32 28% slower over 26 weeks", "ph=7.31 paco2=64 pao2=58 hco3=32 fio2=0.28 said:copd"},
 	{"", "72 yo man covid 10 days 7.44/34/58/23 ra", "ph=7.44 paco2=34 pao2=58 hco3=23 fio2=0.21 age=72 on:air sex:m"},
+	{"", "copd home o2 6 months 7.31/64/58/32 28%", "ph=7.31 paco2=64 pao2=58 hco3=32 fio2=0.28 said:copd"},
 	// an age
 	{"", "3 mo 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.25 on:air pop:child"},
 	{"", "3 m/o 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.25 on:air pop:child"},

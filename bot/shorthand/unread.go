@@ -1,13 +1,17 @@
 package shorthand
 
-import "galeward/physio"
+import (
+	"strings"
+
+	"galeward/physio"
+)
 
 // unreadWords name a quantity that is not read here, with the name it is given
 // in the note. Common practice of the bedside.
 var unreadWords = map[string]string{
 	"vc": vitalCapacityName, "fvc": vitalCapacityName, "vital capacity": vitalCapacityName, "forced vital capacity": vitalCapacityName,
 	"dp": drivingName, "driving pressure": drivingName,
-	"ecmo": circuitName, "vv ecmo": circuitName, "va ecmo": circuitName, "vvecmo": circuitName, "vaecmo": circuitName, "ecls": circuitName, "on ecmo": circuitName,
+	"ecmo": circuitName, "vv ecmo": circuitName, "va ecmo": circuitName, "vvecmo": circuitName, "vaecmo": circuitName, "ecls": circuitName, "on ecmo": circuitName, "flow": circuitName, "flows": circuitName, "pump flow": circuitName, "circuit flow": circuitName,
 	"sweep": sweepName, "sweep gas": sweepName, "sweep gas flow": sweepName, "sweep flow": sweepName,
 }
 
@@ -37,8 +41,8 @@ func (r *reader) unread() {
 		_, n := r.unitAfter(j)
 		r.take(j, n)
 		r.t[j].taken = true
-		if name == vitalCapacityName {
-			t.e, t.used = nil, true // no mode
+		if name == vitalCapacityName || t.is(senseLabel) {
+			t.e, t.used = nil, true // no mode and no label
 		}
 		r.note(NoteNotRead, physio.PHq, name+" "+r.t[j].typed(), r.t[j].v)
 	}
@@ -52,20 +56,27 @@ func (r *reader) isUnread(i int, name string) bool {
 	case drivingName:
 		return r.ventSetting()
 	case sweepName:
-		for j := range r.t {
-			if t := &r.t[j]; t.kind == tokWord && t.e != nil && t.e.circ.Has(physio.ECMO) {
-				return true
-			}
-		}
-		return false
+		return r.speaksOfECMO()
+	case circuitName:
+		ownDevice := i > 0 && r.t[i-1].is(senseDevice)
+		return !ownDevice && r.speaksOfECMO()
 	}
 	return true
+}
+
+func (r *reader) speaksOfECMO() bool {
+	for j := range r.t {
+		if t := &r.t[j]; t.kind == tokWord && t.e != nil && t.e.circ.Has(physio.ECMO) {
+			return true
+		}
+	}
+	return false
 }
 
 // unreadNumber finds the number of the quantity: behind its word, or a volume
 // in front of a vital capacity.
 func (r *reader) unreadNumber(i int, name string) (int, bool) {
-	said := false // a word of flow stands between
+	said := name == circuitName && strings.Contains(r.t[i].s, "flow") // a word of flow stands between
 	for j := i + 1; j < len(r.t) && j <= i+5; j++ {
 		t := &r.t[j]
 		switch {

@@ -15,7 +15,9 @@ var unreadLines = []lineTest{
 	{"", "7.30/60/60/29 fio2 50 vt 400 peep 10 dp 18", "ph=7.3 paco2=60 pao2=60 hco3=29 fio2=0.5 vt=400 peep=10 !not_read:ph:driving pressure 18=18"},
 	{"", "vv ecmo flow 4.5 7.36/40/60 fio2 50", "ph=7.36 paco2=40 pao2=60 fio2=0.5 said:ecmo !not_read:ph:ECMO flow 4.5=4.5"},
 	{"", "on ecmo 4.5 L/min sweep 3L 7.36/40/60 fio2 50", "ph=7.36 paco2=40 pao2=60 fio2=0.5 said:ecmo !not_read:ph:ECMO flow 4.5=4.5 !not_read:ph:sweep 3=3"},
+	{"", "ecmo sweep 4 flow 4.2 7.36/40/60 fio2 50", "ph=7.36 paco2=40 pao2=60 fio2=0.5 said:ecmo !not_read:ph:ECMO flow 4.2=4.2 !not_read:ph:sweep 4=4"},
 	// carbon monoxide
+	{"", "7.30/50/62/24 ra carbon monoxide level 30", "ph=7.3 paco2=50 pao2=62 hco3=24 fio2=0.21 cohb=0.3 on:air"},
 	{"", "7.30/50/62/24 ra co level 22", "ph=7.3 paco2=50 pao2=62 hco3=24 fio2=0.21 cohb=0.22 on:air"},
 	{"", "7.30/50/62/24 ra co 25%", "ph=7.3 paco2=50 pao2=62 hco3=24 fio2=0.21 cohb=0.25 on:air"},
 	{"", "7.30/50/62/24 ra co 25", "ph=7.3 paco2=50 pao2=62 hco3=24 fio2=0.21 cohb=0.25 on:air"},

@@ -53,7 +53,7 @@ var valueRows = []row{
 	{label(physio.PeCO2), "peco2, mixed expired co2, expired co2, pe co2, pebarco2, peco, mixed expired pco2"},
 	{label(physio.VDVT), "vdvt, dead space, deadspace, dead space fraction, vd vt, dead space ratio"},
 	{label(physio.Hb), "hb, hgb, haemoglobin, hemoglobin, cthb, thb, hemoglobina"},
-	{label(physio.COHb), "cohb, cohgb, hbco, fhbco, fco, hb co, carboxyhaemoglobin, carboxyhemoglobin, carboxy, fcohb, co hb, co level, carboxyhb"},
+	{label(physio.COHb), "cohb, cohgb, hbco, fhbco, fco, hb co, carboxyhaemoglobin, carboxyhemoglobin, carboxy, fcohb, co hb, co level, carbon monoxide level, carboxyhb"},
 	{label(physio.MetHb), "methb, methgb, methaemoglobin, methemoglobin, fmethb, met hb, met, mthb"},
 	{label(physio.Na), "na, sodium"},
 	{label(physio.K), "k, potassium"},

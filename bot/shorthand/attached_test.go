@@ -32,6 +32,7 @@ var attachedLines = []lineTest{
 	{"", "7.30/60/60/29 28% aim spo2 94-98", "ph=7.3 paco2=60 pao2=60 hco3=29 fio2=0.28 keep:0.94-0.98"},
 	{"", "7.30/60/60/29 28% sats target 88-92", "ph=7.3 paco2=60 pao2=60 hco3=29 fio2=0.28 keep:0.88-0.92"},
 	{"", "7.30/60/60/29 28% keep sats 92-96", "ph=7.3 paco2=60 pao2=60 hco3=29 fio2=0.28 keep:0.92-0.96"},
+	{"", "7.30/60/60/29 28% target 88-92 spo2 91", "ph=7.3 paco2=60 pao2=60 hco3=29 spo2=0.91 fio2=0.28 keep:0.88-0.92"},
 	{"", "7.30/60/60/29 28% spo2 90-92 target 88-92", "ph=7.3 paco2=60 pao2=60 hco3=29 spo2=0.9 fio2=0.28 keep:0.88-0.92 !range_low:spo2:90-92=0.9"},
 }
 
@@ -39,7 +40,7 @@ func TestWordsAttached(t *testing.T) { runLines(t, attachedLines) }
 
 // A question about dying asks for a prognosis; it claims nothing of the gas.
 func TestDyingIsNoClaim(t *testing.T) {
-	for _, text := range []string{"is he dying 7.20/80/40", "is this patient dying? 7.20/80/40", "are they going to die 7.20/80/40"} {
+	for _, text := range []string{"is he dying 7.20/80/40", "is this patient dying? 7.20/80/40", "are they going to die 7.20/80/40", "is she palliative 7.20/80/40"} {
 		l := Parse(text, Habits{Addressed: true})
 		if l.Intent == IntentCheck || len(l.Declined) != 1 || l.Declined[0] != DeclinedPrognosis {
 			t.Errorf("%q: intent %q, declined %v", text, l.Intent, l.Declined)

@@ -62,9 +62,10 @@ func (p *parser) clauses(t []token, s string) (intent Intent, clause, rest []tok
 
 // fits says that the clause holds numbers of the kind that the intent needs.
 func (p *parser) fits(intent Intent, clause []token) bool {
-	v := p.clauseValues(clause)
-	if v.Empty() {
-		return false
+	g := p.clauseGas(clause)
+	v := valuesOf(&g)
+	if v.Empty() || intent == IntentAim && g.Target != nil && !v.Has(physio.PHq) && !v.Has(physio.PaCO2) && !v.Has(physio.PaO2) {
+		return false // "target 88-92 spo2 91": the range is the target, and the rest is of now
 	}
 	if intent == IntentSuppose {
 		return true
@@ -133,10 +134,20 @@ func isGas(t []token, c span) bool {
 // clauseValues reads the numbers of a clause, without the checks that belong
 // to a gas.
 func (p *parser) clauseValues(clause []token) physio.Values {
+	g := p.clauseGas(clause)
+	return valuesOf(&g)
+}
+
+// clauseGas reads a clause as a gas of which the numbers are claims.
+func (p *parser) clauseGas(clause []token) Gas {
 	t := append([]token(nil), clause...)
 	h := p.h
 	h.Addressed = true
-	g := readGas(t, h, segment{claims: true})
+	return readGas(t, h, segment{claims: true})
+}
+
+// valuesOf gives the values of a clause that can be aimed at or supposed.
+func valuesOf(g *Gas) physio.Values {
 	v := g.Sample.Values
 	for _, q := range []physio.Quantity{physio.Age, physio.Gestation} {
 		v.Drop(q)

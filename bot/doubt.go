@@ -2,6 +2,7 @@ package bot
 
 import (
 	"math"
+	"slices"
 	"strings"
 
 	"galeward/bot/shorthand"
@@ -31,6 +32,9 @@ func (t *turn) released() {
 // choose makes of a sample what a choice says.
 func choose(s *physio.Sample, p *shorthand.Choice) {
 	s.Drop(p.Drop...)
+	if s.Device == physio.Air && slices.Contains(p.Drop, physio.FiO2) {
+		s.Device = physio.DeviceUnstated
+	}
 	s.Values.Merge(&p.Set)
 	if p.Blood != physio.BloodUnstated {
 		s.Blood = p.Blood

@@ -157,6 +157,9 @@ func (c *composer) oxygenationShort() []string {
 // oxygenHead is the level in few words.
 func (c *composer) oxygenHead() string {
 	o := c.a.Oxygenation
+	if c.oximeterDisagrees() {
+		return "in doubt (SpO2 " + wholePercent(c.gas.Sample.Val(physio.SpO2)) + ")"
+	}
 	if o.ExpectedHere {
 		return "low, expected here"
 	}

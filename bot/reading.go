@@ -24,6 +24,11 @@ func (t *turn) reading() {
 		return
 	}
 	parent, which := t.parent(gas.Bed)
+	if which == nil && ownGas(&gas, &parent.Gas) {
+		gas.Follow = shorthand.FollowNone
+		t.deliverReading(c)
+		return
+	}
 	switch {
 	case which != nil && (which.id == askBed || gas.Sample.Values.Empty()):
 		t.askWhich(which)
@@ -192,72 +197,4 @@ func agoWords(d time.Duration) string {
 		return plain(d.Minutes(), 0) + " min ago"
 	}
 	return plain(d.Hours(), 0) + " h ago"
-}
-
-// complete adds to a gas or corrects it: the result stands in its place.
-func (t *turn) complete(c *composer, parent kin) {
-	g := parent.Gas
-	add := c.gas
-	oxygenSaid := add.Sample.Has(physio.FiO2) || add.Sample.Device != physio.DeviceUnstated
-	if oxygenSaid && !add.Sample.Has(physio.FiO2) {
-		g.Sample.Drop(physio.FiO2)
-	}
-	if add.Follow != shorthand.FollowCorrection {
-		if replaced := replacedSettings(&g.Sample, &add.Sample); replaced != "" {
-			c.notices = append(c.notices, replaced)
-		}
-	}
-	g.Sample.Values.Merge(&add.Sample.Values)
-	mergeWords(&g.Sample, &add.Sample)
-	if add.Bed != "" {
-		g.Bed = add.Bed
-	}
-	if add.Target != nil {
-		g.Target = add.Target
-	}
-	if add.UsualPaCO2 > 0 {
-		g.UsualPaCO2 = add.UsualPaCO2
-	}
-	g.Notes = append(append([]shorthand.Note(nil), g.Notes...), add.Notes...)
-	g.Questions = append(openDoubts(&g, add), add.Questions...)
-	g.Follow = shorthand.FollowAddition
-	if add.Follow == shorthand.FollowCorrection {
-		c.notices = append(c.notices, earlierVoid)
-	}
-	*c.gas, c.replaces = g, &parent
-}
-
-// replacedSettings names the settings that an addition puts in place of others:
-// one that was changed after the gas was drawn does not belong to it.
-func replacedSettings(s, add *physio.Sample) string {
-	var names []string
-	for _, q := range []physio.Quantity{physio.FiO2, physio.OxygenFlow, physio.RR, physio.RRSet, physio.VT, physio.VE, physio.PEEP} {
-		before, had := s.Get(q)
-		if now, ok := add.Get(q); had && ok && now != before {
-			names = append(names, q.Info().Symbol)
-		}
-	}
-	if len(names) == 0 {
-		return ""
-	}
-	return strings.Join(names, ", ") + " replaced as a correction: if it was changed after this gas, the efficiency does not hold."
-}
-
-func mergeWords(s, add *physio.Sample) {
-	if add.Blood != physio.BloodUnstated && add.Blood != physio.NoBlood {
-		s.Blood, s.Site = add.Blood, add.Site
-	}
-	if add.Device != physio.DeviceUnstated {
-		s.Device, s.DeviceTaken = add.Device, add.DeviceTaken
-	}
-	if add.Mode != physio.ModeUnstated {
-		s.Mode = add.Mode
-	}
-	if add.Sex != physio.SexUnstated {
-		s.Sex = add.Sex
-	}
-	if add.Population != physio.PopulationUnstated {
-		s.Population, s.Trimester = add.Population, add.Trimester
-	}
-	s.Circumstance |= add.Circumstance
 }

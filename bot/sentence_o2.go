@@ -90,6 +90,9 @@ func (c *composer) oxygenWords() string {
 		target := wholePercent(o.Target.Low) + "-" + wholePercent(o.Target.High) + " %"
 		return string(o.AgainstTarget) + " the target " + target + c.borderlineO2()
 	}
+	if c.oximeterDisagrees() {
+		return "in doubt: PaO2 adequate, SpO2 " + wholePercent(c.gas.Sample.Val(physio.SpO2)) + " % is not"
+	}
 	if o.ExpectedHere {
 		return "low, expected here by " + c.expectedWhy()
 	}
@@ -123,6 +126,13 @@ func (c *composer) bandWords() string {
 		return wholePercent(band.Low) + "-" + wholePercent(band.High-0.01) + " %"
 	}
 	return "PaO2 " + c.n.between(band.Low, band.High-1)
+}
+
+// oximeterDisagrees says that SpO2 is low beside a PaO2 that is adequate: which
+// of the two is right can not be told from here.
+func (c *composer) oximeterDisagrees() bool {
+	s, ok := c.gas.Sample.Get(physio.SpO2)
+	return ok && s < physio.LowSaturation && c.a.Raised(physio.CautionSaturation) && c.a.Oxygenation.Scale == physio.DegreeAdequate
 }
 
 // oxygenUnsaid says that neither air nor any oxygen was said.

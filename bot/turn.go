@@ -3,6 +3,7 @@ package bot
 import (
 	"context"
 	"fmt"
+	"strings"
 
 	"galeward/bot/memory"
 	"galeward/bot/reply"
@@ -88,7 +89,16 @@ func (t *turn) typed() {
 	case shorthand.Reading:
 		t.reading()
 	default:
-		t.answer.Machine = Machine{V: MachineVersion, Kind: "silence"}
+		t.quiet()
+	}
+}
+
+// quiet says nothing, but for a word or two in a console: there a mistyped
+// command would stay without any answer.
+func (t *turn) quiet() {
+	t.answer.Machine = Machine{V: MachineVersion, Kind: "silence"}
+	if n := len(strings.Fields(t.e.Text)); t.e.Listening && t.e.User != "" && (n == 1 || n == 2) {
+		t.says("question", hintNothing)
 	}
 }
 
@@ -109,7 +119,13 @@ func (t *turn) meant() bool {
 func (t *turn) parse() shorthand.Line {
 	h := t.habits()
 	line := shorthand.Parse(t.e.Text, h)
-	if line.Kind != shorthand.Silence || h.Addressed || !t.e.Listening && h.Earlier == nil {
+	if h.Addressed {
+		return line
+	}
+	if t.chatter(&line) {
+		return shorthand.Line{Kind: shorthand.Silence}
+	}
+	if line.Kind != shorthand.Silence || !t.e.Listening && h.Earlier == nil {
 		return line
 	}
 	h.Addressed = true
@@ -120,12 +136,30 @@ func (t *turn) parse() shorthand.Line {
 		follows = follows || f != shorthand.FollowNone && (h.Earlier != nil || f != shorthand.FollowAddition)
 	}
 	switch {
+	case t.chatter(&again):
 	case again.Kind == shorthand.Command, again.Kind == shorthand.Released, again.Kind == shorthand.Refusal:
 		return again
 	case again.Kind == shorthand.Reading && follows:
 		return again
 	}
 	return line
+}
+
+// mostWords is how long an answer in words is that was not addressed to the
+// bot: a longer one only happens to hold such a word.
+const mostWords = 4
+
+// chatter says that a line which was not addressed only talks about a gas: it
+// brings no value, and more words than an answer has.
+func (t *turn) chatter(line *shorthand.Line) bool {
+	if len(strings.Fields(t.e.Text)) <= mostWords {
+		return false
+	}
+	if line.Kind == shorthand.Released {
+		return true
+	}
+	return line.Kind == shorthand.Reading && line.Intent == shorthand.IntentNone && len(line.Gases) == 1 &&
+		line.Gases[0].Follow == shorthand.FollowAddition && line.Gases[0].Sample.Values.Empty()
 }
 
 func (t *turn) habits() shorthand.Habits {

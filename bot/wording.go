@@ -21,6 +21,8 @@ const (
 	notForgotten   = "The store does not answer: nothing was forgotten."
 	withdrawn      = "The question was taken away: this answer no longer holds."
 	earlierVoid    = "The earlier reading is void."
+	hintNothing    = "Nothing was read there. help lists what can be typed."
+	addedText      = "Added to the gas before: "
 	hintGas        = "No gas was read there. An example: "
 	troubleText    = "Something of ours went wrong (id %s). Nothing was stored; the same line can be sent again."
 )

@@ -108,7 +108,7 @@ const (
 	askPaO2        = "which_oxygenation"
 	askPaO2Text    = "Which PaO2 or SpO2?"
 	askParent      = "which_gas"
-	askParentText  = "Which gas does this follow?"
+	askParentText  = "Which gas does this follow? None is remembered here: its values come first."
 	askBed         = "which_bed"
 	askGasText     = "Several gases came together: which one? Type it again with all its values."
 	closedText     = "That question is closed: it was answered, or its gas was replaced."

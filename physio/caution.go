@@ -306,12 +306,12 @@ func (sc *scene) retainerOnOxygen() bool {
 func (sc *scene) insideRetainer() bool {
 	sat := whole(sc.a.Oxygenation.Saturation.Value)
 	word := sc.s.Circumstance.Has(COPD) || sc.s.Circumstance.Has(Retainer)
-	return sc.set.Target == nil && word && sc.retainerOnOxygen() && sat >= whole(retainerTargetLow) && sat <= whole(retainerTargetHigh)
+	return sc.set.Target == nil && word && !sc.a.Oxygenation.Blind && !sc.carbonMonoxide() && sc.retainerOnOxygen() && sat >= whole(retainerTargetLow) && sat <= whole(retainerTargetHigh)
 }
 
 func (sc *scene) aboveRetainer() bool {
 	o := sc.a.Oxygenation
-	if !sc.retainerOnOxygen() {
+	if !sc.retainerOnOxygen() || o.Blind || sc.carbonMonoxide() {
 		return false
 	}
 	limit := retainerTargetHigh
@@ -323,7 +323,7 @@ func (sc *scene) aboveRetainer() bool {
 
 func (sc *scene) retainerUnset() bool {
 	acuteOnVentilator := sc.s.Device == Ventilator && sc.a.Triple.HCO3 <= raisedHCO3 && !sc.s.Circumstance.Has(COPD)
-	return sc.set.Target == nil && sc.a.Fit.Grade != FitReject && sc.retainer() && !acuteOnVentilator && sc.a.Oxygenation.Saturation.Value > 0
+	return sc.set.Target == nil && !sc.a.Oxygenation.Blind && !sc.carbonMonoxide() && sc.a.Fit.Grade != FitReject && sc.retainer() && !acuteOnVentilator && sc.a.Oxygenation.Saturation.Value > 0
 }
 
 // hidden: a good saturation on added oxygen beside a high CO2 that oxygen does

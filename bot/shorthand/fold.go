@@ -19,6 +19,9 @@ func fold(text string) string {
 	if len(text) > maxBytes {
 		text = text[:maxBytes]
 	}
+	if isFolded(text) {
+		return doubledPoint(text)
+	}
 	text = entities.Replace(text)
 	var b strings.Builder
 	b.Grow(len(text))
@@ -28,6 +31,16 @@ func fold(text string) string {
 		foldRune(&b, r)
 	}
 	return doubledPoint(b.String())
+}
+
+// isFolded says that the text is plain ASCII already, as most lines are.
+func isFolded(text string) bool {
+	for i := 0; i < len(text); i++ {
+		if c := text[i]; (c < ' ' || c >= 0x7f || c == '&') && c != '\n' && c != '\t' {
+			return false
+		}
+	}
+	return true
 }
 
 // entities undoes the escapes that some platforms leave in the text.
@@ -102,6 +115,9 @@ func isLetter(c byte) bool { return c >= 'a' && c <= 'z' || c >= 'A' && c <= 'Z'
 // stripText takes out what is text of the platform and not of the typist:
 // tags with their script, mentions, addresses of pages.
 func stripText(s string) string {
+	if !strings.Contains(s, "<") && !strings.Contains(s, "://") {
+		return s
+	}
 	var b strings.Builder
 	for i := 0; i < len(s); {
 		if n := skipTag(s[i:]); n > 0 {

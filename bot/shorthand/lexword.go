@@ -39,7 +39,7 @@ func (l *lexer) apostrophe(i int) bool {
 func (l *lexer) compound() bool {
 	rest := l.s[l.i:]
 	for _, c := range compounds {
-		if !strings.HasPrefix(rest, c.typed) {
+		if c.typed[0] != rest[0] || !strings.HasPrefix(rest, c.typed) {
 			continue
 		}
 		if n := len(c.typed); n < len(rest) && isLetter(rest[n]) {

@@ -1,6 +1,9 @@
 package shorthand
 
-import "strings"
+import (
+	"iter"
+	"strings"
+)
 
 // referenceRange is a range in brackets that a print-out puts behind a value.
 var referenceRange = lazily(`[(\[]\s*-?\d+(?:[.,]\d+)?\s*(?:-|to)\s*-?\d+(?:[.,]\d+)?\s*[a-z/%0-9]{0,8}\s*[)\]]`)
@@ -54,12 +57,11 @@ func labelCells(head, cells []string) string {
 // least three names of values and no number among them.
 func cutter(line string) func(string) []string {
 	for _, sep := range []string{"\t", "|", ";", ","} {
-		cut := func(s string) []string { return trimCells(strings.Split(strings.Trim(s, sep+" "), sep)) }
-		if strings.Contains(line, sep) && isHead(cut(line)) {
-			return cut
+		if strings.Contains(line, sep) && isHead(strings.SplitSeq(strings.Trim(line, sep+" "), sep)) {
+			return func(s string) []string { return trimCells(strings.Split(strings.Trim(s, sep+" "), sep)) }
 		}
 	}
-	if isHead(strings.Fields(line)) {
+	if isHead(strings.FieldsSeq(line)) {
 		return strings.Fields
 	}
 	return nil
@@ -72,12 +74,13 @@ func trimCells(cells []string) []string {
 	return cells
 }
 
-func isHead(cells []string) bool {
+func isHead(cells iter.Seq[string]) bool {
 	names, bed := 0, false
-	for _, c := range cells {
-		e := look(strings.ToLower(c))
+	for c := range cells {
+		c = strings.ToLower(strings.TrimSpace(c))
+		e := look(c)
 		if e == nil {
-			switch strings.ToLower(c) {
+			switch c {
 			case "time", "pt", "device", "o2", "":
 				continue
 			}

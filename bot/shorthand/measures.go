@@ -165,7 +165,7 @@ func (r *reader) byUnit(i int, u string, n int) {
 	case uTime:
 		r.duration(i, n)
 	case uYear:
-		r.age(i, u, n)
+		r.years(i, u, n)
 	case uMonth, uDay, uWeek:
 		r.daysToMonths(i, u, n)
 	case uKg, uPound:

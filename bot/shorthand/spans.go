@@ -163,6 +163,32 @@ func (r *reader) daysToMonths(i int, u string, n int) {
 	}
 }
 
+// years takes an age in years, or the years that an illness or a habit lasts.
+func (r *reader) years(i int, u string, n int) {
+	if r.yearsLast(i, n) {
+		r.span(i, n)
+		return
+	}
+	r.age(i, u, n)
+}
+
+// yearsLast says that years are no age: "smoker for 40 yrs", and behind an
+// illness or beside an adult too few for the age of one: "copd 15 years".
+func (r *reader) yearsLast(i, n int) bool {
+	switch r.t[i+n].s {
+	case "years", "yrs", "yr", "year", "y":
+	default:
+		return false
+	}
+	switch {
+	case r.near(i, 2, "smoker", "smoking", "smoked", "smokes", "exsmoker") || r.near(i, 1, "x", "for", "since", "past", "last"):
+		return true
+	case r.t[i].v >= 18 || r.besideSex(i+n+1) || r.speaksOfChild():
+		return false
+	}
+	return r.speaksOfAdult() || r.behindIllness(i)
+}
+
 // weeksOld says that weeks are the age of an infant and no gestation: too few
 // for one, or said to be an age.
 func (r *reader) weeksOld(i, n int) bool {

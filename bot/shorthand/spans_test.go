@@ -20,7 +20,13 @@ var spanLines = []lineTest{
 	{"", "copd 7.31/64/58/32 28% slower over 26 weeks", "ph=7.31 paco2=64 pao2=58 hco3=32 fio2=0.28 said:copd"},
 	{"", "72 yo man covid 10 days 7.44/34/58/23 ra", "ph=7.44 paco2=34 pao2=58 hco3=23 fio2=0.21 age=72 on:air sex:m"},
 	{"", "copd home o2 6 months 7.31/64/58/32 28%", "ph=7.31 paco2=64 pao2=58 hco3=32 fio2=0.28 said:copd"},
+	{"", "copd 15 years 7.31/64/58/32 28%", "ph=7.31 paco2=64 pao2=58 hco3=32 fio2=0.28 said:copd"},
+	{"", "copd for 10 yrs 7.31/64/58/32 28%", "ph=7.31 paco2=64 pao2=58 hco3=32 fio2=0.28 said:copd"},
+	{"", "smoker 40 years 7.44/34/58/23 ra", "ph=7.44 paco2=34 pao2=58 hco3=23 fio2=0.21 on:air"},
 	// an age
+	{"", "copd 62 years 7.31/64/58/32 28%", "ph=7.31 paco2=64 pao2=58 hco3=32 fio2=0.28 age=62 said:copd"},
+	{"", "child asthma 5 years 7.44/34/58/23 ra", "ph=7.44 paco2=34 pao2=58 hco3=23 fio2=0.21 age=5 on:air pop:child said:asthma"},
+	{"", "5 years 7.44/34/58/23 ra", "ph=7.44 paco2=34 pao2=58 hco3=23 fio2=0.21 age=5 on:air pop:child"},
 	{"", "3 mo 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.25 on:air pop:child"},
 	{"", "3 m/o 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.25 on:air pop:child"},
 	{"", "rsv 3mo m 7.28/58/62/27 ra", "ph=7.28 paco2=58 pao2=62 hco3=27 fio2=0.21 age=0.25 on:air sex:m pop:child"},

@@ -80,7 +80,7 @@ func parseAndRun(ctx context.Context, p process) error {
 	}
 	command, err := parser.Parse(shield(p.args))
 	if err != nil {
-		return usageError{err}
+		return usagef("%w (galeward --help shows what can be typed)", err)
 	}
 	return command.Run(runContext{ctx}, p, parser.Model)
 }

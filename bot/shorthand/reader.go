@@ -28,6 +28,7 @@ type reader struct {
 	claims     bool // the text makes claims, whose numbers are no values
 	// missed is set for an empty place of the chain.
 	missed map[physio.Quantity]bool
+	who    who
 }
 
 func (r *reader) sample() *physio.Sample { return &r.g.Sample }

@@ -55,24 +55,56 @@ func (r *reader) besideSex(i int) bool {
 	return i < len(r.t) && (r.namesSex(i) || r.t[i].word("m") || r.t[i].word("f"))
 }
 
+// who is what the words of a line say of the patient's age; it is read once.
+type who struct{ read, child, adult bool }
+
 // speaksOfChild says that the line, the thread or the house is about a
 // newborn, an infant or a child.
-func (r *reader) speaksOfChild() bool {
-	if !r.adult() {
+func (r *reader) speaksOfChild() bool { return !r.adult() || r.wordsOf().child }
+
+// speaksOfAdult says that the line is about an adult: an age, a pregnancy, an
+// illness or a word of adults.
+func (r *reader) speaksOfAdult() bool {
+	v, ok := r.sample().Get(physio.Age)
+	return ok && v >= 18 || r.wordsOf().adult
+}
+
+func (r *reader) wordsOf() who {
+	if r.who.read {
+		return r.who
+	}
+	r.who.read = true
+	for i := range r.t {
+		r.who.child = r.who.child || r.childWord(i)
+		r.who.adult = r.who.adult || r.adultWord(i)
+	}
+	return r.who
+}
+
+func (r *reader) childWord(i int) bool {
+	t := &r.t[i]
+	switch {
+	case r.smallWeight(i), t.kind == tokWord && childWords[t.s]:
+		return true
+	case t.kind != tokWord || t.e == nil || r.negated(i):
+		return false
+	}
+	switch t.e.pop {
+	case physio.Newborn, physio.Preterm, physio.Child:
 		return true
 	}
-	for i := range r.t {
-		t := &r.t[i]
-		switch {
-		case r.smallWeight(i), t.kind == tokWord && childWords[t.s]:
-			return true
-		case t.kind != tokWord || t.e == nil || r.negated(i):
-		case t.e.pop == physio.Newborn, t.e.pop == physio.Preterm, t.e.pop == physio.Child,
-			t.e.site == physio.UmbilicalArt, t.e.site == physio.UmbilicalVein, t.e.site == physio.Heel:
-			return true
-		}
+	return t.e.site == physio.UmbilicalArt || t.e.site == physio.UmbilicalVein || t.e.site == physio.Heel
+}
+
+func (r *reader) adultWord(i int) bool {
+	t := &r.t[i]
+	switch {
+	case t.kind == tokNumber && r.adultAge(i), t.kind == tokWord && adultWords[t.s]:
+		return true
+	case t.kind != tokWord || t.e == nil || r.negated(i):
+		return false
 	}
-	return false
+	return t.e.pop == physio.Adult || t.e.pop == physio.Pregnant || t.e.circ.Has(physio.COPD)
 }
 
 // smallWeight says that the number at i is the weight of a small child, or a
@@ -97,23 +129,6 @@ var adultWords = map[string]bool{
 	"lung": true, "ca": true, "cancer": true, "chf": true, "ccf": true, "ckd": true, "esrf": true, "nstemi": true, "stemi": true,
 	"ipf": true, "ild": true, "osa": true, "cirrhosis": true, "alcoholic": true, "etoh": true, "dementia": true,
 	"gentleman": true, "lady": true, "man": true, "woman": true, "retired": true, "cabg": true,
-}
-
-// speaksOfAdult says that the line is about an adult: an age, a pregnancy, an
-// illness or a word of adults.
-func (r *reader) speaksOfAdult() bool {
-	for i := range r.t {
-		t := &r.t[i]
-		switch {
-		case t.kind == tokNumber && r.adultAge(i), t.kind == tokWord && adultWords[t.s]:
-			return true
-		case t.kind != tokWord || t.e == nil || r.negated(i):
-		case t.e.pop == physio.Adult, t.e.pop == physio.Pregnant, t.e.circ.Has(physio.COPD):
-			return true
-		}
-	}
-	v, ok := r.sample().Get(physio.Age)
-	return ok && v >= 18
 }
 
 // adultAge says that the number at i is the age of an adult in years: with

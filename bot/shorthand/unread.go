@@ -22,16 +22,26 @@ const (
 	sweepName         = "sweep"
 )
 
+// mostUnread is more than one line about one patient holds of them.
+const mostUnread = 20
+
 // unread takes the numbers of quantities that are not read here, so that they
 // become no volume, pressure or flow of something else, and says so.
 func (r *reader) unread() {
+	looked := 0
 	for i := range r.t {
 		t := &r.t[i]
 		name := ""
 		if t.kind == tokWord {
 			name = unreadWords[t.s]
 		}
-		if name == "" || !r.isUnread(i, name) {
+		if name == "" {
+			continue
+		}
+		if looked++; looked > mostUnread {
+			return
+		}
+		if !r.isUnread(i, name) {
 			continue
 		}
 		j, ok := r.unreadNumber(i, name)

@@ -245,6 +245,19 @@ func (r *reader) unknownBefore(i int) bool {
 	if i == 0 || r.t[i-1].kind != tokWord || r.t[i-1].line != r.t[i].line {
 		return false
 	}
+	if r.takesBack(i - 1) {
+		return false
+	}
 	e := r.t[i-1].e
 	return e == nil || e.sense == senseWord || e.sense == senseLabel && !r.t[i-1].used || e.sense == senseTime
+}
+
+// takesBack says that a word takes a typed value back, and owns no number.
+func (r *reader) takesBack(i int) bool {
+	for _, w := range []string{"sorry", "oops", "whoops", "woops", "correction", "typo", "mistyped", "mistype"} {
+		if r.t[i].word(w) {
+			return true
+		}
+	}
+	return false
 }

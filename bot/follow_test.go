@@ -56,3 +56,22 @@ func TestASaturationThatContradictsThePaO2(t *testing.T) {
 		t.Errorf("an SpO2 of 88 %% beside a PaO2 of 95:\n%s", text)
 	}
 }
+
+// A correction that can't be read is never lost in silence.
+func TestACorrectionThatIsNotReadIsAsked(t *testing.T) {
+	for line, want := range map[string]bool{
+		"sorry 58 not 48": true, "48 should read 58": true, "sorry 50 was a typo, it's 60": true,
+		"sorry bed 4 needs a neb": false, "sorry, back in 5": false,
+	} {
+		r := newRoom()
+		r.handle(typed("m1", "7.36/48/64 50%"))
+		e := typed("m2", line)
+		e.Addressed = false
+		r.handle(e)
+		text := r.last(t).Reply.Text()
+		got := r.count() == 2 && (strings.Contains(text, "A correction, but of which value?") || strings.Contains(text, "void"))
+		if got != want {
+			t.Errorf("%q was taken for a correction %v, want %v:\n%s", line, got, want, text)
+		}
+	}
+}

@@ -97,6 +97,10 @@ func (t *turn) typed() {
 // command would stay without any answer.
 func (t *turn) quiet() {
 	t.answer.Machine = Machine{V: MachineVersion, Kind: "silence"}
+	if t.line.TakesBack {
+		t.says("question", takenBack)
+		return
+	}
 	if n := len(strings.Fields(t.e.Text)); t.e.Listening && t.e.User != "" && (n == 1 || n == 2) {
 		t.says("question", hintNothing)
 	}
@@ -180,6 +184,10 @@ func (t *turn) refuse() {
 }
 
 func (t *turn) unclear() {
+	if t.line.TakesBack {
+		t.says("question", takenBack)
+		return
+	}
 	var r reply.Reply
 	r.Add(reply.Question, hintGas+shorthand.Example(t.habits()))
 	t.finish("question", r)

@@ -22,6 +22,7 @@ const (
 	withdrawn      = "The question was taken away: this answer no longer holds."
 	earlierVoid    = "The earlier reading is void."
 	hintNothing    = "Nothing was read there. help lists what can be typed."
+	takenBack      = "A correction, but of which value? Its name in front, such as: co2 58"
 	addedText      = "Added to the gas before: "
 	hintGas        = "No gas was read there. An example: "
 	troubleText    = "Something of ours went wrong (id %s). Nothing was stored; the same line can be sent again."

@@ -118,6 +118,9 @@ type Line struct {
 	Declined []Refused
 	// Picked is the choice that answered the pending question (Kind Released).
 	Picked *Choice
+	// TakesBack is true when nothing was read, yet the line takes back a value
+	// that the gas before holds.
+	TakesBack bool
 }
 
 // Gas is one gas, or one set of bedside values, as it was read.

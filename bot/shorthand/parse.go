@@ -175,7 +175,7 @@ func (p *parser) verdict() Line {
 	case len(l.Declined) > 0 && p.h.Addressed:
 		return Line{Kind: Refusal, Refused: l.Declined[0]}
 	default:
-		return Line{Kind: quietKind(p.h)}
+		return Line{Kind: quietKind(p.h), TakesBack: p.takesBack()}
 	}
 	if l.Intent != IntentNone && l.Argument == "" && l.Intent != IntentAim && l.Intent != IntentSuppose && l.Intent != IntentCheck && l.Intent != IntentNow && len(l.Gases) > 0 && l.Intent != IntentTrend && l.Intent != IntentBeds && l.Intent != IntentRecord {
 		l.Argument = clean(p.rest)
